@@ -1,0 +1,2 @@
+//! Picks the desk or the command line.
+fn main() {}

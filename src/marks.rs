@@ -1,0 +1,126 @@
+//! The sheet: what a plate is once every drawing decision is made. Sizes in mm, origin at the top left, y down.
+
+use std::sync::Arc;
+
+use kurbo::{BezPath, Point, Rect, Vec2};
+
+use crate::label::Label;
+
+/// A colour of ink or paper, sRGB.
+#[derive(Clone, Copy, Debug, PartialEq, Eq, PartialOrd, Ord, Hash)]
+pub struct Ink(pub u8, pub u8, pub u8);
+
+/// How the ends of a stroke look.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub enum Cap {
+    /// Cut square at the end.
+    Butt,
+    /// Round.
+    Round,
+}
+
+/// How the corners of a stroke look.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub enum Join {
+    /// Sharp, up to a mitre limit of 10.
+    Mitre,
+    /// Round.
+    Round,
+}
+
+/// A stroke.
+#[derive(Clone, Debug, PartialEq)]
+pub struct Stroke {
+    /// Its ink.
+    pub ink: Ink,
+    /// Width, mm.
+    pub width: f64,
+    /// On and off lengths, mm; empty for a solid stroke. It starts at the path's start.
+    pub dash: Vec<f64>,
+    /// Ends.
+    pub cap: Cap,
+    /// Corners.
+    pub join: Join,
+}
+
+/// A path and how it is painted.
+#[derive(Clone, Debug, PartialEq)]
+pub enum Paint {
+    /// Filled (non-zero winding).
+    Fill(Ink),
+    /// Stroked along.
+    Stroke(Stroke),
+}
+
+/// What a mark is.
+#[derive(Clone, Debug, PartialEq)]
+pub enum Shape {
+    /// A path in mm.
+    Path {
+        /// The curve, mm.
+        path: BezPath,
+        /// Its paint.
+        paint: Paint,
+    },
+    /// A label.
+    Label {
+        /// The label as set.
+        label: Arc<Label>,
+        /// Where its baseline begins, mm.
+        at: Point,
+        /// One em, mm.
+        em: f64,
+        /// Its ink.
+        ink: Ink,
+    },
+}
+
+/// One drawn thing.
+#[derive(Clone, Debug, PartialEq)]
+pub struct Mark {
+    /// Index of the group it belongs to.
+    pub group: usize,
+    /// What is drawn.
+    pub shape: Shape,
+}
+
+/// Marks that show one object.
+#[derive(Clone, Debug, PartialEq, Eq)]
+pub struct Group {
+    /// Unique on the sheet and fit for an XML id: `a-event-turn`.
+    pub id: String,
+    /// For people: `event turn`.
+    pub title: String,
+}
+
+/// A finished plate: marks in drawing order.
+#[derive(Clone, Debug, PartialEq)]
+pub struct Sheet {
+    /// Width, mm.
+    pub width: f64,
+    /// Height, mm.
+    pub height: f64,
+    /// Its title.
+    pub title: String,
+    /// What it shows, in words (alternative text).
+    pub words: String,
+    /// The groups that marks refer to.
+    pub groups: Vec<Group>,
+    /// In drawing order, lowest first.
+    pub marks: Vec<Mark>,
+}
+
+impl Shape {
+    /// The box of its ink, mm (a stroke's half width included).
+    pub fn ink_box(&self) -> Rect {
+        todo!()
+    }
+    /// A label's outlines in mm, y down; a path as it is.
+    pub fn outline(&self) -> BezPath {
+        todo!()
+    }
+    /// The same, moved.
+    pub fn moved(self, by: Vec2) -> Self {
+        todo!()
+    }
+}

@@ -1,0 +1,17 @@
+//! Numbers as people write and read them: expressions, units, uncertainties, constants, the particle table. The one
+//! place where a number becomes text.
+
+mod constants;
+mod expression;
+mod number;
+mod reading;
+mod species;
+mod text;
+mod units;
+
+pub use constants::{CONSTANTS, Constant};
+pub use number::Number;
+pub use reading::{Quantity, ReadFault, Typed, read};
+pub use species::{SPECIES, Species, species};
+pub use text::{Decimals, fixed, grouped, shortest, significant};
+pub use units::{Dimension, Unit};

@@ -1,0 +1,14 @@
+//! The document: what is saved, reading it, and where everything stands in the text.
+
+mod document;
+mod places;
+mod reading;
+mod scanner;
+
+pub use document::{
+    Arrows, Closure, Collision, Common, Event, Frame, FramePart, Line, LineOrParticle, List,
+    Object, Panel, Particle, Plate, Range, Scene, SpeciesEntry, State, TimeAxis, Toward, Units,
+    Velocity, View, When,
+};
+pub use places::Places;
+pub use reading::{Reading, Unreadable, read};
