@@ -14,3 +14,4 @@ mod plate;
 mod quantity;
 mod scene;
 mod solve;
+mod tools;
