@@ -26,7 +26,7 @@ pub fn tikz(sheet: &Sheet) -> Result<Vec<u8>, ExportFault> {
             .map(|text| comment(text)),
     );
     lines.push(r"\begin{tikzpicture}[x=1mm,y=-1mm,miter limit=10,".into());
-    lines.push(r"  plate label/.style={anchor=base west,inner sep=0pt,outer sep=0pt}]".into());
+    lines.push(r"  plate label/.style={anchor=base,inner sep=0pt,outer sep=0pt}]".into());
     let inks: BTreeSet<Ink> = sheet.marks.iter().map(|mark| ink(&mark.shape)).collect();
     for Ink(red, green, blue) in inks {
         let name = colour(Ink(red, green, blue));
@@ -102,7 +102,7 @@ fn drawn(shape: &Shape) -> Option<String> {
             "\\node[plate label,text={},font={}] at {} {{${}$}};",
             colour(*ink),
             font(*em),
-            pair(*at),
+            pair(Point::new(at.x + em * label.width / 2.0, at.y)),
             label.source
         )),
     }

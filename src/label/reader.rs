@@ -150,9 +150,6 @@ fn spelled(character: char) -> Option<Vec<Token>> {
         '\u{2032}' => vec![Token::Char('\'')],
         '\u{2033}' => vec![Token::Char('\''), Token::Char('\'')],
         '\u{B0}' => vec![Token::Char('^'), command("circ")],
-        '\u{B9}' => vec![Token::Char('^'), Token::Char('1')],
-        '\u{B2}' => vec![Token::Char('^'), Token::Char('2')],
-        '\u{B3}' => vec![Token::Char('^'), Token::Char('3')],
         '\u{A0}' => vec![Token::Char('~')],
         '\u{2009}' | '\u{202F}' => vec![command(",")],
         other => vec![command(symbols::of_char(other)?.0)],
@@ -164,13 +161,42 @@ impl Reader {
     fn peek(&mut self) -> Option<(Token, usize)> {
         if let Some((Token::Char(character), column)) = self.tokens.last().cloned()
             && !character.is_ascii()
-            && let Some(spelled) = spelled(character)
         {
-            self.tokens.pop();
+            let spelled = self.raised().or_else(|| {
+                let spelled = spelled(character)?;
+                self.tokens.pop();
+                Some(spelled)
+            });
+            let spelled = spelled.unwrap_or_default();
             self.tokens
                 .extend(spelled.into_iter().rev().map(|token| (token, column)));
         }
         self.tokens.last().cloned()
+    }
+
+    /// A run of raised or lowered characters as one script.
+    fn raised(&mut self) -> Option<Vec<Token>> {
+        let mut run: Option<(char, String)> = None;
+        while let Some((Token::Char(character), _)) = self.tokens.last() {
+            let Some((sign, plain)) = symbols::script(*character) else {
+                break;
+            };
+            let (first, all) = run.get_or_insert((sign, String::new()));
+            if *first != sign {
+                break;
+            }
+            all.push(plain);
+            self.tokens.pop();
+        }
+        let (sign, all) = run?;
+        let inner = all.chars().map(Token::Char);
+        Some(
+            [Token::Char(sign), Token::Char('{')]
+                .into_iter()
+                .chain(inner)
+                .chain([Token::Char('}')])
+                .collect(),
+        )
     }
 
     /// Takes the next token and writes it to the LaTeX.
@@ -290,7 +316,7 @@ impl Reader {
                     }
                 }
                 '^' if sup.is_some() => return Err(twice("superscript")),
-                '^' if primes > 0 && !self.latex.trim_end().ends_with('\'') => {
+                '^' if primes > 0 && !self.latex.ends_with('\'') => {
                     return Err(twice("superscript"));
                 }
                 '_' if sub.is_some() => return Err(twice("subscript")),
@@ -384,7 +410,7 @@ impl Reader {
         })
     }
 
-    /// A group, or a single character or symbol.
+    /// A group, a character or a command with its own arguments; a command is put in braces, as TeX needs it.
     fn argument(&mut self, what: &str) -> Result<Node, LabelFault> {
         self.skip_space();
         let Some((token, column)) = self.peek() else {
@@ -394,14 +420,15 @@ impl Reader {
             Token::Char('{') => return self.group(column).map(Node::Group),
             Token::Char(character) if allow::math_char(*character) => return self.nucleus(),
             Token::Command(name) => match allow::command(name) {
-                Some(Command::Symbol(_)) => {
-                    // Some symbols are two in TeX, which takes one alone.
+                Some(Command::Space | Command::Right) => {}
+                Some(_) => {
+                    self.deeper(column)?;
                     self.write("{");
-                    let node = self.nucleus();
+                    let node = self.nucleus()?;
                     self.write("}");
-                    return node;
+                    self.depth -= 1;
+                    return Ok(node);
                 }
-                Some(_) => {}
                 None => return Err(refused_command(name, column)),
             },
             Token::Char('^' | '_' | '\'' | '}' | '~') => {}
@@ -409,7 +436,7 @@ impl Reader {
         }
         Err(fault(
             column,
-            format!("{what} must stand in braces here"),
+            format!("{what} is missing here"),
             format!("put {what} in braces {{..}}"),
         ))
     }

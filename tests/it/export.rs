@@ -767,7 +767,7 @@ fn every_allowed_command_is_set_by_tex() {
         let alone = sample(command);
         let as_script = format!("x_\\{command}\\sqrt\\{command}\\bar\\{command}");
         let source = if typeset(&as_script).is_ok() {
-            format!("{alone}{as_script}")
+            format!("{alone} {as_script}")
         } else {
             alone
         };
