@@ -120,7 +120,8 @@ fn stroked(stroke: &Stroke) -> String {
             format!("{kind} {}mm", fixed(*length))
         };
         let pattern: Vec<String> = stroke.dash.iter().enumerate().map(part).collect();
-        out.push_str(&format!(",dash pattern={}", pattern.join(" ")));
+        out.push_str(",dash pattern=");
+        out.push_str(&pattern.join(" "));
     }
     if stroke.cap == Cap::Round {
         out.push_str(",line cap=round");
@@ -137,8 +138,8 @@ fn data(path: &BezPath) -> String {
     let mut last = Point::ZERO;
     for element in path.elements() {
         match *element {
-            PathEl::MoveTo(end) => out.push_str(&format!(" {}", pair(end))),
-            PathEl::LineTo(end) => out.push_str(&format!("\n  -- {}", pair(end))),
+            PathEl::MoveTo(end) => out.extend([" ", &pair(end)]),
+            PathEl::LineTo(end) => out.extend(["\n  -- ", &pair(end)]),
             PathEl::QuadTo(by, end) => {
                 let (first, second) = (last.lerp(by, 2.0 / 3.0), end.lerp(by, 2.0 / 3.0));
                 out.push_str(&curve(first, second, end));

@@ -295,7 +295,7 @@ fn path(commands: &[PathCommand], left: f64, top: f64) -> BezPath {
             PathCommand::MoveTo { x, y } => path.move_to(at(x, y)),
             PathCommand::LineTo { x, y } if !path.elements().is_empty() => path.line_to(at(x, y)),
             PathCommand::QuadTo { x1, y1, x, y } if !path.elements().is_empty() => {
-                path.quad_to(at(x1, y1), at(x, y))
+                path.quad_to(at(x1, y1), at(x, y));
             }
             PathCommand::CubicTo {
                 x1,

@@ -293,28 +293,32 @@ fn sizes_agree_with_tex() {
         r"|\beta| \ll 1",
         r"\mathbf{p}\cdot\mathbf{q}",
     ];
-    let mut document =
-        String::from("\\documentclass{article}\\usepackage{amsmath,amssymb}\\newbox\\it\n");
-    for (shape, font) in [
-        ("OT1/cmr/m/n", "cmr10"),
-        ("OML/cmm/m/it", "cmmi10"),
-        ("OMS/cmsy/m/n", "cmsy10"),
-    ] {
-        let parts: String = shape.split('/').map(|part| format!("{{{part}}}")).collect();
-        document.push_str(&format!("\\DeclareFontShape{parts}{{<-> {font}}}{{}}\n"));
+    let fonts = [
+        (["OT1", "cmr", "m", "n"], "cmr10"),
+        (["OML", "cmm", "m", "it"], "cmmi10"),
+        (["OMS", "cmsy", "m", "n"], "cmsy10"),
+    ];
+    let mut lines =
+        vec![r"\documentclass{article}\usepackage{amsmath,amssymb}\newbox\it".to_owned()];
+    for (shape, font) in fonts {
+        lines.push(format!(
+            "\\DeclareFontShape{{{}}}{{<-> {font}}}{{}}",
+            shape.join("}{")
+        ));
+        let shape = shape.join("/");
         for size in ["7", "5"] {
-            document.push_str(&format!(
-                "\\expandafter\\let\\csname {shape}/{size}\\endcsname\\undefined\n"
+            lines.push(format!(
+                "\\expandafter\\let\\csname {shape}/{size}\\endcsname\\undefined"
             ));
         }
     }
-    document.push_str("\\begin{document}\n");
+    lines.push(r"\begin{document}".to_owned());
     for source in sources {
-        document.push_str(&format!(
-            "\\setbox\\it\\hbox{{${source}$}}\\typeout{{SIZE \\the\\wd\\it\\space\\the\\ht\\it\\space\\the\\dp\\it}}\n"
-        ));
+        lines.push(format!("\\setbox\\it\\hbox{{${source}$}}"));
+        lines.push(r"\typeout{SIZE \the\wd\it\space\the\ht\it\space\the\dp\it}".to_owned());
     }
-    document.push_str("x\\end{document}\n");
+    lines.push(r"x\end{document}".to_owned());
+    let document = lines.join("\n");
     let Some(log) = latex_log(&document) else {
         return;
     };
