@@ -3,6 +3,7 @@
 
 mod constants;
 mod expression;
+mod function;
 mod number;
 mod reading;
 mod species;
