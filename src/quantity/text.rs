@@ -1,6 +1,7 @@
 //! Numbers as text.
 
-use super::Number;
+use num_bigint::BigInt;
+use num_rational::BigRational;
 
 /// How many digits stand after the decimal sign.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
@@ -104,74 +105,102 @@ fn plain(mantissa: &str, exponent: i32) -> String {
     }
 }
 
-/// The power of ten of the last digit that an uncertainty leaves in its value, by the rule of the Particle Data Group
-/// (Review of Particle Physics, Introduction, 5.3): of the first three digits of the uncertainty 100 to 354 keep two,
-/// 355 to 949 keep one, 950 to 999 become 1000 and keep two. `None` for 0 and what is not finite.
-fn last_place(uncertainty: f64) -> Option<(i32, bool)> {
-    if uncertainty == 0.0 || !uncertainty.is_finite() {
-        return None;
+/// An uncertainty rounded by the rule of the Particle Data Group (Review of Particle Physics, Introduction, 5.3): of
+/// its first three digits 100 to 354 keep two, 355 to 949 keep one, 950 to 999 become 1000 and keep two.
+struct Spread {
+    /// The power of ten of the last digit that is kept.
+    place: i32,
+    /// How many of that digit's units it is.
+    units: BigInt,
+}
+
+impl Spread {
+    /// `None` for 0 and what is not finite.
+    fn of(uncertainty: f64) -> Option<Self> {
+        if uncertainty == 0.0 || !uncertainty.is_finite() {
+            return None;
+        }
+        let scientific = format!("{:.2e}", uncertainty.abs());
+        let (mantissa, exponent) = scientific.split_once('e')?;
+        let exponent: i32 = exponent.parse().ok()?;
+        let three: u32 = mantissa.replace('.', "").parse().ok()?;
+        let place = if three < 355 { exponent - 1 } else { exponent };
+        let units = if three < 950 {
+            units_of(uncertainty.abs(), place)?
+        } else {
+            BigInt::from(10)
+        };
+        Some(Self { place, units })
     }
-    let scientific = format!("{:.2e}", uncertainty.abs());
-    let (mantissa, exponent) = scientific.split_once('e')?;
-    let exponent: i32 = exponent.parse().ok()?;
-    let three: u32 = mantissa.replace('.', "").parse().ok()?;
-    Some(match three {
-        100..=354 => (exponent - 1, false),
-        355..=949 => (exponent, false),
-        _ => (exponent, true),
-    })
 }
 
-/// How many decimals an uncertainty leaves in its value by the same rule (0 for one of 10 or more); `None` for an
-/// uncertainty of 0.
+/// How many times 10^place a value is, to the nearest whole number.
+fn units_of(value: f64, place: i32) -> Option<BigInt> {
+    let power = BigRational::from(BigInt::from(10)).pow(place);
+    Some(
+        (BigRational::from_float(value)? / power)
+            .round()
+            .to_integer(),
+    )
+}
+
+/// A whole number of units of 10^place, in plain notation.
+fn at_place(units: &BigInt, place: i32) -> String {
+    let decimals = usize::try_from(-place).unwrap_or(0);
+    let zeros = usize::try_from(place).unwrap_or(0);
+    if *units == BigInt::ZERO && decimals == 0 {
+        return "0".to_owned();
+    }
+    let sign = if *units < BigInt::ZERO { "-" } else { "" };
+    let digits = format!("{:0>1$}", units.magnitude().to_string(), decimals + 1);
+    let (whole, rest) = digits.split_at(digits.len() - decimals);
+    let point = if rest.is_empty() { "" } else { "." };
+    format!("{sign}{whole}{point}{rest}{}", "0".repeat(zeros))
+}
+
+/// How many decimals an uncertainty leaves in its value by the rule of the Particle Data Group (0 for one of 10 or
+/// more); `None` for an uncertainty of 0.
 pub fn decimals_allowed(uncertainty: f64) -> Option<Decimals> {
-    let (place, _) = last_place(uncertainty)?;
-    Some(Decimals(usize::try_from(-place).unwrap_or(0)))
+    let spread = Spread::of(uncertainty)?;
+    Some(Decimals(usize::try_from(-spread.place).unwrap_or(0)))
 }
 
-/// A value and its uncertainty rounded by that rule, in plain notation; `None` for an uncertainty of 0.
+/// A value and its uncertainty rounded by the rule of the Particle Data Group, in plain notation; `None` for an
+/// uncertainty of 0 and for what is not finite.
 ///
 /// 12.2135 and 0.03215 give `12.214` and `0.032`; 12.2135 and 0.06515 give `12.21` and `0.07`.
 pub fn rounded(value: f64, uncertainty: f64) -> Option<Rounded> {
-    let (place, is_ten) = last_place(uncertainty)?;
-    let units = if is_ten {
-        10.0
-    } else {
-        in_units_of(uncertainty.abs(), place)
-    };
+    let Spread { place, units } = Spread::of(uncertainty)?;
     Some(Rounded {
-        value: at_place(in_units_of(value, place), place),
-        uncertainty: at_place(units, place),
+        value: at_place(&units_of(value, place)?, place),
+        uncertainty: at_place(&units, place),
     })
 }
 
-/// A value with its uncertainty in parentheses, in units of the last digit: `497.611(13)`, `1.67262192595(52)e-27`.
-/// The shortest text of the value alone for an uncertainty of 0.
+/// A value with its uncertainty in parentheses, in units of the last digit: `497.611(13)`; below 1e-4 and from 1e7
+/// with a power of ten, `1.67262192595(52)e-27`. For an uncertainty of 0 the shortest text of the value alone.
 pub fn with_uncertainty(value: f64, uncertainty: f64) -> String {
-    let Some((place, is_ten)) = last_place(uncertainty) else {
+    let (Some(spread), Some(exponent)) = (
+        Spread::of(uncertainty),
+        exponent_of(value.abs().max(uncertainty.abs())),
+    ) else {
         return shortest(value);
     };
-    let units = if is_ten {
-        10.0
-    } else {
-        in_units_of(uncertainty.abs(), place)
-    };
-    let size = format!("{:e}", value.abs().max(uncertainty.abs()));
-    let exponent = size
-        .split_once('e')
-        .and_then(|(_, e)| e.parse::<i32>().ok())
-        .unwrap_or(0);
-    let spread = if place > 0 {
-        at_place(units, place)
-    } else {
-        fixed(units, Decimals(0))
+    let Some(units) = units_of(value, spread.place) else {
+        return shortest(value);
     };
     if (-4..7).contains(&exponent) {
-        return format!("{}({spread})", at_place(in_units_of(value, place), place));
+        let bracket = at_place(&spread.units, spread.place.max(0));
+        return format!("{}({bracket})", at_place(&units, spread.place));
     }
     format!(
         "{}({})e{exponent}",
-        at_place(in_units_of(value, place), place - exponent),
-        fixed(units, Decimals(0))
+        at_place(&units, spread.place - exponent),
+        spread.units
     )
+}
+
+/// The power of ten of the leading digit of what is not 0.
+fn exponent_of(value: f64) -> Option<i32> {
+    format!("{value:e}").split_once('e')?.1.parse().ok()
 }
