@@ -44,7 +44,10 @@ const CONFINED: [(&str, &[&str]); 12] = [
 ];
 
 fn floor(room: &str) -> Option<usize> {
-    FLOORS.iter().find(|(name, _)| *name == room).map(|(_, floor)| *floor)
+    FLOORS
+        .iter()
+        .find(|(name, _)| *name == room)
+        .map(|(_, floor)| *floor)
 }
 
 fn root() -> &'static Path {
@@ -52,7 +55,10 @@ fn root() -> &'static Path {
 }
 
 fn rust_files(folder: &Path, into: &mut Vec<PathBuf>) {
-    let mut entries: Vec<PathBuf> = fs::read_dir(folder).unwrap().map(|e| e.unwrap().path()).collect();
+    let mut entries: Vec<PathBuf> = fs::read_dir(folder)
+        .unwrap()
+        .map(|e| e.unwrap().path())
+        .collect();
     entries.sort();
     for path in entries {
         if path.is_dir() {
@@ -73,11 +79,18 @@ fn sources() -> Vec<(PathBuf, String, String)> {
         .filter(|path| path.file_name().is_some_and(|n| n != "lib.rs"))
         .map(|path| {
             let inside = path.strip_prefix(&src).unwrap();
-            let first = inside.components().next().unwrap().as_os_str().to_string_lossy();
+            let first = inside
+                .components()
+                .next()
+                .unwrap()
+                .as_os_str()
+                .to_string_lossy();
             let room = first.trim_end_matches(".rs").to_owned();
             let text = fs::read_to_string(&path).unwrap();
-            let code: Vec<&str> =
-                text.lines().map(|l| l.split("//").next().unwrap_or_default()).collect();
+            let code: Vec<&str> = text
+                .lines()
+                .map(|l| l.split("//").next().unwrap_or_default())
+                .collect();
             (path, room, code.join("\n"))
         })
         .collect()
@@ -87,7 +100,9 @@ fn sources() -> Vec<(PathBuf, String, String)> {
 fn rooms_named(code: &str) -> BTreeSet<String> {
     let mut rooms = BTreeSet::new();
     let word = |text: &str| -> String {
-        text.chars().take_while(|c| c.is_alphanumeric() || *c == '_').collect()
+        text.chars()
+            .take_while(|c| c.is_alphanumeric() || *c == '_')
+            .collect()
     };
     for key in ["crate::", "conewright::"] {
         for (at, _) in code.match_indices(key) {
@@ -119,7 +134,11 @@ fn rooms_named(code: &str) -> BTreeSet<String> {
 #[test]
 fn every_room_stands_on_a_floor() {
     for (path, room, _) in sources() {
-        assert!(floor(&room).is_some(), "{} is in no room of the house", path.display());
+        assert!(
+            floor(&room).is_some(),
+            "{} is in no room of the house",
+            path.display()
+        );
     }
 }
 
@@ -143,7 +162,9 @@ fn rooms_use_only_lower_floors() {
 
 #[test]
 fn the_reader_of_uses_sees_groups() {
-    let named = rooms_named("use crate::{num::{exp, ln}, fault::Fault,\n    scene};\nfn f() { crate::disk::x() }");
+    let named = rooms_named(
+        "use crate::{num::{exp, ln}, fault::Fault,\n    scene};\nfn f() { crate::disk::x() }",
+    );
     let wanted: BTreeSet<String> = ["num", "fault", "scene", "disk"].map(str::to_owned).into();
     assert_eq!(named, wanted);
 }
@@ -153,10 +174,18 @@ fn the_desk_does_no_physics() {
     for (path, room, code) in sources() {
         let named = rooms_named(&code);
         if room == "app" {
-            assert!(!named.contains("geometry") && !named.contains("dynamics"), "{}", path.display());
+            assert!(
+                !named.contains("geometry") && !named.contains("dynamics"),
+                "{}",
+                path.display()
+            );
         }
         if room == "export" {
-            assert!(!named.contains("scene") && !named.contains("solve"), "{}", path.display());
+            assert!(
+                !named.contains("scene") && !named.contains("solve"),
+                "{}",
+                path.display()
+            );
         }
     }
 }
@@ -168,7 +197,11 @@ fn outside_crates_stay_in_their_rooms() {
             let used = code.contains(&format!("use {outside}::"))
                 || code.contains(&format!(" {outside}::"))
                 || code.contains(&format!("({outside}::"));
-            assert!(!used || homes.contains(&room.as_str()), "{} names {outside}", path.display());
+            assert!(
+                !used || homes.contains(&room.as_str()),
+                "{} names {outside}",
+                path.display()
+            );
         }
     }
 }
@@ -183,19 +216,36 @@ fn paths_named_for_developers_exist() {
 }
 
 fn cargo(args: &[&str]) -> String {
-    let out = Command::new(env!("CARGO")).args(args).current_dir(root()).output().unwrap();
-    assert!(out.status.success(), "{}", String::from_utf8_lossy(&out.stderr));
+    let out = Command::new(env!("CARGO"))
+        .args(args)
+        .current_dir(root())
+        .output()
+        .unwrap();
+    assert!(
+        out.status.success(),
+        "{}",
+        String::from_utf8_lossy(&out.stderr)
+    );
     String::from_utf8(out.stdout).unwrap()
 }
 
 fn crates_in(tree: &str) -> BTreeSet<&str> {
-    tree.lines().filter_map(|l| l.split_whitespace().next()).collect()
+    tree.lines()
+        .filter_map(|l| l.split_whitespace().next())
+        .collect()
 }
 
 #[test]
 fn the_core_knows_no_window() {
     let tree = cargo(&[
-        "tree", "--offline", "--locked", "-e", "no-dev", "--no-default-features", "--prefix", "none",
+        "tree",
+        "--offline",
+        "--locked",
+        "-e",
+        "no-dev",
+        "--no-default-features",
+        "--prefix",
+        "none",
     ]);
     for crate_name in ["egui", "eframe", "winit", "egui-winit", "softbuffer"] {
         assert!(!crates_in(&tree).contains(crate_name), "{crate_name}");

@@ -11,6 +11,7 @@ mod house;
 mod label;
 mod outside;
 mod plate;
+mod program;
 mod quantity;
 mod scene;
 mod solve;
