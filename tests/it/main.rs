@@ -1,6 +1,7 @@
 //! Behaviour through public doors.
 #![cfg(test)]
 
+mod broken_fields;
 mod cli;
 mod core;
 #[cfg(feature = "window")]
