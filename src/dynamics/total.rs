@@ -118,10 +118,8 @@ struct Shares {
 }
 
 struct Share {
-    mass: f64,
     py: f64,
     x: f64,
-    k: f64,
     /// What it adds to M^2.
     square: f64,
 }
@@ -131,25 +129,26 @@ impl Shares {
         let sum = |f: fn(&Momentum) -> f64| num::sum(parts.iter().map(f));
         let (plus, minus) = (sum(Momentum::p_plus), sum(Momentum::p_minus));
         let py = sum(Momentum::py);
-        let (large, small): (fn(&Momentum) -> f64, fn(&Momentum) -> f64) = if plus >= minus {
-            (Momentum::p_plus, Momentum::p_minus)
-        } else {
-            (Momentum::p_minus, Momentum::p_plus)
+        let ends = |p: &Momentum| {
+            if plus >= minus {
+                (p.p_plus(), p.p_minus())
+            } else {
+                (p.p_minus(), p.p_plus())
+            }
         };
         let whole = plus.max(minus);
         let share = |p: &Momentum| {
-            let x = large(p) / whole;
-            let k = num::difference_of_products(p.py(), whole, large(p), py) / whole;
+            let (large, small) = ends(p);
+            let x = large / whole;
+            let k = num::difference_of_products(p.py(), whole, large, py) / whole;
             let square = if x == 0.0 {
-                whole * small(p)
+                whole * small
             } else {
                 p.mass() * (p.mass() / x) + k * (k / x)
             };
             Share {
-                mass: p.mass(),
                 py: p.py(),
                 x,
-                k,
                 square,
             }
         };
@@ -189,7 +188,7 @@ fn excess(parts: &[Momentum], shares: &Shares, mass: f64) -> f64 {
             let (along, aside) = (num::sinh(half_dy), num::sinh(half_da));
             2.0 * (p.transverse_mass() * w_total * along * along + mass * aside * aside)
         }
-        Momentum::Massless { .. } => (s.square / mass + s.x * mass) / 2.0,
+        Momentum::Massless { .. } => f64::midpoint(s.square / mass, s.x * mass),
     };
     num::sum(parts.iter().zip(&shares.parts).map(kinetic))
 }
