@@ -3,6 +3,7 @@
 
 mod constants;
 mod expression;
+mod function;
 mod number;
 mod reading;
 mod species;
@@ -13,5 +14,8 @@ pub use constants::{CONSTANTS, Constant};
 pub use number::Number;
 pub use reading::{Quantity, ReadFault, Typed, read};
 pub use species::{SPECIES, Species, species};
-pub use text::{Decimals, fixed, grouped, shortest, significant};
+pub use text::{
+    Decimals, Rounded, decimals_allowed, fixed, grouped, rounded, shortest, significant,
+    with_uncertainty,
+};
 pub use units::{Dimension, Unit};
