@@ -98,6 +98,8 @@ pub(crate) fn palette(visuals: &Visuals) -> &'static Palette {
 pub(crate) const WINDOW: [f32; 2] = [1440.0, 900.0];
 /// The smallest window.
 pub(crate) const WINDOW_MIN: [f32; 2] = [900.0, 640.0];
+/// From this width on the window is not cramped.
+pub(crate) const WIDE: f32 = 1400.0;
 /// Inner margin of a region.
 pub(crate) const MARGIN: f32 = 16.0;
 /// Inner margin of list and ledger.

@@ -1,0 +1,154 @@
+//! The picture of the marks: the sheet painted by the same code that writes it as PNG, at the screen's scale, kept
+//! until view or sheet change. What is selected gets its band in it, under the ink.
+
+use egui::{Color32, ColorImage, Painter, Rect, TextureHandle, TextureOptions, Ui, pos2, vec2};
+use tiny_skia::{BlendMode, FillRule, LineCap, LineJoin, Paint, Pixmap, Stroke, Transform};
+
+use super::Lie;
+use crate::app::context::Context;
+use crate::app::theme::{BAND, PAPER, SELECTION};
+use crate::export::{Raster, raster_path};
+use crate::fault::ObjectId;
+use crate::marks::{Paint as Ink, Shape, Sheet};
+
+/// What a kept picture shows.
+#[derive(Clone, Debug, PartialEq)]
+struct Key {
+    version: u64,
+    scale: f32,
+    pixels_per_point: f32,
+    /// First pixel of the paper that is shown, and how many.
+    part: [u32; 4],
+    selected: Option<ObjectId>,
+}
+
+/// The kept picture.
+#[derive(Default)]
+pub(in crate::app) struct Picture {
+    key: Option<Key>,
+    raster: Option<(u64, f64, Raster)>,
+    texture: Option<TextureHandle>,
+}
+
+impl std::fmt::Debug for Picture {
+    fn fmt(&self, f: &mut std::fmt::Formatter<'_>) -> std::fmt::Result {
+        f.debug_struct("Picture").field("key", &self.key).finish_non_exhaustive()
+    }
+}
+
+impl Picture {
+    /// Paints the part of the paper that lies in the region.
+    pub(super) fn paint(&mut self, ui: &Ui, painter: &Painter, rect: Rect, lie: &Lie, context: &Context<'_>) {
+        let Some(laid) = &context.shown.laid else { return };
+        let ppp = ui.pixels_per_point();
+        let visible = lie.paper.intersect(rect);
+        if visible.width() < 1.0 || visible.height() < 1.0 {
+            return;
+        }
+        let px = |v: f32| (v * ppp).round().max(0.0) as u32;
+        let from = (visible.min - lie.paper.min) * ppp;
+        let (left, top) = (from.x.floor().max(0.0) as u32, from.y.floor().max(0.0) as u32);
+        let (width, height) = (px(visible.width()).max(1), px(visible.height()).max(1));
+        let key = Key {
+            version: context.shown.version,
+            scale: lie.scale,
+            pixels_per_point: ppp,
+            part: [left, top, width, height],
+            selected: context.view.selected.clone(),
+        };
+        if self.key.as_ref() != Some(&key) {
+            let scale = f64::from(lie.scale * ppp);
+            if let Some(pixmap) = self.draw(&laid.sheet, scale, &key, context) {
+                self.keep(ui, &pixmap);
+                self.key = Some(key);
+            }
+        }
+        if let Some(texture) = &self.texture {
+            let corner = lie.paper.min + vec2(left as f32, top as f32) / ppp;
+            let size = vec2(width as f32, height as f32) / ppp;
+            let uv = Rect::from_min_max(pos2(0.0, 0.0), pos2(1.0, 1.0));
+            painter.image(texture.id(), Rect::from_min_size(corner, size), uv, Color32::WHITE);
+        }
+    }
+
+    fn draw(&mut self, sheet: &Sheet, scale: f64, key: &Key, context: &Context<'_>) -> Option<Pixmap> {
+        let fresh = self
+            .raster
+            .as_ref()
+            .is_none_or(|(version, at, _)| *version != key.version || *at != scale);
+        if fresh {
+            self.raster = Some((key.version, scale, Raster::new(sheet, scale)));
+        }
+        let (_, _, raster) = self.raster.as_ref()?;
+        let [left, top, width, height] = key.part;
+        let mut pixmap = Pixmap::new(width, height)?;
+        let [r, g, b] = PAPER;
+        pixmap.fill(tiny_skia::Color::from_rgba8(r, g, b, 255));
+        raster.paint(&mut pixmap, left, top);
+        if let Some(selected) = &key.selected {
+            let band = f64::from(BAND * key.pixels_per_point);
+            let place = Transform::from_translate(-(left as f32), -(top as f32));
+            bands(&mut pixmap, sheet, scale, band, place, |group| {
+                context.shown.objects.get(group).and_then(Option::as_ref) == Some(selected)
+            });
+        }
+        Some(pixmap)
+    }
+
+    fn keep(&mut self, ui: &Ui, pixmap: &Pixmap) {
+        let size = [pixmap.width() as usize, pixmap.height() as usize];
+        let image = ColorImage::from_rgba_premultiplied(size, pixmap.data());
+        match &mut self.texture {
+            Some(texture) => texture.set(image, TextureOptions::NEAREST),
+            None => {
+                let options = TextureOptions::NEAREST;
+                self.texture = Some(ui.ctx().load_texture("sheet", image, options));
+            }
+        }
+    }
+}
+
+/// Bands along the strokes of some groups. They are multiplied with what is there: paper takes their colour, ink
+/// stays ink, so that they lie under it. Labels get none.
+fn bands(
+    pixmap: &mut Pixmap,
+    sheet: &Sheet,
+    scale: f64,
+    band: f64,
+    place: Transform,
+    chosen: impl Fn(usize) -> bool,
+) {
+    let Some(mut layer) = Pixmap::new(pixmap.width(), pixmap.height()) else {
+        return;
+    };
+    let mut paint = Paint::default();
+    let [r, g, b] = SELECTION;
+    paint.set_color_rgba8(r, g, b, 255);
+    for mark in sheet.marks.iter().filter(|m| chosen(m.group)) {
+        let Shape::Path { path, paint: ink } = &mark.shape else {
+            continue;
+        };
+        let Some(path) = raster_path(path, scale) else {
+            continue;
+        };
+        let width = match ink {
+            Ink::Stroke(stroke) => (stroke.width * scale + 4.0).max(band),
+            Ink::Fill(_) => {
+                layer.fill_path(&path, &paint, FillRule::Winding, place, None);
+                band * 0.6
+            }
+        };
+        let stroke = Stroke {
+            width: width as f32,
+            line_cap: LineCap::Round,
+            line_join: LineJoin::Round,
+            ..Stroke::default()
+        };
+        layer.stroke_path(&path, &paint, &stroke, place, None);
+    }
+    let multiply = tiny_skia::PixmapPaint {
+        blend_mode: BlendMode::Multiply,
+        ..tiny_skia::PixmapPaint::default()
+    };
+    pixmap.draw_pixmap(0, 0, layer.as_ref(), &multiply, Transform::identity(), None);
+}
