@@ -28,7 +28,9 @@ fn desk(parsed: cli::Parsed) -> ExitCode {
 
 #[cfg(not(feature = "window"))]
 fn desk(_parsed: cli::Parsed) -> ExitCode {
-    refuse("this conewright is built without its window; see conewright --help for the command line")
+    refuse(
+        "this conewright is built without its window; see conewright --help for the command line",
+    )
 }
 
 fn refuse(words: &str) -> ExitCode {

@@ -29,9 +29,13 @@ pub fn run(command: &Command) -> u8 {
 fn draw(args: &Draw) -> u8 {
     let Some(format) = Format::of_path(&args.to) else {
         let to = args.to.display();
-        return refuse(&format!("{to}: its ending names no format; let it end in .svg, .pdf, .png or .tex"));
+        return refuse(&format!(
+            "{to}: its ending names no format; let it end in .svg, .pdf, .png or .tex"
+        ));
     };
-    let Some(opened) = open(&args.scene) else { return NOTHING };
+    let Some(opened) = open(&args.scene) else {
+        return NOTHING;
+    };
     let lettering = match args.text {
         None => Lettering::Usual,
         Some(Text::Real) => Lettering::Real,
@@ -42,13 +46,20 @@ fn draw(args: &Draw) -> u8 {
         panel: args.panel,
         when: args.frame.when(),
         format,
-        options: Options { dpi: args.dpi, lettering },
+        options: Options {
+            dpi: args.dpi,
+            lettering,
+        },
     };
     let drawn = match task::draw(&opened, &drawing) {
         Ok(drawn) => drawn,
         Err(fault) => return refuse(&format!("{}: {fault}", args.scene.display())),
     };
-    let overwrite = if args.force { Overwrite::Replace } else { Overwrite::Refuse };
+    let overwrite = if args.force {
+        Overwrite::Replace
+    } else {
+        Overwrite::Refuse
+    };
     if let Err(fault) = disk::write(&args.to, &drawn.bytes, overwrite) {
         return refuse(&format!("{}; {}", fault.what, fault.mend));
     }
@@ -56,7 +67,9 @@ fn draw(args: &Draw) -> u8 {
 }
 
 fn ledger(args: &LedgerArgs) -> u8 {
-    let Some(opened) = open(&args.scene) else { return NOTHING };
+    let Some(opened) = open(&args.scene) else {
+        return NOTHING;
+    };
     let ledger = match task::ledger(&opened, &args.frame.when().unwrap_or(When::Base)) {
         Ok(ledger) => ledger,
         Err(fault) => return refuse(&format!("{}: {fault}", args.scene.display())),
@@ -105,7 +118,11 @@ fn tell(path: &Path, faults: &[Fault]) -> u8 {
     for fault in faults {
         say(&fault.line(&file));
     }
-    if faults.iter().any(|f| f.weight == Weight::Fault) { FAULTS } else { SOUND }
+    if faults.iter().any(|f| f.weight == Weight::Fault) {
+        FAULTS
+    } else {
+        SOUND
+    }
 }
 
 fn refuse(words: &str) -> u8 {

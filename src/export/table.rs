@@ -16,7 +16,10 @@ pub fn json(ledger: &Ledger) -> Vec<u8> {
 pub fn text(ledger: &Ledger) -> Vec<u8> {
     let mut out = String::new();
     let frame = &ledger.frame;
-    let name = frame.name.as_ref().map_or(String::new(), |name| format!(" {name}"));
+    let name = frame
+        .name
+        .as_ref()
+        .map_or(String::new(), |name| format!(" {name}"));
     let direction = if frame.direction == 0.0 {
         String::new()
     } else {
@@ -52,13 +55,21 @@ fn head(column: &Column) -> String {
 
 /// A quotient after a solidus is bracketed: `px / (MeV/c)`.
 fn bracketed(unit: &str) -> String {
-    if unit.contains('/') || unit.contains(' ') { format!("({unit})") } else { unit.to_owned() }
+    if unit.contains('/') || unit.contains(' ') {
+        format!("({unit})")
+    } else {
+        unit.to_owned()
+    }
 }
 
 fn lines(out: &mut String, table: &Table) {
     let heads: Vec<String> = table.columns.iter().map(head).collect();
     let width = |c: usize| {
-        let cells = table.rows.iter().filter_map(|r| r.cells.get(c)).map(|c| c.text.chars().count());
+        let cells = table
+            .rows
+            .iter()
+            .filter_map(|r| r.cells.get(c))
+            .map(|c| c.text.chars().count());
         cells.chain([heads[c].chars().count()]).max().unwrap_or(0)
     };
     let widths: Vec<usize> = (0..heads.len()).map(width).collect();
@@ -76,7 +87,13 @@ fn lines(out: &mut String, table: &Table) {
     };
     line(out, &set(&mut heads.iter().map(String::as_str)));
     line(out, &rule);
-    for Row { cells, rule_above, object: _, is_sum: _ } in &table.rows {
+    for Row {
+        cells,
+        rule_above,
+        object: _,
+        is_sum: _,
+    } in &table.rows
+    {
         if *rule_above {
             line(out, &rule);
         }

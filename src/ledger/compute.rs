@@ -69,7 +69,14 @@ fn events(solved: &Solved, from: &Viewing, outside: &mut dyn FnMut(String)) -> V
         };
         let stated = event.stated.filter(|_| is_base(from));
         let (t, x) = stated.unwrap_or_else(|| (d.t(), d.x() * way));
-        rows.push(EventRow { name: name.to_string(), t, x, y: d.y * way, u: d.u, v: d.v });
+        rows.push(EventRow {
+            name: name.to_string(),
+            t,
+            x,
+            y: d.y * way,
+            u: d.u,
+            v: d.v,
+        });
     }
     rows
 }
@@ -78,7 +85,12 @@ fn lines(solved: &Solved, from: &Viewing, outside: &mut dyn FnMut(String)) -> Ve
     let mut rows = Vec::new();
     for (name, line) in &solved.lines {
         let proper_time = proper_time(line);
-        let row = |beta, rapidity| LineRow { name: name.to_string(), beta, rapidity, proper_time };
+        let row = |beta, rapidity| LineRow {
+            name: name.to_string(),
+            beta,
+            rapidity,
+            proper_time,
+        };
         let [leg] = line.world.legs() else {
             rows.push(row(None, None));
             continue;
@@ -88,7 +100,10 @@ fn lines(solved: &Solved, from: &Viewing, outside: &mut dyn FnMut(String)) -> Ve
             continue;
         };
         let stated = line.stated_beta.filter(|_| from.boost == Boost::IDENTITY);
-        rows.push(row(Some(stated.unwrap_or_else(|| seen.beta_x())), seen.rapidity()));
+        rows.push(row(
+            Some(stated.unwrap_or_else(|| seen.beta_x())),
+            seen.rapidity(),
+        ));
     }
     rows
 }
@@ -97,8 +112,16 @@ fn lines(solved: &Solved, from: &Viewing, outside: &mut dyn FnMut(String)) -> Ve
 fn velocity_vector(leg: Leg) -> Option<Momentum> {
     match leg {
         Leg::Free { rapidity, across } => Momentum::longitudinal(1.0, rapidity, across).ok(),
-        Leg::Light(Side::Plus) => Some(Momentum::Massless { p_minus: 0.0, p_plus: 2.0, py: 0.0 }),
-        Leg::Light(Side::Minus) => Some(Momentum::Massless { p_minus: 2.0, p_plus: 0.0, py: 0.0 }),
+        Leg::Light(Side::Plus) => Some(Momentum::Massless {
+            p_minus: 0.0,
+            p_plus: 2.0,
+            py: 0.0,
+        }),
+        Leg::Light(Side::Minus) => Some(Momentum::Massless {
+            p_minus: 2.0,
+            p_plus: 0.0,
+            py: 0.0,
+        }),
     }
 }
 
@@ -112,8 +135,11 @@ fn particles(solved: &Solved, from: &Viewing, outside: &mut dyn FnMut(String)) -
     for (name, particle) in &solved.particles {
         match particle.momentum.boosted(from.boost) {
             Ok(momentum) => {
-                let stated =
-                    if from.boost == Boost::IDENTITY { particle.stated } else { Stated::default() };
+                let stated = if from.boost == Boost::IDENTITY {
+                    particle.stated
+                } else {
+                    Stated::default()
+                };
                 rows.push(particle_row(name, particle, &momentum, &stated));
             }
             Err(_range) => outside(format!("particle {name}")),
@@ -157,7 +183,12 @@ fn collisions(solved: &Solved, from: &Viewing) -> Vec<CollisionRow> {
         let sum = |names: &[Arc<str>]| -> Option<Total> {
             let parts: Option<Vec<Momentum>> = names
                 .iter()
-                .map(|n| solved.particles.get(n).and_then(|p| p.momentum.boosted(from.boost).ok()))
+                .map(|n| {
+                    solved
+                        .particles
+                        .get(n)
+                        .and_then(|p| p.momentum.boosted(from.boost).ok())
+                })
                 .collect();
             Some(Total::of(&parts?))
         };
@@ -197,7 +228,11 @@ fn q_value(solved: &Solved, collision: &SolvedCollision) -> f64 {
         return collision.total_after.excess - collision.total_before.excess;
     }
     let masses = |names: &[Arc<str>]| -> Vec<f64> {
-        names.iter().filter_map(|n| solved.particles.get(n)).map(|p| p.momentum.mass()).collect()
+        names
+            .iter()
+            .filter_map(|n| solved.particles.get(n))
+            .map(|p| p.momentum.mass())
+            .collect()
     };
     let mut after = masses(&collision.after);
     let mut before = masses(&collision.before);
@@ -222,12 +257,20 @@ fn intervals(solved: &Solved) -> Vec<IntervalRow> {
             let (kind, squared, length) = match separation {
                 Separation::Timelike => ("timelike", d.interval(), d.length()),
                 Separation::Lightlike => ("lightlike", 0.0, 0.0),
-                Separation::Spacelike => {
-                    ("spacelike", d.interval(), d.length() * solved.units.light_way)
-                }
+                Separation::Spacelike => (
+                    "spacelike",
+                    d.interval(),
+                    d.length() * solved.units.light_way,
+                ),
             };
             let (from, to) = (from.to_string(), to.to_string());
-            rows.push(IntervalRow { from, to, kind, squared, length });
+            rows.push(IntervalRow {
+                from,
+                to,
+                kind,
+                squared,
+                length,
+            });
         }
     }
     rows

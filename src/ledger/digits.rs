@@ -17,7 +17,7 @@ pub(super) enum Form {
 
 impl Form {
     /// The form for a column of numbers. `finest` is the number of decimals that an uncertainty allows, if any.
-    pub(super) fn of(values: impl Iterator<Item = f64>, finest: Option<i32>) -> Self {
+    pub(super) fn of(values: impl Iterator<Item = f64>, finest: Option<usize>) -> Self {
         let (mut low, mut high) = (i32::MAX, i32::MIN);
         for value in values.filter(|v| *v != 0.0 && v.is_finite()) {
             let order = order(value);
@@ -32,8 +32,9 @@ impl Form {
         }
         let wanted = DIGITS - 1 - low;
         let room = FIGURES - 1 - high.max(0);
-        let decimals = wanted.min(room).min(finest.unwrap_or(i32::MAX)).max(0);
-        Self::Fixed(Decimals(usize::try_from(decimals).unwrap_or(0)))
+        let decimals = wanted.min(room).max(0);
+        let decimals = usize::try_from(decimals).unwrap_or(0);
+        Self::Fixed(Decimals(decimals.min(finest.unwrap_or(usize::MAX))))
     }
 
     /// A number in this form.
@@ -47,12 +48,10 @@ impl Form {
 
 /// The power of ten of the first digit.
 fn order(value: f64) -> i32 {
-    #[expect(clippy::cast_possible_truncation, reason = "an order of magnitude is small")]
+    #[expect(
+        clippy::cast_possible_truncation,
+        reason = "an order of magnitude is small"
+    )]
     let order = log10(value.abs()).floor() as i32;
     order
-}
-
-/// Decimals that a standard deviation allows: to its second digit.
-pub(super) fn decimals_of(uncertainty: f64) -> Option<i32> {
-    (uncertainty > 0.0).then(|| 1 - order(uncertainty))
 }

@@ -2,10 +2,10 @@
 
 use std::collections::BTreeMap;
 
-use super::digits::{Form, decimals_of};
+use super::digits::Form;
 use super::{CollisionRow, Ledger, ParticleRow, SumRow};
 use crate::fault::{Kind, ObjectId};
-use crate::quantity::significant;
+use crate::quantity::{Decimals, decimals_allowed, significant};
 
 /// How a column's text stands.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
@@ -69,10 +69,16 @@ const NONE: &str = "\u{b7}";
 
 /// The ledger as tables, in the order in which they are printed; a kind without objects has none.
 pub fn tables(ledger: &Ledger) -> Vec<Table> {
-    [collisions(ledger), particles(ledger), events(ledger), lines(ledger), intervals(ledger)]
-        .into_iter()
-        .filter(|table| !table.rows.is_empty())
-        .collect()
+    [
+        collisions(ledger),
+        particles(ledger),
+        events(ledger),
+        lines(ledger),
+        intervals(ledger),
+    ]
+    .into_iter()
+    .filter(|table| !table.rows.is_empty())
+    .collect()
 }
 
 /// A row before its numbers are text.
@@ -146,9 +152,10 @@ fn set(name: &'static str, words: &[&str], heads: &[(&str, &str)], drafts: Vec<D
             let entries = || drafts.iter().filter_map(move |d| d.numbers.get(c).copied());
             let finest = entries()
                 .filter_map(|e| match e {
-                    Entry::Measured(_, deviation) => decimals_of(deviation),
+                    Entry::Measured(_, deviation) => decimals_allowed(deviation),
                     Entry::Number(_) | Entry::Missing | Entry::Blank => None,
                 })
+                .map(|Decimals(d)| d)
                 .min();
             Form::of(entries().filter_map(Entry::value), finest)
         })
@@ -156,7 +163,10 @@ fn set(name: &'static str, words: &[&str], heads: &[(&str, &str)], drafts: Vec<D
     let rows = drafts
         .into_iter()
         .map(|draft| {
-            let words = draft.words.into_iter().map(|text| Cell { value: None, text });
+            let words = draft
+                .words
+                .into_iter()
+                .map(|text| Cell { value: None, text });
             let numbers = draft.numbers.iter().zip(&forms).map(|(entry, form)| Cell {
                 value: entry.value(),
                 text: match entry {
@@ -173,7 +183,12 @@ fn set(name: &'static str, words: &[&str], heads: &[(&str, &str)], drafts: Vec<D
             }
         })
         .collect();
-    Table { name, columns, rows, notes: Vec::new() }
+    Table {
+        name,
+        columns,
+        rows,
+        notes: Vec::new(),
+    }
 }
 
 fn events(ledger: &Ledger) -> Table {
@@ -192,7 +207,7 @@ fn events(ledger: &Ledger) -> Table {
             if across {
                 numbers.push(e.y.into());
             }
-            numbers.extend([e.u.into(), e.v.into()]);
+            numbers.extend([e.u, e.v].map(Entry::from));
             row(Kind::Event, &e.name, numbers)
         })
         .collect();
@@ -203,9 +218,19 @@ fn lines(ledger: &Ledger) -> Table {
     let drafts = ledger
         .lines
         .iter()
-        .map(|l| row(Kind::Line, &l.name, vec![l.beta.into(), l.rapidity.into(), l.proper_time.into()]))
+        .map(|l| {
+            row(
+                Kind::Line,
+                &l.name,
+                vec![l.beta.into(), l.rapidity.into(), l.proper_time.into()],
+            )
+        })
         .collect();
-    let heads = [("beta", ""), ("rapidity", ""), ("proper time*", ledger.units.time.as_str())];
+    let heads = [
+        ("beta", ""),
+        ("rapidity", ""),
+        ("proper time*", ledger.units.time.as_str()),
+    ];
     set("lines", &["line"], &heads, drafts)
 }
 
@@ -271,16 +296,22 @@ fn intervals(ledger: &Ledger) -> Table {
             }
         })
         .collect();
-    let heads =
-        [("s^2*", squared.as_str()), ("proper time*", time), ("proper distance*", length)];
+    let heads = [
+        ("s^2*", squared.as_str()),
+        ("proper time*", time),
+        ("proper distance*", length),
+    ];
     set("intervals", &["from", "to", "kind"], &heads, drafts)
 }
 
 fn collisions(ledger: &Ledger) -> Table {
     let mut drafts = Vec::new();
     let mut notes = Vec::new();
-    let by_name: BTreeMap<&str, &ParticleRow> =
-        ledger.particles.iter().map(|p| (p.name.as_str(), p)).collect();
+    let by_name: BTreeMap<&str, &ParticleRow> = ledger
+        .particles
+        .iter()
+        .map(|p| (p.name.as_str(), p))
+        .collect();
     for (i, collision) in ledger.collisions.iter().enumerate() {
         drafts.extend(collision_rows(&by_name, collision, i > 0));
         notes.extend(collision_notes(ledger, collision));
@@ -306,12 +337,24 @@ fn collision_rows(
 ) -> Vec<Draft> {
     let object = ObjectId::new(Kind::Collision, &collision.name);
     let mut drafts = Vec::new();
-    for (side, names) in [("before", &collision.going_in), ("after", &collision.coming_out)] {
+    for (side, names) in [
+        ("before", &collision.going_in),
+        ("after", &collision.coming_out),
+    ] {
         for (i, name) in names.iter().enumerate() {
-            let Some(p) = particles.get(name.as_str()) else { continue };
+            let Some(p) = particles.get(name.as_str()) else {
+                continue;
+            };
             drafts.push(Draft {
                 object: Some(ObjectId::new(Kind::Particle, name)),
-                words: vec![if i == 0 { side.to_owned() } else { String::new() }, name.clone()],
+                words: vec![
+                    if i == 0 {
+                        side.to_owned()
+                    } else {
+                        String::new()
+                    },
+                    name.clone(),
+                ],
                 numbers: vec![
                     p.energy.into(),
                     p.momentum[0].into(),
@@ -372,9 +415,14 @@ fn collision_notes(ledger: &Ledger, collision: &CollisionRow) -> Vec<String> {
     let unit = &ledger.units.energy;
     let d = &collision.difference;
     let allowed = significant(collision.tolerance, 2);
-    let parts = [("E", d.energy), ("px", d.momentum[0]), ("py", d.momentum[1])];
-    let (kept, lost): (Vec<_>, Vec<_>) =
-        parts.into_iter().partition(|(_, off)| off.abs() <= collision.tolerance);
+    let parts = [
+        ("E", d.energy),
+        ("px", d.momentum[0]),
+        ("py", d.momentum[1]),
+    ];
+    let (kept, lost): (Vec<_>, Vec<_>) = parts
+        .into_iter()
+        .partition(|(_, off)| off.abs() <= collision.tolerance);
     let names = |list: &[(&str, f64)]| list.iter().map(|p| p.0).collect::<Vec<_>>().join(", ");
     let mut notes = Vec::new();
     if lost.is_empty() {
@@ -384,8 +432,10 @@ fn collision_notes(ledger: &Ledger, collision: &CollisionRow) -> Vec<String> {
             names(&kept),
         ));
     } else {
-        let off: Vec<String> =
-            lost.iter().map(|(name, off)| format!("{name} by {}", significant(*off, 6))).collect();
+        let off: Vec<String> = lost
+            .iter()
+            .map(|(name, off)| format!("{name} by {}", significant(*off, 6)))
+            .collect();
         notes.push(format!(
             "{}: does not balance: {} {unit}, where {allowed} is allowed.",
             collision.name,

@@ -14,7 +14,10 @@ pub(super) fn trims(solver: &mut Solver<'_>, unread: &[ObjectId]) {
     let scene = solver.scene;
     let unread: BTreeSet<&ObjectId> = unread.iter().collect();
     for (i, (name, object)) in scene.lines.iter().enumerate() {
-        let id = ObjectId { kind: Kind::Line, name: name.clone() };
+        let id = ObjectId {
+            kind: Kind::Line,
+            name: name.clone(),
+        };
         let (from, until) = match &object.form {
             Line::Free { from, until, .. }
             | Line::Light { from, until, .. }
@@ -41,7 +44,10 @@ pub(super) fn trims(solver: &mut Solver<'_>, unread: &[ObjectId]) {
         }
     }
     for (i, (name, object)) in scene.events.iter().enumerate() {
-        let id = ObjectId { kind: Kind::Event, name: name.clone() };
+        let id = ObjectId {
+            kind: Kind::Event,
+            name: name.clone(),
+        };
         let lines: &[&String] = match &object.form {
             Event::At { .. } => &[],
             Event::Along { line, clock: _ } => &[line],
@@ -63,8 +69,17 @@ fn end(
 ) -> Option<(Arc<str>, Displacement)> {
     let name = name?;
     let Some(index) = solver.scene.events.get_index_of(name) else {
-        if !unread.contains(&ObjectId::new(Kind::Event, name)) && field != "through" && solver.lines[line].is_some() {
-            let fault = missing(id.clone(), field, Kind::Event, name, names(solver.scene, Kind::Event));
+        if !unread.contains(&ObjectId::new(Kind::Event, name))
+            && field != "through"
+            && solver.lines[line].is_some()
+        {
+            let fault = missing(
+                id.clone(),
+                field,
+                Kind::Event,
+                name,
+                names(solver.scene, Kind::Event),
+            );
             solver.faults.push(fault);
         }
         return None;
@@ -85,7 +100,9 @@ fn end(
 
 /// A finding where an event made on a line lies outside its ends.
 fn beyond(solver: &mut Solver<'_>, id: &ObjectId, index: usize, name: &str) {
-    let Some(event) = &solver.events[index] else { return };
+    let Some(event) = &solver.events[index] else {
+        return;
+    };
     let Ok(line) = solver.line(name) else { return };
     let t = event.at.t();
     let slack = 16.0 * f64::EPSILON * event.at.u.abs().max(event.at.v.abs());
@@ -96,7 +113,12 @@ fn beyond(solver: &mut Solver<'_>, id: &ObjectId, index: usize, name: &str) {
     };
     if let Some((side, verb, end)) = which {
         let what = format!("it lies on line {name}, but {side} the line {verb} at {end}");
-        let finding = Fault::new(id.clone(), "", what, "let the line run further, or move the event");
+        let finding = Fault::new(
+            id.clone(),
+            "",
+            what,
+            "let the line run further, or move the event",
+        );
         solver.faults.push(finding.finding());
     }
 }

@@ -40,7 +40,11 @@ pub(super) fn solve(
         Some((particle, name)) => {
             let stands_after = form.after.contains(name);
             let momentum = find(id, form, (&before, &after), stands_after)?;
-            if stands_after { after.push(momentum) } else { before.push(momentum) }
+            if stands_after {
+                after.push(momentum)
+            } else {
+                before.push(momentum)
+            }
             let own = ObjectId::new(Kind::Particle, name);
             compare_mass(solver, &own, *particle, &momentum)?;
             Some((*particle, particles::closed(solver, &own, momentum)?))
@@ -111,7 +115,11 @@ fn find(
     (before, after): (&[Momentum], &[Momentum]),
     stands_after: bool,
 ) -> Result<Momentum, Spoiled> {
-    let (whole, parts) = if stands_after { (before, after) } else { (after, before) };
+    let (whole, parts) = if stands_after {
+        (before, after)
+    } else {
+        (after, before)
+    };
     if form.closure == Closure::Merge && !parts.is_empty() {
         return Err(fault(
             id,
@@ -120,9 +128,18 @@ fn find(
             "use the closure Remainder, or leave the others out",
         ));
     }
-    let found = if parts.is_empty() { Total::of(whole).to_momentum() } else { remainder(whole, parts) };
+    let found = if parts.is_empty() {
+        Total::of(whole).to_momentum()
+    } else {
+        remainder(whole, parts)
+    };
     found.map_err(|e| {
-        fault(id, "closure", e.to_string(), "check the particles that are given: energy must be left over")
+        fault(
+            id,
+            "closure",
+            e.to_string(),
+            "check the particles that are given: energy must be left over",
+        )
     })
 }
 
@@ -133,15 +150,23 @@ fn compare_mass(
     particle: usize,
     found: &Momentum,
 ) -> Result<(), Spoiled> {
-    let Some((_, object)) = solver.scene.particles.get_index(particle) else { return Ok(()) };
-    let Some(stated) = particles::mass(solver, id, &object.form)? else { return Ok(()) };
+    let Some((_, object)) = solver.scene.particles.get_index(particle) else {
+        return Ok(());
+    };
+    let Some(stated) = particles::mass(solver, id, &object.form)? else {
+        return Ok(());
+    };
     let off = found.mass() - stated.to_f64();
     let allowed = 3.0 * stated.uncertainty.unwrap_or(0.0) + 1e-9 * found.energy();
     if off.abs() > allowed {
         let unit = solver.units.mass().symbol;
         let finding = Fault::new(
             id.clone(),
-            if object.form.species.is_some() { "species" } else { "mass" },
+            if object.form.species.is_some() {
+                "species"
+            } else {
+                "mass"
+            },
             format!(
                 "its mass by the balance is {} {unit}, {} more than stated",
                 crate::quantity::significant(found.mass(), 7),

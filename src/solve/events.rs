@@ -11,13 +11,22 @@ use crate::scene::{Event, When};
 pub(super) fn solve(solver: &Solver<'_>, id: &ObjectId) -> Result<SolvedEvent, Spoiled> {
     let object = solver.scene.events.get(&id.name).ok_or(None)?;
     let label = object.common.label.clone();
-    let derived = |at| SolvedEvent { at, exact: None, stated: None, label: label.clone() };
+    let derived = |at| SolvedEvent {
+        at,
+        exact: None,
+        stated: None,
+        label: label.clone(),
+    };
     match &object.form {
-        Event::At { t, x, when } => at(solver, id, (t, x), when).map(|event| SolvedEvent { label, ..event }),
+        Event::At { t, x, when } => {
+            at(solver, id, (t, x), when).map(|event| SolvedEvent { label, ..event })
+        }
         Event::Along { line, clock } => {
             let world = &solver.line(line)?.world;
             let reading = Solver::quantity(id, "clock", clock, &solver.units.solved.time)?;
-            let at = world.at_clock(reading.value.to_f64()).map_err(|e| no_event(id, "line", &e))?;
+            let at = world
+                .at_clock(reading.value.to_f64())
+                .map_err(|e| no_event(id, "line", &e))?;
             Ok(derived(at))
         }
         Event::Meeting { of } => {
@@ -27,13 +36,22 @@ pub(super) fn solve(solver: &Solver<'_>, id: &ObjectId) -> Result<SolvedEvent, S
         Event::LightFrom { event, meets } => {
             let from = solver.event(event)?.at;
             let world = &solver.line(meets)?.world;
-            Ok(derived(world.light_from(from).map_err(|e| no_event(id, "meets", &e))?))
+            Ok(derived(
+                world
+                    .light_from(from)
+                    .map_err(|e| no_event(id, "meets", &e))?,
+            ))
         }
     }
 }
 
 fn no_event(id: &ObjectId, field: &str, error: &GeometryError) -> Spoiled {
-    fault(id, field, error.to_string(), "name another line, or give the event by its coordinates")
+    fault(
+        id,
+        field,
+        error.to_string(),
+        "name another line, or give the event by its coordinates",
+    )
 }
 
 /// An event by its coordinates in a frame. In the base they are kept exact.
@@ -51,16 +69,31 @@ fn at(
     let given = Displacement::new(u, v, 0.0);
     if let Some(far) = [u, v].into_iter().find(|c| !in_range(*c)) {
         let what = format!("its coordinates leave the range 1e-150 to 1e150 ({far:e})");
-        return Err(fault(id, "", what, "choose units in which they are of ordinary size"));
+        return Err(fault(
+            id,
+            "",
+            what,
+            "choose units in which they are of ordinary size",
+        ));
     }
     let frame = frames::named(solver, id, when)?;
     let Some(frame) = frame else {
         let stated = Some((t.to_f64(), x.to_f64()));
-        return Ok(SolvedEvent { at: given, exact: Some((t, way)), stated, label: None });
+        return Ok(SolvedEvent {
+            at: given,
+            exact: Some((t, way)),
+            stated,
+            label: None,
+        });
     };
     let outside = |e: GeometryError| fault(id, "frame", e.to_string(), "choose a slower frame");
     let moved = frame.boost.inverse().apply(given).map_err(outside)?;
-    Ok(SolvedEvent { at: moved + frame.origin, exact: None, stated: None, label: None })
+    Ok(SolvedEvent {
+        at: moved + frame.origin,
+        exact: None,
+        stated: None,
+        label: None,
+    })
 }
 
 fn in_range(component: f64) -> bool {

@@ -12,17 +12,20 @@ use crate::scene::{FramePart, LineOrParticle, Toward, Velocity, When};
 pub(super) fn solve(solver: &mut Solver<'_>, id: &ObjectId) -> Result<SolvedFrame, Spoiled> {
     let object = solver.scene.frames.get(&id.name).ok_or(None)?.clone();
     let boost = match &object.form.part {
-        FramePart::Moving { velocity, toward, angle, when } => {
-            moving(solver, id, (velocity, *toward), angle.as_ref(), when)?
-        }
+        FramePart::Moving {
+            velocity,
+            toward,
+            angle,
+            when,
+        } => moving(solver, id, (velocity, *toward), angle.as_ref(), when)?,
         FramePart::RestOf(LineOrParticle::Line { line, at }) => {
             rest_of_line(solver, id, line, at.as_deref())?
         }
         FramePart::RestOf(LineOrParticle::Particle(name)) => {
             let momentum = solver.particle(name)?.momentum;
-            momentum.rest_frame().map_err(|e| {
-                fault(id, "particle", e.to_string(), "name a particle with mass")
-            })?
+            momentum
+                .rest_frame()
+                .map_err(|e| fault(id, "particle", e.to_string(), "name a particle with mass"))?
         }
         FramePart::CentreOfMomentum { of } => centre(solver, id, of)?,
     };
@@ -51,7 +54,9 @@ fn moving(
         None => Angle::ZERO,
     };
     let boost = Boost::new(typing.rapidity, angle);
-    let Some(frame) = named(solver, id, when)? else { return Ok(boost) };
+    let Some(frame) = named(solver, id, when)? else {
+        return Ok(boost);
+    };
     let (whole, _rotation) = frame
         .boost
         .then(boost)
@@ -104,19 +109,30 @@ fn centre(
     let total = match of {
         Ok(collision) => solver.collision(collision)?.total_before,
         Err(particles) => {
-            let parts: Result<Vec<Momentum>, Spoiled> =
-                particles.iter().map(|name| Ok(solver.particle(name)?.momentum)).collect();
+            let parts: Result<Vec<Momentum>, Spoiled> = particles
+                .iter()
+                .map(|name| Ok(solver.particle(name)?.momentum))
+                .collect();
             Total::of(&parts?)
         }
     };
     total.centre_of_momentum().map_err(|e| {
-        fault(id, "of", e.to_string(), "take more than parallel light, and at least one particle")
+        fault(
+            id,
+            "of",
+            e.to_string(),
+            "take more than parallel light, and at least one particle",
+        )
     })
 }
 
 /// An angle in degrees.
 pub(super) fn degrees(id: &ObjectId, typed: &Typed) -> Result<f64, Spoiled> {
-    Ok(Solver::quantity(id, "angle", typed, &Unit::base(Dimension::Angle))?.value.to_f64())
+    Ok(
+        Solver::quantity(id, "angle", typed, &Unit::base(Dimension::Angle))?
+            .value
+            .to_f64(),
+    )
 }
 
 /// The frame a thing is as typed in; none for the base. The graph has seen to it that a name is there.
@@ -130,9 +146,15 @@ pub(super) fn named(
         When::Frame(name) if *name == solver.scene.base => Ok(None),
         When::Frame(name) => solver.frame(name).map(|f| Some(f.clone())),
         When::Rapidity(typed) => {
-            let value = Solver::quantity(id, "rapidity", typed, &Unit::base(Dimension::Plain))?.value;
+            let value =
+                Solver::quantity(id, "rapidity", typed, &Unit::base(Dimension::Plain))?.value;
             let rapidity = Rapidity::new(value.to_f64()).map_err(|e| {
-                fault(id, "rapidity", e.to_string(), "a rapidity lies between -600 and 600")
+                fault(
+                    id,
+                    "rapidity",
+                    e.to_string(),
+                    "a rapidity lies between -600 and 600",
+                )
             })?;
             Ok(Some(SolvedFrame {
                 boost: Boost::along_x(rapidity),

@@ -8,7 +8,13 @@ use crate::fault::{Fault, Kind, ObjectId, nearest};
 use crate::scene::{Event, FramePart, Line, LineOrParticle, Scene, State, When};
 
 /// The kinds that take part in solving, in the order of their node numbers.
-const KINDS: [Kind; 5] = [Kind::Event, Kind::Line, Kind::Particle, Kind::Collision, Kind::Frame];
+const KINDS: [Kind; 5] = [
+    Kind::Event,
+    Kind::Line,
+    Kind::Particle,
+    Kind::Collision,
+    Kind::Frame,
+];
 
 /// One object as a node: its kind and its index in the scene's list of that kind.
 #[derive(Clone, Copy, Debug, PartialEq, Eq, PartialOrd, Ord)]
@@ -43,8 +49,14 @@ impl Order {
     }
 
     fn node(&self, number: usize) -> Node {
-        let kind = (0..KINDS.len()).rev().find(|&k| self.starts[k] <= number).unwrap_or(0);
-        Node { kind: KINDS[kind], index: number - self.starts[kind] }
+        let kind = (0..KINDS.len())
+            .rev()
+            .find(|&k| self.starts[k] <= number)
+            .unwrap_or(0);
+        Node {
+            kind: KINDS[kind],
+            index: number - self.starts[kind],
+        }
     }
 
     /// Orders the objects of a scene. `closers` gives the collision that closes each particle, where one does.
@@ -94,7 +106,8 @@ impl Order {
             return;
         }
         let object = id_of(scene, node);
-        self.faults.push(missing(object, field, kind, name, names(scene, kind)));
+        self.faults
+            .push(missing(object, field, kind, name, names(scene, kind)));
     }
 
     /// Kahn's order; what remains hangs on a cycle.
@@ -141,7 +154,11 @@ impl Order {
                     None => break,
                 }
             }
-            let Some(first) = path.iter().position(|&n| n == at).filter(|_| walk_of[at] == walk) else {
+            let Some(first) = path
+                .iter()
+                .position(|&n| n == at)
+                .filter(|_| walk_of[at] == walk)
+            else {
                 continue;
             };
             if !self.needs[path[path.len() - 1]].contains(&at) {
@@ -182,7 +199,12 @@ pub(super) fn missing<'a>(
         Some(near) => format!("perhaps \"{near}\" is meant"),
         None => format!("add a {} of that name, or name another", kind.word()),
     };
-    Fault::new(object, field, format!("there is no {} named \"{name}\"", kind.word()), mend)
+    Fault::new(
+        object,
+        field,
+        format!("there is no {} named \"{name}\"", kind.word()),
+        mend,
+    )
 }
 
 fn count(scene: &Scene, kind: Kind) -> usize {
@@ -216,7 +238,11 @@ pub(super) fn names(scene: &Scene, kind: Kind) -> Box<dyn Iterator<Item = &str> 
         Kind::Particle => Box::new(scene.particles.keys().map(|n| &**n)),
         Kind::Collision => Box::new(scene.collisions.keys().map(|n| &**n)),
         Kind::Frame => Box::new(
-            scene.frames.keys().map(|n| &**n).chain(std::iter::once(scene.base.as_str())),
+            scene
+                .frames
+                .keys()
+                .map(|n| &**n)
+                .chain(std::iter::once(scene.base.as_str())),
         ),
         Kind::Scene | Kind::Species | Kind::Plate => Box::new(std::iter::empty()),
     }
@@ -237,7 +263,10 @@ pub(super) fn name_of(scene: &Scene, node: Node) -> Arc<str> {
 
 /// A node as an object.
 pub(super) fn id_of(scene: &Scene, node: Node) -> ObjectId {
-    ObjectId { kind: node.kind, name: name_of(scene, node) }
+    ObjectId {
+        kind: node.kind,
+        name: name_of(scene, node),
+    }
 }
 
 type Sink<'a> = &'a mut dyn FnMut(Kind, &str, &str);
@@ -246,21 +275,38 @@ type Sink<'a> = &'a mut dyn FnMut(Kind, &str, &str);
 fn collect(scene: &Scene, node: Node, closers: &[Option<usize>], sink: Sink<'_>) {
     let index = node.index;
     match node.kind {
-        Kind::Event => scene.events.get_index(index).into_iter().for_each(|(_, o)| event(scene, &o.form, sink)),
-        Kind::Line => scene.lines.get_index(index).into_iter().for_each(|(_, o)| line(scene, &o.form, sink)),
-        Kind::Particle => scene.particles.get_index(index).into_iter().for_each(|(_, o)| {
-            frame_name(scene, &o.form.when, sink);
-            if let Some((name, _)) = closers[index].and_then(|c| scene.collisions.get_index(c)) {
-                sink(Kind::Collision, name, "state");
-            }
-        }),
+        Kind::Event => scene
+            .events
+            .get_index(index)
+            .into_iter()
+            .for_each(|(_, o)| event(scene, &o.form, sink)),
+        Kind::Line => scene
+            .lines
+            .get_index(index)
+            .into_iter()
+            .for_each(|(_, o)| line(scene, &o.form, sink)),
+        Kind::Particle => scene
+            .particles
+            .get_index(index)
+            .into_iter()
+            .for_each(|(_, o)| {
+                frame_name(scene, &o.form.when, sink);
+                if let Some((name, _)) = closers[index].and_then(|c| scene.collisions.get_index(c))
+                {
+                    sink(Kind::Collision, name, "state");
+                }
+            }),
         Kind::Collision => collision(scene, index, closers, sink),
-        Kind::Frame => scene.frames.get_index(index).into_iter().for_each(|(_, o)| {
-            frame(scene, &o.form.part, sink);
-            if let Some(origin) = &o.form.origin {
-                sink(Kind::Event, origin, "origin");
-            }
-        }),
+        Kind::Frame => scene
+            .frames
+            .get_index(index)
+            .into_iter()
+            .for_each(|(_, o)| {
+                frame(scene, &o.form.part, sink);
+                if let Some(origin) = &o.form.origin {
+                    sink(Kind::Event, origin, "origin");
+                }
+            }),
         Kind::Scene | Kind::Species | Kind::Plate => {}
     }
 }
@@ -290,7 +336,15 @@ fn event(scene: &Scene, form: &Event, sink: Sink<'_>) {
 /// `from` and `until` only trim a line: no dependency.
 fn line(scene: &Scene, form: &Line, sink: Sink<'_>) {
     match form {
-        Line::Free { through, when, clock, velocity: _, toward: _, from: _, until: _ } => {
+        Line::Free {
+            through,
+            when,
+            clock,
+            velocity: _,
+            toward: _,
+            from: _,
+            until: _,
+        } => {
             sink(Kind::Event, through, "through");
             frame_name(scene, when, sink);
             if let Some((event, _)) = clock {
@@ -305,8 +359,19 @@ fn line(scene: &Scene, form: &Line, sink: Sink<'_>) {
                 sink(Kind::Event, event, "clock.0");
             }
         }
-        Line::Light { through, toward: _, from: _, until: _ } => sink(Kind::Event, through, "through"),
-        Line::Follows { particle, through, clock, from: _, until: _ } => {
+        Line::Light {
+            through,
+            toward: _,
+            from: _,
+            until: _,
+        } => sink(Kind::Event, through, "through"),
+        Line::Follows {
+            particle,
+            through,
+            clock,
+            from: _,
+            until: _,
+        } => {
             sink(Kind::Particle, particle, "particle");
             sink(Kind::Event, through, "through");
             if let Some((event, _)) = clock {
@@ -318,10 +383,18 @@ fn line(scene: &Scene, form: &Line, sink: Sink<'_>) {
 
 /// A collision depends on all its particles but the one it closes.
 fn collision(scene: &Scene, index: usize, closers: &[Option<usize>], sink: Sink<'_>) {
-    let Some((_, object)) = scene.collisions.get_index(index) else { return };
-    for (side, names) in [("before", &object.form.before), ("after", &object.form.after)] {
+    let Some((_, object)) = scene.collisions.get_index(index) else {
+        return;
+    };
+    for (side, names) in [
+        ("before", &object.form.before),
+        ("after", &object.form.after),
+    ] {
         for (i, name) in names.iter().enumerate() {
-            let closes = scene.particles.get_index_of(name.as_str()).is_some_and(|p| closers[p] == Some(index));
+            let closes = scene
+                .particles
+                .get_index_of(name.as_str())
+                .is_some_and(|p| closers[p] == Some(index));
             if !closes {
                 sink(Kind::Particle, name, &format!("{side}.{i}"));
             }
@@ -331,7 +404,12 @@ fn collision(scene: &Scene, index: usize, closers: &[Option<usize>], sink: Sink<
 
 fn frame(scene: &Scene, part: &FramePart, sink: Sink<'_>) {
     match part {
-        FramePart::Moving { when, velocity: _, toward: _, angle: _ } => frame_name(scene, when, sink),
+        FramePart::Moving {
+            when,
+            velocity: _,
+            toward: _,
+            angle: _,
+        } => frame_name(scene, when, sink),
         FramePart::RestOf(LineOrParticle::Line { line, at }) => {
             sink(Kind::Line, line, "line");
             if let Some(event) = at {
@@ -353,14 +431,21 @@ fn frame(scene: &Scene, part: &FramePart, sink: Sink<'_>) {
 pub(super) fn closers(scene: &Scene) -> Vec<Option<usize>> {
     let mut closed_by = vec![None; scene.particles.len()];
     let unknown = |p: usize| {
-        scene.particles.get_index(p).is_some_and(|(_, o)| matches!(o.form.state, State::Closing))
+        scene
+            .particles
+            .get_index(p)
+            .is_some_and(|(_, o)| matches!(o.form.state, State::Closing))
     };
     let mut open: Vec<BTreeSet<usize>> = Vec::new();
     let mut users: Vec<Vec<usize>> = vec![Vec::new(); scene.particles.len()];
     for (c, object) in scene.collisions.values().enumerate() {
         let mut set = BTreeSet::new();
         for name in object.form.before.iter().chain(&object.form.after) {
-            if let Some(p) = scene.particles.get_index_of(name.as_str()).filter(|&p| unknown(p)) {
+            if let Some(p) = scene
+                .particles
+                .get_index_of(name.as_str())
+                .filter(|&p| unknown(p))
+            {
                 set.insert(p);
                 users[p].push(c);
             }
@@ -368,10 +453,14 @@ pub(super) fn closers(scene: &Scene) -> Vec<Option<usize>> {
         open.push(set);
     }
     let can_close = |c: usize| {
-        scene.collisions.get_index(c).is_some_and(|(_, o)| o.form.closure != crate::scene::Closure::Given)
+        scene
+            .collisions
+            .get_index(c)
+            .is_some_and(|(_, o)| o.form.closure != crate::scene::Closure::Given)
     };
-    let mut ready: BTreeSet<usize> =
-        (0..open.len()).filter(|&c| open[c].len() == 1 && can_close(c)).collect();
+    let mut ready: BTreeSet<usize> = (0..open.len())
+        .filter(|&c| open[c].len() == 1 && can_close(c))
+        .collect();
     while let Some(c) = ready.pop_first() {
         let Some(&p) = open[c].first() else { continue };
         closed_by[p] = Some(c);

@@ -16,20 +16,39 @@ pub(super) fn solve(solver: &mut Solver<'_>, id: &ObjectId) -> Result<SolvedLine
     let mut follows = None;
     let mut stated_beta = None;
     let world = match &object.form {
-        Line::Free { through, velocity, toward, when, clock, from: _, until: _ } => {
+        Line::Free {
+            through,
+            velocity,
+            toward,
+            when,
+            clock,
+            from: _,
+            until: _,
+        } => {
             let (leg, stated) = free(solver, id, (velocity, *toward), when)?;
             stated_beta = stated;
             straight(solver, id, leg, through, clock.as_ref())?
         }
         Line::Broken { through, clock } => broken(solver, id, through, clock.as_ref())?,
-        Line::Light { through, toward, from: _, until: _ } => {
+        Line::Light {
+            through,
+            toward,
+            from: _,
+            until: _,
+        } => {
             let side = match toward {
                 Toward::Plus => Side::Plus,
                 Toward::Minus => Side::Minus,
             };
             Worldline::straight(Leg::Light(side), solver.event(through)?.at, 0.0)
         }
-        Line::Follows { particle, through, clock, from: _, until: _ } => {
+        Line::Follows {
+            particle,
+            through,
+            clock,
+            from: _,
+            until: _,
+        } => {
             let momentum = solver.particle(particle)?.momentum;
             follows = Some(particle.as_str().into());
             let leg = leg_of(&momentum).ok_or_else(|| {
@@ -40,7 +59,14 @@ pub(super) fn solve(solver: &mut Solver<'_>, id: &ObjectId) -> Result<SolvedLine
         }
     };
     let label = object.common.label.clone();
-    Ok(SolvedLine { world, from: None, until: None, follows, stated_beta, label })
+    Ok(SolvedLine {
+        world,
+        from: None,
+        until: None,
+        follows,
+        stated_beta,
+        label,
+    })
 }
 
 /// The rapidities of a line's legs, each with its celerity across; light has none.
@@ -66,12 +92,23 @@ fn free(
     solver.faults.extend(typing.finding);
     let Some(frame) = frames::named(solver, id, when)? else {
         let stated = matches!(form, Velocity::Beta(_)).then(|| typing.quantity.value.to_f64());
-        return Ok((Leg::Free { rapidity: typing.rapidity, across: 0.0 }, stated));
+        return Ok((
+            Leg::Free {
+                rapidity: typing.rapidity,
+                across: 0.0,
+            },
+            stated,
+        ));
     };
     let seen = Momentum::moving(1.0, typing.rapidity, Angle::ZERO)
         .and_then(|p| p.boosted(frame.boost.inverse()));
     let leg = seen.ok().as_ref().and_then(leg_of).ok_or_else(|| {
-        fault(id, "velocity", "the velocity leaves the range of rapidity", "choose a slower one")
+        fault(
+            id,
+            "velocity",
+            "the velocity leaves the range of rapidity",
+            "choose a slower one",
+        )
     })?;
     Ok((leg, None))
 }
@@ -79,13 +116,20 @@ fn free(
 /// How a particle moves; none for light across x.
 fn leg_of(momentum: &Momentum) -> Option<Leg> {
     match *momentum {
-        Momentum::Massive { mass, rapidity, py } => Some(Leg::Free { rapidity, across: py / mass }),
-        Momentum::Massless { p_minus, p_plus: _, py: 0.0 } if p_minus == 0.0 => {
-            Some(Leg::Light(Side::Plus))
-        }
-        Momentum::Massless { p_minus: _, p_plus, py: 0.0 } if p_plus == 0.0 => {
-            Some(Leg::Light(Side::Minus))
-        }
+        Momentum::Massive { mass, rapidity, py } => Some(Leg::Free {
+            rapidity,
+            across: py / mass,
+        }),
+        Momentum::Massless {
+            p_minus,
+            p_plus: _,
+            py: 0.0,
+        } if p_minus == 0.0 => Some(Leg::Light(Side::Plus)),
+        Momentum::Massless {
+            p_minus: _,
+            p_plus,
+            py: 0.0,
+        } if p_plus == 0.0 => Some(Leg::Light(Side::Minus)),
         Momentum::Massless { .. } => None,
     }
 }
@@ -99,13 +143,20 @@ fn straight(
     clock: Option<&(String, Typed)>,
 ) -> Result<Worldline, Spoiled> {
     let anchor = solver.event(through)?.at;
-    let Some((event, typed)) = clock else { return Ok(Worldline::straight(leg, anchor, 0.0)) };
+    let Some((event, typed)) = clock else {
+        return Ok(Worldline::straight(leg, anchor, 0.0));
+    };
     let reading = reading(solver, id, typed)?;
     let world = Worldline::straight(leg, anchor, 0.0);
     let place = on_line(solver, id, &world, event)?;
-    let offset = world
-        .clock_at(place)
-        .map_err(|e| fault(id, "clock", e.to_string(), "leave the clock out: light has none"))?;
+    let offset = world.clock_at(place).map_err(|e| {
+        fault(
+            id,
+            "clock",
+            e.to_string(),
+            "leave the clock out: light has none",
+        )
+    })?;
     Ok(Worldline::straight(leg, anchor, reading - offset))
 }
 
@@ -115,29 +166,43 @@ fn broken(
     through: &[String],
     clock: Option<&(String, Typed)>,
 ) -> Result<Worldline, Spoiled> {
-    let events: Result<Vec<Displacement>, Spoiled> =
-        through.iter().map(|name| Ok(solver.event(name)?.at)).collect();
+    let events: Result<Vec<Displacement>, Spoiled> = through
+        .iter()
+        .map(|name| Ok(solver.event(name)?.at))
+        .collect();
     let (at, reading) = match clock {
         None => (0, 0.0),
         Some((event, typed)) => {
-            let index = through.iter().position(|name| name == event).ok_or_else(|| {
-                fault(
-                    id,
-                    "clock.0",
-                    format!("event {event} is none of those the line goes through"),
-                    "set the clock at one of those",
-                )
-            })?;
+            let index = through
+                .iter()
+                .position(|name| name == event)
+                .ok_or_else(|| {
+                    fault(
+                        id,
+                        "clock.0",
+                        format!("event {event} is none of those the line goes through"),
+                        "set the clock at one of those",
+                    )
+                })?;
             (index, reading(solver, id, typed)?)
         }
     };
     Worldline::broken(&events?, at, reading).map_err(|e| {
-        fault(id, "through", e.to_string(), "name at least two events, each in the future of the one before")
+        fault(
+            id,
+            "through",
+            e.to_string(),
+            "name at least two events, each in the future of the one before",
+        )
     })
 }
 
 fn reading(solver: &Solver<'_>, id: &ObjectId, typed: &Typed) -> Result<f64, Spoiled> {
-    Ok(Solver::quantity(id, "clock.1", typed, &solver.units.solved.time)?.value.to_f64())
+    Ok(
+        Solver::quantity(id, "clock.1", typed, &solver.units.solved.time)?
+            .value
+            .to_f64(),
+    )
 }
 
 fn on_line(
@@ -150,7 +215,12 @@ fn on_line(
     let (off, bound) = world.distance(place);
     if off > bound {
         let what = format!("event {event} does not lie on the line");
-        return Err(fault(id, "clock.0", what, "set the clock at an event on it"));
+        return Err(fault(
+            id,
+            "clock.0",
+            what,
+            "set the clock at an event on it",
+        ));
     }
     Ok(place)
 }

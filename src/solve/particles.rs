@@ -33,7 +33,12 @@ pub(super) fn solve(solver: &mut Solver<'_>, id: &ObjectId) -> Result<SolvedPart
         return Err(unclosed(solver, id));
     }
     let mass = mass(solver, id, form)?.ok_or_else(|| {
-        fault(id, "", "it has neither species nor mass", "give one of them")
+        fault(
+            id,
+            "",
+            "it has neither species nor mass",
+            "give one of them",
+        )
     })?;
     let angle = direction(id, form)?;
     let frame = frames::named(solver, id, &form.when)?;
@@ -47,7 +52,11 @@ pub(super) fn solve(solver: &mut Solver<'_>, id: &ObjectId) -> Result<SolvedPart
     };
     let momentum = make(Nudge::None).map_err(|e| impossible(id, form, &e))?;
     let typed_error = typed_error(&momentum, &mass, &inputs, make);
-    let stated = if frame.is_none() { stated(form, &inputs, angle) } else { Stated::default() };
+    let stated = if frame.is_none() {
+        stated(form, &inputs, angle)
+    } else {
+        Stated::default()
+    };
     solver.faults.extend(inputs.finding);
     Ok(SolvedParticle {
         momentum,
@@ -66,7 +75,11 @@ fn unclosed(solver: &Solver<'_>, id: &ObjectId) -> Spoiled {
         .collisions
         .iter()
         .filter(|(_, c)| {
-            c.form.before.iter().chain(&c.form.after).any(|name| **name == *id.name)
+            c.form
+                .before
+                .iter()
+                .chain(&c.form.after)
+                .any(|name| **name == *id.name)
         })
         .map(|(name, _)| &**name)
         .collect();
@@ -81,7 +94,10 @@ fn unclosed(solver: &Solver<'_>, id: &ObjectId) -> Spoiled {
         fault(
             id,
             "state",
-            format!("it is Closing, but collision {} cannot find it", users.join(", ")),
+            format!(
+                "it is Closing, but collision {} cannot find it",
+                users.join(", ")
+            ),
             "a collision with the closure Merge or Remainder finds one unknown particle",
         )
     }
@@ -121,7 +137,12 @@ pub(super) fn mass(
     let mass = quantity.value.to_f64();
     if mass < 0.0 || (mass != 0.0 && !(1e-150..=1e150).contains(&mass)) {
         let what = format!("its mass is {mass}");
-        return Err(fault(id, "mass", what, "a mass is 0, or between 1e-150 and 1e150"));
+        return Err(fault(
+            id,
+            "mass",
+            what,
+            "a mass is 0, or between 1e-150 and 1e150",
+        ));
     }
     Ok(Some(Mass {
         value: quantity.value,
@@ -136,16 +157,30 @@ fn unknown_species(solver: &Solver<'_>, id: &ObjectId, name: &str) -> Spoiled {
     let known = crate::quantity::SPECIES.iter().map(|s| s.name);
     let mend = match crate::fault::nearest(name, own.chain(known)) {
         Some(near) => format!("perhaps \"{near}\" is meant"),
-        None => "give its mass in place of the species, or add it to the scene's species".to_owned(),
+        None => {
+            "give its mass in place of the species, or add it to the scene's species".to_owned()
+        }
     };
-    fault(id, "species", format!("there is no species named \"{name}\""), mend)
+    fault(
+        id,
+        "species",
+        format!("there is no species named \"{name}\""),
+        mend,
+    )
 }
 
 /// Direction of the motion; none where the state says it by components.
 fn direction(id: &ObjectId, form: &Particle) -> Result<Angle, Spoiled> {
-    let whole = matches!(form.state, State::Components { .. } | State::Longitudinal { .. });
+    let whole = matches!(
+        form.state,
+        State::Components { .. } | State::Longitudinal { .. }
+    );
     if whole && (form.angle.is_some() || form.toward.is_some()) {
-        let field = if form.angle.is_some() { "angle" } else { "toward" };
+        let field = if form.angle.is_some() {
+            "angle"
+        } else {
+            "toward"
+        };
         return Err(fault(
             id,
             field,
@@ -172,7 +207,11 @@ fn direction(id: &ObjectId, form: &Particle) -> Result<Angle, Spoiled> {
             "leave toward out and give the number its sign",
         ));
     }
-    let turn = if form.toward == Some(Toward::Minus) { 180.0 } else { 0.0 };
+    let turn = if form.toward == Some(Toward::Minus) {
+        180.0
+    } else {
+        0.0
+    };
     match &form.angle {
         Some(typed) => Ok(Angle::from_degrees(frames::degrees(id, typed)? + turn)),
         None => Ok(Angle::from_degrees(turn)),
@@ -204,7 +243,11 @@ fn inputs(solver: &Solver<'_>, id: &ObjectId, form: &Particle) -> Result<Inputs,
             let typing = velocity::read(id, "state", velocity, None)?;
             let numbers = vec![typing.quantity];
             let rapidity = Some(typing.rapidity);
-            return Ok(Inputs { numbers, rapidity, finding: typing.finding });
+            return Ok(Inputs {
+                numbers,
+                rapidity,
+                finding: typing.finding,
+            });
         }
         State::Kinetic(typed) | State::Energy(typed) => push("state", typed, &energy)?,
         State::Momentum(typed) => push("state", typed, &momentum)?,
@@ -218,7 +261,11 @@ fn inputs(solver: &Solver<'_>, id: &ObjectId, form: &Particle) -> Result<Inputs,
         }
         State::AtRest | State::Closing => {}
     }
-    Ok(Inputs { numbers, rapidity: None, finding: None })
+    Ok(Inputs {
+        numbers,
+        rapidity: None,
+        finding: None,
+    })
 }
 
 /// Which typed number is moved by half its last digit.
@@ -264,11 +311,19 @@ fn vector(
 }
 
 fn nudged_rapidity(velocity: &Velocity, number: &Number) -> Result<Rapidity, DynamicsError> {
-    Ok(velocity::rapidity_of(velocity, number, crate::geometry::Side::Plus)?)
+    Ok(velocity::rapidity_of(
+        velocity,
+        number,
+        crate::geometry::Side::Plus,
+    )?)
 }
 
 fn moved(value: &Number, by: f64, yes: bool) -> Number {
-    if yes { value.plus(&Number::Real(by)) } else { value.clone() }
+    if yes {
+        value.plus(&Number::Real(by))
+    } else {
+        value.clone()
+    }
 }
 
 /// How far half a last typed digit of each input moves the energy or the momentum, added up.
@@ -345,7 +400,11 @@ fn impossible(id: &ObjectId, form: &Particle, error: &DynamicsError) -> Spoiled 
 }
 
 /// A particle that a collision has found.
-pub(super) fn closed(solver: &Solver<'_>, id: &ObjectId, momentum: Momentum) -> Result<SolvedParticle, Spoiled> {
+pub(super) fn closed(
+    solver: &Solver<'_>,
+    id: &ObjectId,
+    momentum: Momentum,
+) -> Result<SolvedParticle, Spoiled> {
     let object = solver.scene.particles.get(&id.name).ok_or(None)?;
     let form = &object.form;
     if form.angle.is_some() || form.toward.is_some() || form.when != When::Base {
@@ -363,7 +422,10 @@ pub(super) fn closed(solver: &Solver<'_>, id: &ObjectId, momentum: Momentum) -> 
         mass_uncertainty: None,
         stated: Stated::default(),
         typed_error: 0.0,
-        label: object.common.label.clone().or_else(|| mass.and_then(|m| m.label)),
+        label: object
+            .common
+            .label
+            .clone()
+            .or_else(|| mass.and_then(|m| m.label)),
     })
 }
-

@@ -51,7 +51,11 @@ pub fn solve(scene: &Scene, unread: &[ObjectId]) -> Solved {
         }
     }
     checks::trims(&mut solver, unread);
-    let left_out = order.out.iter().map(|&node| graph::id_of(scene, node)).collect();
+    let left_out = order
+        .out
+        .iter()
+        .map(|&node| graph::id_of(scene, node))
+        .collect();
     solver.finish(left_out)
 }
 
@@ -150,23 +154,37 @@ impl Solver<'_> {
         unit: &Unit,
     ) -> Result<Quantity, Spoiled> {
         read(typed, unit).map_err(|f| {
-            Some(Box::new(Fault::new(id.clone(), field, f.what, f.mend).at(f.column)))
+            Some(Box::new(
+                Fault::new(id.clone(), field, f.what, f.mend).at(f.column),
+            ))
         })
     }
 
     /// The event of a name, as solved. None where it is left out.
     pub(super) fn event(&self, name: &str) -> Result<&SolvedEvent, Spoiled> {
-        self.scene.events.get_index_of(name).and_then(|i| self.events[i].as_ref()).ok_or(None)
+        self.scene
+            .events
+            .get_index_of(name)
+            .and_then(|i| self.events[i].as_ref())
+            .ok_or(None)
     }
 
     /// The line of a name.
     pub(super) fn line(&self, name: &str) -> Result<&SolvedLine, Spoiled> {
-        self.scene.lines.get_index_of(name).and_then(|i| self.lines[i].as_ref()).ok_or(None)
+        self.scene
+            .lines
+            .get_index_of(name)
+            .and_then(|i| self.lines[i].as_ref())
+            .ok_or(None)
     }
 
     /// The particle of a name.
     pub(super) fn particle(&self, name: &str) -> Result<&SolvedParticle, Spoiled> {
-        self.scene.particles.get_index_of(name).and_then(|i| self.particles[i].as_ref()).ok_or(None)
+        self.scene
+            .particles
+            .get_index_of(name)
+            .and_then(|i| self.particles[i].as_ref())
+            .ok_or(None)
     }
 
     /// The collision of a name.
@@ -180,7 +198,11 @@ impl Solver<'_> {
 
     /// The frame of a name.
     pub(super) fn frame(&self, name: &str) -> Result<&SolvedFrame, Spoiled> {
-        self.scene.frames.get_index_of(name).and_then(|i| self.frames[i].as_ref()).ok_or(None)
+        self.scene
+            .frames
+            .get_index_of(name)
+            .and_then(|i| self.frames[i].as_ref())
+            .ok_or(None)
     }
 
     fn finish(self, left_out: Vec<ObjectId>) -> Solved {
@@ -201,7 +223,10 @@ impl Solver<'_> {
 }
 
 fn sound<T, S>(list: &crate::scene::List<T>, solved: Vec<Option<S>>) -> IndexMap<Arc<str>, S> {
-    list.keys().zip(solved).filter_map(|(name, s)| Some((name.clone(), s?))).collect()
+    list.keys()
+        .zip(solved)
+        .filter_map(|(name, s)| Some((name.clone(), s?)))
+        .collect()
 }
 
 /// A fault of one field, boxed as solving passes it on.
@@ -232,8 +257,16 @@ pub(super) fn ticks(solved: &Solved) -> Vec<RapidityTick> {
         is_base: true,
     }];
     let mut add = |kind, name: &Arc<str>, rapidity, across| {
-        let object = ObjectId { kind, name: name.clone() };
-        ticks.push(RapidityTick { object, rapidity, across, is_base: false });
+        let object = ObjectId {
+            kind,
+            name: name.clone(),
+        };
+        ticks.push(RapidityTick {
+            object,
+            rapidity,
+            across,
+            is_base: false,
+        });
     };
     for (name, line) in &solved.lines {
         for (rapidity, celerity) in lines::rapidities(line) {
@@ -243,7 +276,12 @@ pub(super) fn ticks(solved: &Solved) -> Vec<RapidityTick> {
     for (name, particle) in &solved.particles {
         let momentum = particle.momentum;
         if let (Some(rapidity), true) = (momentum.rapidity(), momentum.mass() > 0.0) {
-            add(Kind::Particle, name, rapidity, momentum.py() / momentum.transverse_mass());
+            add(
+                Kind::Particle,
+                name,
+                rapidity,
+                momentum.py() / momentum.transverse_mass(),
+            );
         }
     }
     for (name, frame) in &solved.frames {

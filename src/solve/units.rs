@@ -18,35 +18,53 @@ pub(super) struct ReadUnits {
 impl ReadUnits {
     pub(super) fn of(scene: &Scene) -> (Self, Vec<Fault>) {
         let mut faults = Vec::new();
-        let mut named = |symbol: &Option<String>, field: &str, dimension, usual: Option<Unit>| {
-            let Some(symbol) = symbol else { return (usual, true) };
-            let unit = Unit::named(symbol, dimension);
-            let sound = unit.is_some();
-            if !sound {
-                faults.push(Fault::new(
-                    ObjectId::scene(),
-                    field,
-                    format!("\"{symbol}\" is no unit of {}", dimension.word()),
-                    format!("take one of {}", Unit::symbols(dimension)),
-                ));
-            }
-            (unit.or(usual), sound)
-        };
+        let mut named =
+            |symbol: &Option<String>, field: &str, dimension: Dimension, usual: Option<Unit>| {
+                let Some(symbol) = symbol else {
+                    return (usual, true);
+                };
+                let unit = Unit::named(symbol, dimension);
+                let sound = unit.is_some();
+                if !sound {
+                    faults.push(Fault::new(
+                        ObjectId::scene(),
+                        field,
+                        format!("\"{symbol}\" does not measure {}", dimension.words()),
+                        format!("take {}", dimension.choices()),
+                    ));
+                }
+                (unit.or(usual), sound)
+            };
         let second = Unit::base(Dimension::Time);
-        let (time, time_sound) =
-            named(&scene.units.time, "units.time", Dimension::Time, Some(second.clone()));
+        let (time, time_sound) = named(
+            &scene.units.time,
+            "units.time",
+            Dimension::Time,
+            Some(second.clone()),
+        );
         let time = time.unwrap_or(second);
         let way = time.light_way();
-        let (length, length_sound) =
-            named(&scene.units.length, "units.length", Dimension::Length, way.clone());
+        let (length, length_sound) = named(
+            &scene.units.length,
+            "units.length",
+            Dimension::Length,
+            way.clone(),
+        );
         let length = length.unwrap_or_else(|| Unit::base(Dimension::Length));
         let gev = Unit::named("GeV", Dimension::Energy);
         let (energy, energy_sound) =
             named(&scene.units.energy, "units.energy", Dimension::Energy, gev);
         let energy = energy.unwrap_or_else(|| Unit::base(Dimension::Energy));
-        let light_way =
-            way.map_or_else(|| crate::quantity::Number::integer(1), |w| w.in_terms_of(&length));
-        let solved = SolvedUnits { time, length, energy, light_way: light_way.to_f64() };
+        let light_way = way.map_or_else(
+            || crate::quantity::Number::integer(1),
+            |w| w.in_terms_of(&length),
+        );
+        let solved = SolvedUnits {
+            time,
+            length,
+            energy,
+            light_way: light_way.to_f64(),
+        };
         let units = Self {
             solved,
             spacetime_sound: time_sound && length_sound,

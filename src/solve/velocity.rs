@@ -30,9 +30,10 @@ pub(super) fn read(
 ) -> Result<Typing, Spoiled> {
     let unit = match velocity {
         Velocity::Beta(_) | Velocity::BehindLight(_) => Unit::base(Dimension::Speed),
-        Velocity::Gamma(_) | Velocity::Celerity(_) | Velocity::Rapidity(_) | Velocity::Doppler(_) => {
-            Unit::base(Dimension::Plain)
-        }
+        Velocity::Gamma(_)
+        | Velocity::Celerity(_)
+        | Velocity::Rapidity(_)
+        | Velocity::Doppler(_) => Unit::base(Dimension::Plain),
     };
     let typed = typed_of(velocity);
     let quantity = Solver::quantity(id, field, typed, &unit)?;
@@ -48,7 +49,11 @@ pub(super) fn read(
         )
         .finding()
     });
-    Ok(Typing { quantity, rapidity, finding })
+    Ok(Typing {
+        quantity,
+        rapidity,
+        finding,
+    })
 }
 
 fn typed_of(velocity: &Velocity) -> &Typed {
@@ -154,7 +159,12 @@ fn few_digits(
 /// Where the number does not read, or lies outside what the form allows.
 pub fn typed_rapidity(velocity: &Velocity, toward: Option<Toward>) -> Result<f64, Fault> {
     let id = ObjectId::scene();
-    read(&id, "", velocity, toward).map(|typing| typing.rapidity.value()).map_err(|spoiled| {
-        spoiled.map_or_else(|| Fault::new(id, "", "it does not read", ""), |fault| *fault)
-    })
+    read(&id, "", velocity, toward)
+        .map(|typing| typing.rapidity.value())
+        .map_err(|spoiled| {
+            spoiled.map_or_else(
+                || Fault::new(id, "", "it does not read", ""),
+                |fault| *fault,
+            )
+        })
 }

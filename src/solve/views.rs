@@ -40,10 +40,16 @@ impl Solved {
             When::Frame(name) if **name == *self.base => Some(self.base_view()),
             When::Frame(name) => {
                 let (name, frame) = self.frames.get_key_value(name.as_str())?;
-                Some(Viewing { name: Some(name.clone()), ..view_of(frame) })
+                Some(Viewing {
+                    name: Some(name.clone()),
+                    ..view_of(frame)
+                })
             }
             When::Rapidity(typed) => {
-                let value = read(typed, &Unit::base(Dimension::Plain)).ok()?.value.to_f64();
+                let value = read(typed, &Unit::base(Dimension::Plain))
+                    .ok()?
+                    .value
+                    .to_f64();
                 Some(self.viewing_at(Rapidity::new(value).ok()?))
             }
         }
@@ -51,7 +57,11 @@ impl Solved {
 
     /// A frame moving along x at a rapidity relative to the base, with the base's origin.
     pub fn viewing_at(&self, rapidity: Rapidity) -> Viewing {
-        Viewing { name: None, boost: Boost::along_x(rapidity), ..self.base_view() }
+        Viewing {
+            name: None,
+            boost: Boost::along_x(rapidity),
+            ..self.base_view()
+        }
     }
 
     /// An event as a frame has it, from that frame's origin, in time units; numbers known exactly are subtracted
@@ -72,7 +82,9 @@ impl Solved {
             return (d, d.separation());
         }
         let d = b.at - a.at;
-        let largest = [a.at.u, a.at.v, b.at.u, b.at.v].iter().fold(0.0f64, |m, c| m.max(c.abs()));
+        let largest = [a.at.u, a.at.v, b.at.u, b.at.v]
+            .iter()
+            .fold(0.0f64, |m, c| m.max(c.abs()));
         let bound = DERIVED * largest * (d.u.abs() + d.v.abs() + 2.0 * d.y.abs());
         (d, d.separation_within(bound))
     }
@@ -97,5 +109,8 @@ fn view_of(frame: &SolvedFrame) -> Viewing {
 }
 
 fn zero_pair() -> (crate::quantity::Number, crate::quantity::Number) {
-    (crate::quantity::Number::zero(), crate::quantity::Number::zero())
+    (
+        crate::quantity::Number::zero(),
+        crate::quantity::Number::zero(),
+    )
 }

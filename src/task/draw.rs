@@ -44,7 +44,10 @@ pub struct TaskFault {
 
 impl From<ExportFault> for TaskFault {
     fn from(fault: ExportFault) -> Self {
-        Self { what: fault.what, mend: fault.mend }
+        Self {
+            what: fault.what,
+            mend: fault.mend,
+        }
     }
 }
 
@@ -74,11 +77,17 @@ pub fn lay_out(opened: &Opened, plate: Option<&str>, change: &Override) -> Optio
 pub fn draw(opened: &Opened, drawing: &Drawing) -> Result<Drawn, TaskFault> {
     let plate = drawing.plate.as_deref();
     let panels = panel_count(opened, plate)?;
-    let only = drawing.panel.map(|letter| panel_index(letter, panels)).transpose()?;
+    let only = drawing
+        .panel
+        .map(|letter| panel_index(letter, panels))
+        .transpose()?;
     if let Some(when) = &drawing.when {
         viewing(opened, when)?;
     }
-    let change = Override { viewing: vec![drawing.when.clone(); panels], only };
+    let change = Override {
+        viewing: vec![drawing.when.clone(); panels],
+        only,
+    };
     let laid = lay_out(opened, plate, &change).ok_or_else(|| no_plate(opened, plate))?;
     let mut faults = opened.faults.clone();
     faults.extend(laid.faults);
@@ -95,7 +104,9 @@ pub fn ledger(opened: &Opened, from: &When) -> Result<Ledger, TaskFault> {
     let viewing = viewing(opened, from)?;
     let mut ledger = crate::ledger::ledger(&opened.solved, &viewing);
     let scene_faults = opened.faults.iter().map(fault_row);
-    ledger.faults = scene_faults.chain(std::mem::take(&mut ledger.faults)).collect();
+    ledger.faults = scene_faults
+        .chain(std::mem::take(&mut ledger.faults))
+        .collect();
     Ok(ledger)
 }
 
@@ -118,7 +129,10 @@ fn viewing(opened: &Opened, when: &When) -> Result<crate::solve::Viewing, TaskFa
         },
         When::Frame(name) => {
             let known = solved.frames.keys().map(|n| &**n).chain([&*solved.base]);
-            TaskFault { what: format!("there is no frame named \"{name}\""), mend: offer(name, known) }
+            TaskFault {
+                what: format!("there is no frame named \"{name}\""),
+                mend: offer(name, known),
+            }
         }
         When::Base | When::Rapidity(_) => TaskFault {
             what: "that is no rapidity".to_owned(),
@@ -144,18 +158,27 @@ fn panel_count(opened: &Opened, plate: Option<&str>) -> Result<usize, TaskFault>
 fn no_plate(opened: &Opened, plate: Option<&str>) -> TaskFault {
     let name = plate.unwrap_or_default();
     let known = opened.scene.plates.keys().map(|n| &**n);
-    TaskFault { what: format!("there is no plate named \"{name}\""), mend: offer(name, known) }
+    TaskFault {
+        what: format!("there is no plate named \"{name}\""),
+        mend: offer(name, known),
+    }
 }
 
 fn panel_index(letter: char, panels: usize) -> Result<usize, TaskFault> {
-    let index = usize::try_from(u32::from(letter)).unwrap_or(0).wrapping_sub(usize::from(b'a'));
+    let index = usize::try_from(u32::from(letter))
+        .unwrap_or(0)
+        .wrapping_sub(usize::from(b'a'));
     if index < panels {
         return Ok(index);
     }
     let last = char::from(b'a' + u8::try_from(panels.saturating_sub(1).min(25)).unwrap_or(0));
     Err(TaskFault {
         what: format!("the plate has no panel \"{letter}\""),
-        mend: if panels < 2 { "it has only a".to_owned() } else { format!("it has a to {last}") },
+        mend: if panels < 2 {
+            "it has only a".to_owned()
+        } else {
+            format!("it has a to {last}")
+        },
     })
 }
 

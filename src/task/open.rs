@@ -38,10 +38,18 @@ impl OpenFault {
     pub fn line(&self, file: &str) -> String {
         match self {
             Self::Disk(fault) => format!("{file}: {}; {}", fault.what, fault.mend),
-            Self::Text(Unreadable { place: Some(Place { line, column }), what, mend }) => {
+            Self::Text(Unreadable {
+                place: Some(Place { line, column }),
+                what,
+                mend,
+            }) => {
                 format!("{file}:{line}:{column}: scene: {what}; {mend}")
             }
-            Self::Text(Unreadable { place: None, what, mend }) => {
+            Self::Text(Unreadable {
+                place: None,
+                what,
+                mend,
+            }) => {
                 format!("{file}: scene: {what}; {mend}")
             }
         }
@@ -67,7 +75,12 @@ pub fn open_text(text: &str) -> Result<Opened, Unreadable> {
     faults.extend(solved.faults.iter().cloned());
     let places = Arc::new(reading.places);
     place(&places, &mut faults);
-    Ok(Opened { scene: Arc::new(reading.scene), places, solved: Arc::new(solved), faults })
+    Ok(Opened {
+        scene: Arc::new(reading.scene),
+        places,
+        solved: Arc::new(solved),
+        faults,
+    })
 }
 
 /// All faults and findings of a scene, those of its plates included, in the order of the file.

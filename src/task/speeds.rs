@@ -34,7 +34,12 @@ pub struct Speeds {
 /// The forms of a rapidity; one beyond 600 in size counts as 600.
 pub fn speeds(rapidity: f64) -> Speeds {
     let r = Rapidity::new(rapidity.clamp(-600.0, 600.0)).unwrap_or_default();
-    Speeds { beta: r.beta(), gamma: r.gamma(), rapidity: r.value(), doppler: r.doppler() }
+    Speeds {
+        beta: r.beta(),
+        gamma: r.gamma(),
+        rapidity: r.value(),
+        doppler: r.doppler(),
+    }
 }
 
 /// The rapidity that a typed entry means (`0.6`, `3/5`, `0.5 c`). An entry of gamma keeps the sign of `now`.
@@ -47,9 +52,14 @@ pub fn rapidity_from(form: SpeedForm, entry: &str, now: f64) -> Result<f64, Stri
         SpeedForm::Beta => (Velocity::Beta(typed), None),
         SpeedForm::Rapidity => (Velocity::Rapidity(typed), None),
         SpeedForm::Doppler => (Velocity::Doppler(typed), None),
-        SpeedForm::Gamma => {
-            (Velocity::Gamma(typed), Some(if now < 0.0 { Toward::Minus } else { Toward::Plus }))
-        }
+        SpeedForm::Gamma => (
+            Velocity::Gamma(typed),
+            Some(if now < 0.0 {
+                Toward::Minus
+            } else {
+                Toward::Plus
+            }),
+        ),
     };
     typed_rapidity(&velocity, toward).map_err(|fault| format!("{}; {}", fault.what, fault.mend))
 }
