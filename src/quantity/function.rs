@@ -8,7 +8,7 @@ use num_traits::{Signed, ToPrimitive};
 use std::f64::consts::{E, PI};
 
 /// A function of one real argument.
-#[derive(Clone, Copy)]
+#[derive(Clone, Copy, Debug)]
 pub(super) struct Function {
     name: &'static str,
     real: fn(f64) -> f64,
@@ -131,12 +131,12 @@ pub(super) fn constant(name: &str) -> Option<f64> {
 
 impl Function {
     /// Whether its argument is an angle.
-    pub(super) fn takes_angle(&self) -> bool {
+    pub(super) fn takes_angle(self) -> bool {
         matches!(self.name, "sin" | "cos" | "tan")
     }
 
     /// Its value; in words why there is none.
-    pub(super) fn of(&self, argument: &Number, degrees: bool) -> Result<Number, &'static str> {
+    pub(super) fn of(self, argument: &Number, degrees: bool) -> Result<Number, &'static str> {
         if let Number::Rational(r) = argument {
             if degrees {
                 return self.of_degrees(r);
@@ -149,7 +149,7 @@ impl Function {
         self.finite((self.real)(if degrees { x * (PI / 180.0) } else { x }))
     }
 
-    fn finite(&self, y: f64) -> Result<Number, &'static str> {
+    fn finite(self, y: f64) -> Result<Number, &'static str> {
         if y.is_finite() {
             Ok(Number::Real(y))
         } else {
@@ -158,7 +158,7 @@ impl Function {
     }
 
     /// Where a rational argument has a rational value that is found without rounding.
-    fn exactly(&self, r: &BigRational) -> Option<BigRational> {
+    fn exactly(self, r: &BigRational) -> Option<BigRational> {
         let root = |of: fn(&BigInt) -> BigInt, power: u32| {
             let root = BigRational::new(of(r.numer()), of(r.denom()));
             (root.pow(power.cast_signed()) == *r).then_some(root)
@@ -172,7 +172,7 @@ impl Function {
     }
 
     /// Of an exact angle in degrees, turned back into one turn first.
-    fn of_degrees(&self, r: &BigRational) -> Result<Number, &'static str> {
+    fn of_degrees(self, r: &BigRational) -> Result<Number, &'static str> {
         let turn = BigRational::from(BigInt::from(360));
         let angle = r - (r / &turn).floor() * &turn;
         let whole = angle.is_integer().then(|| angle.to_i64()).flatten();
@@ -187,7 +187,7 @@ impl Function {
     }
 
     /// The rational values on a turn, as numerator and denominator; the denominator is 0 where there is no value.
-    fn quarter(&self, degrees: i64) -> Option<(i64, i64)> {
+    fn quarter(self, degrees: i64) -> Option<(i64, i64)> {
         let sine = |degrees: i64| match degrees.rem_euclid(360) {
             0 | 180 => Some((0, 1)),
             30 | 150 => Some((1, 2)),

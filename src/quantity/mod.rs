@@ -2,9 +2,11 @@
 //! place where a number becomes text.
 
 mod constants;
+mod cursor;
 mod expression;
 mod function;
 mod number;
+mod operation;
 mod reading;
 mod species;
 mod text;

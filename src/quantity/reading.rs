@@ -39,7 +39,10 @@ pub struct Quantity {
 
 /// Reads a typed number as a quantity in `unit`. A bare number (and a string without a unit) is taken in `unit`.
 /// The unit's dimension says what is wanted: a unit of another kind is a fault that names the kind and the units
-/// that would do. So is a value that no f64 can hold in `unit`: infinite, or rounded to 0.
+/// that would do. The value is exact as long as it fits in `unit`, else rounded once.
+///
+/// # Errors
+/// What does not read, with its column; a value that no f64 can hold in `unit` (infinite, or rounded to 0).
 pub fn read(typed: &Typed, unit: &Unit) -> Result<Quantity, ReadFault> {
     let parsed = match typed {
         Typed::Bare(text) => bare(text)?,
@@ -115,9 +118,12 @@ fn wrong_unit<T>(written: &UnitText, wanted: Dimension) -> Result<T, ReadFault> 
     let symbol = &written.symbol;
     let choices = wanted.choices();
     if let Some(other) = dimension_of(symbol) {
+        let kind = other
+            .words()
+            .trim_start_matches("an ")
+            .trim_start_matches("a ");
         let what = format!(
-            "`{symbol}` is the unit of {}; {} is wanted",
-            other.words(),
+            "`{symbol}` is a unit of {kind}; {} is wanted",
             wanted.words()
         );
         return fault(written.column, what, format!("{choices} would do"));
