@@ -123,7 +123,7 @@ impl Desk {
     fn before(&mut self, ui: &Ui) -> Wishes {
         let over = self.view.chooser.is_some() || self.view.help.is_some();
         let mut wishes = if over { Wishes::new() } else { action::pressed(ui.ctx(), &self.context()) };
-        let dropped = ui.input(|i| i.raw.dropped_files.first().and_then(|f| f.path().map(Path::to_owned)));
+        let dropped = ui.input(|i| i.raw.dropped_files.first().and_then(|f| Some(f.path().to_owned())));
         wishes.extend(dropped.map(Command::Open));
         let now = ui.input(|i| i.time);
         if let Some(when) = self.view.rail.gliding(now) {
@@ -301,7 +301,7 @@ fn edge(ui: &mut Ui, ledger: Rect, wishes: &mut Wishes) {
     let grip = Rect::from_min_max(ledger.left_top() - vec2(0.0, 3.0), pos2(ledger.right(), ledger.top() + 4.0));
     let mut child = ui.new_child(UiBuilder::new().max_rect(grip).id_salt("ledger edge"));
     let response = child
-        .interact(grip, child.id().with("edge"), Sense::drag())
+        .interact(grip, child.scope_id().with("edge"), Sense::drag())
         .on_hover_and_drag_cursor(egui::CursorIcon::ResizeVertical);
     if let (true, Some(at)) = (response.dragged(), response.interact_pointer_pos()) {
         wishes.push(Command::LedgerHeight(ledger.bottom() - at.y));

@@ -105,7 +105,7 @@ fn flattened(path: &str) -> Vec<Vec<kurbo::Point>> {
         return Vec::new();
     };
     let mut lines: Vec<Vec<kurbo::Point>> = Vec::new();
-    path.flatten(0.05, |element| match element {
+    kurbo::flatten(path, 0.05, |element| match element {
         PathEl::MoveTo(p) => lines.push(vec![p]),
         PathEl::LineTo(p) => {
             if let Some(line) = lines.last_mut() {

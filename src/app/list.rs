@@ -239,7 +239,7 @@ fn finding(ui: &mut Ui, index: usize, fault: &Fault, wishes: &mut Wishes) {
     let words = sentence(fault);
     let height = text_height(ui, &words, room) + 22.0;
     let (rect, _) = ui.allocate_exact_size(vec2(ui.available_width(), height), Sense::hover());
-    let response = ui.interact(rect, ui.id().with(("finding", index)), Sense::click());
+    let response = ui.interact(rect, ui.scope_id().with(("finding", index)), Sense::click());
     let name = format!("finding: {}: {words}", fault.object);
     response.widget_info(|| WidgetInfo::labeled(Role::Button, true, &name));
     if response.hovered() {

@@ -66,7 +66,7 @@ pub(super) fn icon_button(ui: &mut Ui, rect: Rect, icon: Icon, words: &str) -> R
 /// Senses a press at a place; a disabled one senses nothing.
 pub(super) fn press(ui: &mut Ui, rect: Rect, words: &str, enabled: bool) -> Response {
     let sense = if enabled { Sense::click() } else { Sense::hover() };
-    let response = ui.interact(rect, ui.id().with(("press", words)), sense);
+    let response = ui.interact(rect, ui.scope_id().with(("press", words)), sense);
     response.widget_info(|| WidgetInfo::labeled(Role::Button, enabled, words));
     response
 }
@@ -135,7 +135,7 @@ pub(super) fn chooser(
     chosen: &str,
     entries: &[String],
 ) -> Option<usize> {
-    let response = ui.interact(rect, ui.id().with(("chooser", name)), Sense::click());
+    let response = ui.interact(rect, ui.scope_id().with(("chooser", name)), Sense::click());
     response.widget_info(|| {
         let mut info = WidgetInfo::labeled(Role::ComboBox, true, name);
         info.current_text_value = Some(chosen.to_owned());

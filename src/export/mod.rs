@@ -2,12 +2,14 @@
 
 mod pdf;
 mod png;
+mod raster;
 mod svg;
 mod table;
 mod tikz;
 
 pub use self::pdf::pdf;
 pub use self::png::png;
+pub use self::raster::{Raster, raster_path};
 pub use self::svg::svg;
 pub use self::table::{json, text};
 pub use self::tikz::tikz;

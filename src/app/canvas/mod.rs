@@ -36,7 +36,7 @@ pub(super) fn canvas(ui: &mut Ui, rect: Rect, context: &Context<'_>, picture: &m
         return;
     };
     let lie = lie(rect, context, ui.pixels_per_point());
-    let paper = ui.interact(rect, ui.id().with("paper"), Sense::click_and_drag());
+    let paper = ui.interact(rect, ui.scope_id().with("paper"), Sense::click_and_drag());
     paper.widget_info(|| WidgetInfo::labeled(Role::Canvas, true, &laid.sheet.title));
     let clip = ui.painter().with_clip_rect(rect);
     clip.rect_filled(lie.paper, CornerRadius::ZERO, Color32::WHITE);

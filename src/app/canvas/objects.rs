@@ -125,7 +125,7 @@ fn node(
     context: &Context<'_>,
     wishes: &mut Wishes,
 ) {
-    let id = ui.id().with(("object", group));
+    let id = ui.scope_id().with(("object", group));
     let missing = (egui::vec2(SIDE, SIDE) - place.size()).max(egui::Vec2::ZERO);
     let response = ui.interact(place.expand2(missing / 2.0), id, Sense::focusable_noninteractive());
     let selected = context.view.selected.as_ref() == Some(object);
@@ -182,7 +182,7 @@ pub(super) fn outlines(_: &Ui, painter: &Painter, lie: &Lie, context: &Context<'
 
 fn flattened(path: &BezPath, lie: &Lie) -> Vec<Vec<Pos2>> {
     let mut lines: Vec<Vec<Pos2>> = Vec::new();
-    path.flatten(0.1 / f64::from(lie.scale), |element| match element {
+    kurbo::flatten(path, 0.1 / f64::from(lie.scale), |element| match element {
         PathEl::MoveTo(p) => lines.push(vec![lie.point(p)]),
         PathEl::LineTo(p) => {
             if let Some(line) = lines.last_mut() {

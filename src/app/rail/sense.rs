@@ -101,7 +101,7 @@ fn spots(layout: &Layout) -> Vec<Spot> {
 
 fn ticks(ui: &mut Ui, layout: &Layout, shown: &Shown, wishes: &mut Wishes) {
     for spot in spots(layout) {
-        let id = ui.id().with(("tick", spot.tick, spot.crowd));
+        let id = ui.scope_id().with(("tick", spot.tick, spot.crowd));
         let response = ui
             .interact(spot.rect, id, Sense::click())
             .on_hover_cursor(CursorIcon::PointingHand);
@@ -134,7 +134,7 @@ fn close_ticks(ui: &mut Ui, layout: &Layout, shown: &Shown, wishes: &mut Wishes)
         pos2(layout.rect.left() + close.scale.left, axis - 24.0),
         pos2(layout.rect.left() + close.scale.right, axis),
     );
-    let response = ui.interact(band, ui.id().with("close-up ticks"), Sense::click());
+    let response = ui.interact(band, ui.scope_id().with("close-up ticks"), Sense::click());
     if let (true, Some(at)) = (response.clicked(), response.interact_pointer_pos())
         && let Some(tick) = nearest(layout, &close.scale, at, 12.0)
     {
