@@ -64,7 +64,7 @@ fn list(folder: &Path) -> std::io::Result<Vec<Entry>> {
 
 /// Shows the chooser over the desk.
 pub(super) fn chooser(ui: &Ui, state: &mut Chooser, refused: Option<&str>, wishes: &mut Wishes) {
-    let modal = Modal::new(Id::new("chooser")).show(ui.ctx(), |ui| {
+    let modal = Modal::new(Id::unique("chooser")).show(ui.ctx(), |ui| {
         ui.set_width(560.0);
         ui.heading("Open a scene");
         ui.add_space(8.0);
@@ -87,7 +87,7 @@ pub(super) fn chooser(ui: &Ui, state: &mut Chooser, refused: Option<&str>, wishe
 fn field(ui: &mut Ui, state: &mut Chooser, wishes: &mut Wishes) {
     let label = ui.label("Path");
     let edit = TextEdit::singleline(&mut state.path)
-        .id(Id::new("chooser path"))
+        .id(Id::unique("chooser path"))
         .desired_width(f32::INFINITY)
         .margin(egui::Margin::symmetric(8, 4));
     let response = ui.add(edit).labelled_by(label.id).accessible_name("Path");

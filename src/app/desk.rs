@@ -28,6 +28,8 @@ pub struct Desk {
     view: View,
     shown: Shown,
     picture: Picture,
+    /// Points to a mm of the sheet, as last shown.
+    scale: f32,
 }
 
 /// Where the regions stand.
@@ -74,6 +76,7 @@ impl Desk {
             view: View::default(),
             shown: Shown::default(),
             picture: Picture::default(),
+            scale: MM_TRUE,
         };
         if let Some(path) = scene {
             desk.open(&path);
@@ -85,6 +88,11 @@ impl Desk {
     /// The sheet as it is shown: what a writer would be given for a file.
     pub fn sheet(&self) -> Option<&crate::marks::Sheet> {
         self.shown.laid.as_ref().map(|laid| &laid.sheet)
+    }
+
+    /// The scale of the sheet as it was last shown, percent of true size.
+    pub fn zoom_percent(&self) -> f32 {
+        self.scale / MM_TRUE * 100.0
     }
 
     /// One frame.
@@ -109,6 +117,7 @@ impl Desk {
             ui.ctx().request_repaint();
         }
         self.carry_out(ui, &mut wishes);
+        self.scale = self.lie(ui).scale;
     }
 
     fn context(&self) -> Context<'_> {
@@ -299,11 +308,13 @@ fn pointer(ui: &Ui, sheet: Rect, context: &Context<'_>) -> Option<(egui::Pos2, L
 /// The ledger's top edge, dragged.
 fn edge(ui: &mut Ui, ledger: Rect, wishes: &mut Wishes) {
     let grip = Rect::from_min_max(ledger.left_top() - vec2(0.0, 3.0), pos2(ledger.right(), ledger.top() + 4.0));
-    let mut child = ui.new_child(UiBuilder::new().max_rect(grip).id_salt("ledger edge"));
+    let child = ui.new_child(UiBuilder::new().max_rect(grip).id_salt("ledger edge"));
     let response = child
         .interact(grip, child.scope_id().with("edge"), Sense::drag())
         .on_hover_and_drag_cursor(egui::CursorIcon::ResizeVertical);
-    if let (true, Some(at)) = (response.dragged(), response.interact_pointer_pos()) {
+    if let (true, Some(at)) = (response.dragged(), response.interact_pointer_pos())
+        && response.drag_delta().y != 0.0
+    {
         wishes.push(Command::LedgerHeight(ledger.bottom() - at.y));
     }
     if response.hovered() || response.dragged() {

@@ -5,7 +5,12 @@ use crate::fault::{Kind, ObjectId};
 use crate::quantity::{grouped, significant};
 
 fn number(value: f64) -> String {
-    grouped(&significant(value, 6))
+    let text = significant(value, 6);
+    let text = match text.contains('.') && !text.contains('e') {
+        true => text.trim_end_matches('0').trim_end_matches('.'),
+        false => &text,
+    };
+    grouped(text)
 }
 
 /// An object's coordinates in the viewing frame: "t 35.0 ns, x 0 c ns".
@@ -42,7 +47,7 @@ pub(super) fn aside(object: &ObjectId, context: &Context<'_>) -> String {
         Kind::Event => scene.events.get(name).map(|o| event(&o.form)),
         Kind::Line => scene.lines.get(name).map(|o| line(name, &o.form, context)),
         Kind::Particle => scene.particles.get(name).map(|o| {
-            o.form.species.clone().unwrap_or_default()
+            o.form.species.as_deref().unwrap_or_default().replace('-', "\u{2212}")
         }),
         Kind::Collision => scene
             .collisions

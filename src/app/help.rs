@@ -34,7 +34,7 @@ const WORDS: &[(&str, &str)] = &[
 
 /// Shows a page.
 pub(super) fn page(ui: &Ui, page: Help, wishes: &mut Wishes) {
-    let modal = Modal::new(Id::new("help")).show(ui.ctx(), |ui| {
+    let modal = Modal::new(Id::unique("help")).show(ui.ctx(), |ui| {
         ui.set_width(560.0);
         match page {
             Help::Shortcuts => shortcuts(ui),

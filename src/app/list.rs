@@ -84,7 +84,7 @@ fn section(ui: &mut Ui, row: f32, kind: Kind, names: &[String], context: &Contex
     let folded = context.view.folded.contains(&kind);
     let (rect, response) = ui.allocate_exact_size(vec2(ui.available_width(), row + 4.0), Sense::click());
     let words = heading(kind);
-    response.widget_info(|| WidgetInfo::selected(Role::Button, true, !folded, words));
+    response.widget_info(|| WidgetInfo::selected(Role::Button, true, !folded, format!("{words} in the list")));
     let y = rect.center().y + 1.0;
     if response.hovered() {
         ui.painter().rect_filled(rect.shrink2(vec2(4.0, 2.0)), 4, c.hover);
@@ -117,6 +117,7 @@ fn item(ui: &mut Ui, height: f32, object: &ObjectId, context: &Context<'_>, wish
     let (rect, response) = ui.allocate_exact_size(vec2(ui.available_width(), height), Sense::click());
     let selected = context.view.selected.as_ref() == Some(object);
     response.widget_info(|| WidgetInfo::selected(Role::ListItem, true, selected, format!("{object} in the list")));
+    widgets::mark_selected(ui, response.id, selected);
     let row = Rect::from_min_max(rect.min + vec2(4.0, 0.0), rect.max - vec2(4.0, 0.0));
     if selected {
         widgets::selected_row(ui, row);

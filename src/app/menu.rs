@@ -15,15 +15,15 @@ pub(super) fn bar(ui: &mut Ui, rect: Rect, context: &Context<'_>, wishes: &mut W
     widgets::ground(ui, c.panel);
     let inner = Rect::from_min_max(rect.min + vec2(7.0, 2.0), rect.max - vec2(7.0, 2.0));
     let mut child = ui.new_child(UiBuilder::new().max_rect(inner).id_salt("menus"));
-    MenuBar::new().ui(&mut child, |ui| {
+    let end = MenuBar::new().ui(&mut child, |ui| {
         ui.spacing_mut().button_padding = vec2(9.0, 2.0);
         ui.spacing_mut().item_spacing.x = 2.0;
-        for menu in Menu::ALL {
-            ui.menu_button(menu.word(), |ui| entries(ui, menu, context, wishes));
-        }
+        let buttons = Menu::ALL.map(|menu| {
+            ui.menu_button(menu.word(), |ui| entries(ui, menu, context, wishes)).response.rect.right()
+        });
+        buttons.into_iter().fold(0.0, f32::max)
     });
-    let end = child.min_rect().right();
-    scene_name(ui, rect, end, context);
+    scene_name(ui, rect, end.inner, context);
     widgets::hairline(ui, rect.left_bottom() - vec2(0.0, 1.0), rect.right_bottom() - vec2(0.0, 1.0));
 }
 

@@ -21,8 +21,11 @@ pub(super) fn status(ui: &mut Ui, rect: Rect, pointer: Option<(Pos2, Lie)>, cont
     widgets::hairline(ui, rect.left_top(), rect.right_top());
     let y = rect.center().y + 0.5;
     let balance = balance(context);
-    let (icon, ink) = if balance.alarm { (Icon::Fault, c.fault) } else { (Icon::Sound, c.accent) };
-    let words_ink = if balance.alarm { c.fault } else { c.text };
+    let (words_ink, ink) = match (balance.alarm, balance.icon) {
+        (true, _) => (c.fault, c.fault),
+        (false, Some(Icon::Sound)) => (c.text, c.accent),
+        (false, _) => (c.text, c.quiet),
+    };
     let words = text::width(ui.painter(), &balance.words, Type::Body);
     let left = rect.right() - MARGIN - words;
     let hit = Rect::from_min_max(pos2(left - 26.0, rect.top() + 2.0), rect.right_bottom() - vec2(8.0, 2.0));
@@ -33,7 +36,7 @@ pub(super) fn status(ui: &mut Ui, rect: Rect, pointer: Option<(Pos2, Lie)>, cont
     let at = pos2(left, y);
     text::put(ui.painter(), at, Align::LEFT, &balance.words, Type::Body, words_ink);
     let mut end = left - 8.0;
-    if balance.marked {
+    if let Some(icon) = balance.icon {
         icon::paint(ui.painter(), icon, pos2(left - 14.0, y), 16.0, ink);
         end = left - 30.0;
     }
@@ -92,8 +95,8 @@ struct Balance {
     words: String,
     /// Said in the colour of faults.
     alarm: bool,
-    /// With a sign before it.
-    marked: bool,
+    /// A sign before it.
+    icon: Option<Icon>,
     /// What a click goes to.
     goes: Option<ObjectId>,
 }
@@ -106,10 +109,10 @@ fn balance(context: &Context<'_>) -> Balance {
             count => format!("{count} findings, first {}", first.object),
         };
         let alarm = faults.iter().any(|f| f.weight == crate::fault::Weight::Fault);
-        return Balance { words, alarm, marked: true, goes: Some(first.object.clone()) };
+        return Balance { words, alarm, icon: Some(Icon::Fault), goes: Some(first.object.clone()) };
     }
     let Some(ledger) = &context.shown.ledger else {
-        return Balance { words: String::new(), alarm: false, marked: false, goes: None };
+        return Balance { words: String::new(), alarm: false, icon: None, goes: None };
     };
     let off = ledger.collisions.iter().find(|c| !c.balanced);
     if let Some(collision) = off {
@@ -120,14 +123,15 @@ fn balance(context: &Context<'_>) -> Balance {
         let by = grouped(&significant(by.abs(), 3));
         let words = format!("{} does not balance: {name} off by {by} {}{per}", collision.name, ledger.units.energy);
         let goes = Some(ObjectId::new(crate::fault::Kind::Collision, &collision.name));
-        return Balance { words, alarm: true, marked: true, goes };
+        return Balance { words, alarm: true, icon: Some(Icon::Fault), goes };
     }
     let words = match ledger.collisions.len() {
         0 => "no collisions".to_owned(),
         1 => "1 collision, balanced".to_owned(),
         count => format!("{count} collisions, all balanced"),
     };
-    Balance { words, alarm: false, marked: !ledger.collisions.is_empty(), goes: None }
+    let icon = (!ledger.collisions.is_empty()).then_some(Icon::Sound);
+    Balance { words, alarm: false, icon, goes: None }
 }
 
 /// Where the pointer is, in the frame of the panel under it.

@@ -201,8 +201,7 @@ pub(super) fn field(
         .font(Type::Body.font())
         .text_color(c.text)
         .desired_width(inner.width())
-        .horizontal_align(Align::RIGHT)
-        .vertical_align(Align::Center);
+        .align(egui::Align2::RIGHT_CENTER);
     let response = ui.put(inner, edit).accessible_name(name);
     focus_ring(ui, &response, rect);
     if response.gained_focus() && typing.is_none() {
@@ -224,7 +223,7 @@ pub(super) fn field(
 
 /// The id of the entry field of that name.
 pub(super) fn field_id(name: &str) -> Id {
-    Id::new(("field", name))
+    Id::unique(("field", name))
 }
 
 fn select_all(ui: &Ui, id: Id, text: &str) {
@@ -246,6 +245,11 @@ pub(super) fn selected_row(ui: &Ui, rect: Rect) {
     ui.painter().rect_filled(bar, CornerRadius::same(1), c.accent);
 }
 
+/// Tells a screen reader whether a node is selected.
+pub(super) fn mark_selected(ui: &Ui, id: Id, selected: bool) {
+    ui.ctx().accesskit_node_builder(id, |node| node.set_selected(selected));
+}
+
 /// A line that divides, on whole points.
 pub(super) fn hairline(ui: &Ui, from: egui::Pos2, to: egui::Pos2) {
     let shift = if from.y == to.y { vec2(0.0, 0.5) } else { vec2(0.5, 0.0) };
@@ -259,7 +263,7 @@ pub(super) fn region(ui: &mut Ui, name: &str, rect: Rect) -> Ui {
     child.shrink_clip_rect(rect);
     let id = child.unique_id();
     child.ctx().accesskit_node_builder(id, |node| {
-        node.set_role(egui::accesskit::Role::Group);
+        node.set_role(Role::Group);
         node.set_label(name);
     });
     child

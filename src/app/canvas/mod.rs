@@ -42,13 +42,13 @@ pub(super) fn canvas(ui: &mut Ui, rect: Rect, context: &Context<'_>, picture: &m
     clip.rect_filled(lie.paper, CornerRadius::ZERO, Color32::WHITE);
     picture.paint(ui, &clip, rect, &lie, context);
     clip.rect_stroke(lie.paper, CornerRadius::ZERO, Stroke::new(1.0, c.rule), StrokeKind::Outside);
-    objects::outlines(ui, &clip, &lie, context);
+    objects::outlines(&clip, &lie, context);
     if let Some(panel) = context.shown.panels().get(context.view.panel) {
         brackets(&clip, lie.rect(panel.outer).intersect(lie.paper));
     }
     navigate(ui, &paper, rect, &lie, wishes);
     objects::nodes(ui, rect, &lie, context, wishes);
-    objects::point(ui, &paper, &lie, context, wishes);
+    objects::point(&paper, &lie, context, wishes);
     tabs(ui, &lie, context, wishes);
     bar(ui, rect, &lie, context, wishes);
 }
@@ -164,7 +164,9 @@ fn zoom(ui: &mut Ui, rect: Rect, y: f32, lie: &Lie, wishes: &mut Wishes) {
 /// Pan by dragging bare paper or with the middle button; zoom at the pointer.
 fn navigate(ui: &Ui, paper: &Response, rect: Rect, lie: &Lie, wishes: &mut Wishes) {
     if paper.dragged_by(PointerButton::Middle) || paper.dragged_by(PointerButton::Primary) {
-        wishes.push(Command::Pan(paper.drag_delta()));
+        if paper.drag_delta() != egui::Vec2::ZERO {
+            wishes.push(Command::Pan(paper.drag_delta()));
+        }
         ui.ctx().set_cursor_icon(CursorIcon::Grabbing);
     }
     let Some(pointer) = paper.hover_pos() else { return };

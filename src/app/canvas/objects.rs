@@ -17,7 +17,7 @@ const REACH: f64 = 10.0;
 const SIDE: f32 = 20.0;
 
 /// What the pointer does on paper.
-pub(super) fn point(ui: &Ui, paper: &Response, lie: &Lie, context: &Context<'_>, wishes: &mut Wishes) {
+pub(super) fn point(paper: &Response, lie: &Lie, context: &Context<'_>, wishes: &mut Wishes) {
     let Some(laid) = &context.shown.laid else { return };
     let under = |at: Pos2| hit(&laid.sheet, context, lie.mm(at), f64::from(lie.scale));
     if paper.clicked()
@@ -36,7 +36,6 @@ pub(super) fn point(ui: &Ui, paper: &Response, lie: &Lie, context: &Context<'_>,
     if on_paper && hovered != context.view.hovered {
         wishes.push(Command::Hover(hovered));
     }
-    let _ = ui;
 }
 
 /// The object whose ink is nearest to a place in mm, if it is near enough.
@@ -89,7 +88,7 @@ pub(super) fn nodes(ui: &mut Ui, rect: Rect, lie: &Lie, context: &Context<'_>, w
     let mut child = ui.new_child(builder);
     let id = child.unique_id();
     child.ctx().accesskit_node_builder(id, |node| {
-        node.set_role(egui::accesskit::Role::Group);
+        node.set_role(Role::Group);
         node.set_label("Objects on paper");
     });
     for (group, place) in places(&laid.sheet, lie).into_iter().enumerate() {
@@ -132,7 +131,8 @@ fn node(
     response.widget_info(|| WidgetInfo::selected(Role::Button, true, selected, object.to_string()));
     let value = facts::coordinates(object, context);
     ui.ctx().accesskit_node_builder(id, |node| {
-        node.set_role(egui::accesskit::Role::Button);
+        node.set_role(Role::Button);
+        node.set_selected(selected);
         node.add_action(egui::accesskit::Action::Click);
         if let Some(value) = value {
             node.set_value(value);
@@ -152,7 +152,7 @@ fn node(
 }
 
 /// An outline along what the pointer is over, wherever it is shown.
-pub(super) fn outlines(_: &Ui, painter: &Painter, lie: &Lie, context: &Context<'_>) {
+pub(super) fn outlines(painter: &Painter, lie: &Lie, context: &Context<'_>) {
     let (Some(laid), Some(hovered)) = (&context.shown.laid, &context.view.hovered) else {
         return;
     };

@@ -2,7 +2,7 @@
 //! until view or sheet change. What is selected gets its band in it, under the ink.
 
 use egui::{Color32, ColorImage, Painter, Rect, TextureHandle, TextureOptions, Ui, pos2, vec2};
-use tiny_skia::{BlendMode, FillRule, LineCap, LineJoin, Paint, Pixmap, Stroke, Transform};
+use tiny_skia::{FillRule, LineCap, LineJoin, Paint, Pixmap, Stroke, Transform};
 
 use super::Lie;
 use crate::app::context::Context;
@@ -108,8 +108,8 @@ impl Picture {
     }
 }
 
-/// Bands along the strokes of some groups. They are multiplied with what is there: paper takes their colour, ink
-/// stays ink, so that they lie under it. Labels get none.
+/// Bands along the strokes of some groups, under all ink: a dot takes as much of the band's colour as paper shines
+/// through it, which for the plate's dark inks is its darkest channel. Labels get none.
 fn bands(
     pixmap: &mut Pixmap,
     sheet: &Sheet,
@@ -146,9 +146,12 @@ fn bands(
         };
         layer.stroke_path(&path, &paint, &stroke, place, None);
     }
-    let multiply = tiny_skia::PixmapPaint {
-        blend_mode: BlendMode::Multiply,
-        ..tiny_skia::PixmapPaint::default()
-    };
-    pixmap.draw_pixmap(0, 0, layer.as_ref(), &multiply, Transform::identity(), None);
+    for (dot, over) in pixmap.data_mut().chunks_exact_mut(4).zip(layer.data().chunks_exact(4)) {
+        let [r, g, b, _] = *dot else { continue };
+        let paper = u32::from(r.min(g).min(b)) * u32::from(over[3]);
+        for (channel, band) in dot.iter_mut().zip(SELECTION) {
+            let taken = (paper * (255 - u32::from(band)) + 32_512) / 65_025;
+            *channel = channel.saturating_sub(taken.min(255) as u8);
+        }
+    }
 }

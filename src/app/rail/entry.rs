@@ -196,7 +196,7 @@ fn shown(form: SpeedForm, values: &Speeds) -> String {
         }
         _ if size != 0.0 && size < 1e-3 => shorter(value, 4),
         _ if size < 1e3 => fixed(value, Decimals(6)),
-        _ if size < 1e8 => significant(value, 9),
+        _ if size < 1e7 => significant(value, 9),
         _ => shorter(value, 5),
     };
     grouped(&text)
@@ -227,7 +227,7 @@ fn precise(form: SpeedForm, values: &Speeds) -> String {
 /// Why an entry does not hold, under its field.
 fn reason(ui: &Ui, rect: Rect, fault: &str) {
     let c = colours(ui);
-    Area::new(Id::new("entry fault"))
+    Area::new(Id::unique("entry fault"))
         .order(Order::Tooltip)
         .fixed_pos(rect.left_bottom() + vec2(0.0, 4.0))
         .show(ui.ctx(), |ui| {

@@ -17,7 +17,7 @@ const HOLD: f32 = 3.0;
 
 /// The handle's id.
 pub(super) fn handle_id() -> Id {
-    Id::new("rail handle")
+    Id::unique("rail handle")
 }
 
 /// Reads what is done to the rail.
@@ -259,7 +259,8 @@ fn keys(ui: &Ui, layout: &Layout, shown: &Shown, wishes: &mut Wishes) {
     if typed.starts_with(|c: char| c.is_ascii_digit() || c == '-' || c == '.') {
         wishes.push(Command::Rail(RailCommand::Entry(Some(Entry {
             form: SpeedForm::Rapidity,
-            text: typed,
+            // The field has the focus within this frame and takes what was typed itself.
+            text: String::new(),
             fault: None,
         }))));
         ui.memory_mut(|m| m.request_focus(field_id("rapidity")));

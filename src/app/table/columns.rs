@@ -4,7 +4,9 @@ use crate::ledger::{Align, Column, Table};
 use crate::quantity::grouped;
 
 /// The narrowest and the widest a column of numbers is made for its own sake.
-const NUMBER: (f32, f32) = (66.0, 86.0);
+const NUMBER: (f32, f32) = (66.0, 96.0);
+/// Names are not pushed further from their numbers than this.
+const NAMES: f32 = 250.0;
 /// Between columns.
 const GAP: f32 = 18.0;
 /// Between words and numbers at least.
@@ -68,6 +70,7 @@ impl Columns {
         let numbers: f32 = natural[words..].iter().map(|w| w.max(NUMBER.0) + GAP).sum();
         let names: f32 = natural[..words].iter().map(|w| w + GAP).sum::<f32>() - GAP + WORDS_GAP;
         let spare = (room - numbers - names).max(0.0);
+        let most = names.max(NAMES);
         let more = if count == 0 { 0.0 } else { (spare / count as f32).min(NUMBER.1 - NUMBER.0) };
         let widths: Vec<f32> = natural[words..]
             .iter()
@@ -75,7 +78,7 @@ impl Columns {
             .collect();
         let total: f32 = widths.iter().map(|w| w + GAP).sum();
         // The last column keeps room for the sign at its right.
-        let start = (room - total).max(names);
+        let start = (room - total).clamp(names, most);
         let mut places = Vec::new();
         let mut x = 0.0;
         for (i, width) in natural[..words].iter().enumerate() {
