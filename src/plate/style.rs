@@ -144,8 +144,8 @@ pub(super) struct Style {
     pub(super) upright_title: [f64; 2],
     /// Axis title: right end past the level axis' tip, baseline below the axis.
     pub(super) level_title: [f64; 2],
-    /// Symbol of a tilted axis to its head.
-    pub(super) symbol_gap: f64,
+    /// Symbol of a tilted axis: clear of the head's tip, and how far it passes the tip the other way.
+    pub(super) symbol_at: [f64; 2],
     /// Least distance of a label to ink.
     pub(super) clear_ink: f64,
     /// Least distance of a label to a label.
@@ -216,7 +216,7 @@ impl Style {
             slide: 0.6 * k,
             upright_title: [1.6 * k, 1.92 * k],
             level_title: [0.4 * k, 3.91 * k],
-            symbol_gap: 1.3 * k,
+            symbol_at: [2.2 * k, 0.55 * k],
             clear_ink: 0.45 * k,
             clear_label: 0.9 * k,
             clear_edge: 0.1 * k,
