@@ -29,6 +29,8 @@ pub(super) enum Command {
     Hover(Option<ObjectId>),
     Table(TableKind),
     Fold(Kind),
+    /// Names that begin so and differ by a number: list them, or not.
+    Unfold(ObjectId),
     LedgerHeight(f32),
     Fit,
     /// Zoom to a scale in points per mm, about a place given from the middle of the sheet's region.

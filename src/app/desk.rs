@@ -218,7 +218,8 @@ impl Desk {
             Command::Select(object) => self.view.selected = object,
             Command::Hover(object) => self.view.hovered = object,
             Command::Table(kind) => self.view.table = kind,
-            Command::Fold(kind) => fold(&mut self.view.folded, kind),
+            Command::Fold(kind) => toggle(&mut self.view.folded, kind),
+            Command::Unfold(stem) => toggle(&mut self.view.unfolded, stem),
             Command::LedgerHeight(height) => self.view.ledger_height = Some(height),
             Command::Theme(theme) => ui.ctx().set_theme(theme),
             Command::Help(page) => self.view.help = Some(page),
@@ -278,12 +279,13 @@ impl Desk {
     }
 }
 
-fn fold(folded: &mut Vec<crate::fault::Kind>, kind: crate::fault::Kind) {
-    match folded.iter().position(|k| *k == kind) {
+/// Puts in what is not there, takes out what is.
+fn toggle<T: PartialEq>(list: &mut Vec<T>, item: T) {
+    match list.iter().position(|known| *known == item) {
         Some(i) => {
-            folded.remove(i);
+            list.remove(i);
         }
-        None => folded.push(kind),
+        None => list.push(item),
     }
 }
 

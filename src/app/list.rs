@@ -60,9 +60,16 @@ fn kinds(context: &Context<'_>) -> Vec<(Kind, Vec<String>)> {
             names.push(object.name.to_string());
         }
     }
-    // What the scene is about comes first: things, then what is looked from and at; empty kinds last.
-    let rank = |kind: Kind| matches!(kind, Kind::Frame | Kind::Plate);
-    kinds.sort_by_key(|(kind, names)| (names.is_empty(), rank(*kind), usize::MAX - names.len()));
+    // What the scene is about comes first; empty kinds last.
+    let count = |kind: Kind| kinds.iter().find(|(k, _)| *k == kind).map_or(0, |(_, n)| n.len());
+    let momenta = count(Kind::Particle) + count(Kind::Collision);
+    let momenta_first = momenta > count(Kind::Event) + count(Kind::Line);
+    let rank = move |kind: Kind| match kind {
+        Kind::Particle | Kind::Collision => usize::from(!momenta_first),
+        Kind::Event | Kind::Line => usize::from(momenta_first),
+        Kind::Frame | Kind::Plate | Kind::Species | Kind::Scene => 2,
+    };
+    kinds.sort_by_key(|(kind, names)| (names.is_empty(), rank(*kind)));
     kinds
 }
 
@@ -107,9 +114,80 @@ fn section(ui: &mut Ui, row: f32, kind: Kind, names: &[String], context: &Contex
         let at = pos2(rect.left() + 26.0, rect.center().y);
         text::put(ui.painter(), at, Align::LEFT, "none", Type::Caption, c.quiet);
     }
-    for name in names {
-        item(ui, row, &ObjectId::new(kind, name), context, wishes);
+    for run in runs(names) {
+        match run {
+            Run::One(name) => item(ui, row, &ObjectId::new(kind, name), context, wishes),
+            Run::Numbered(stem, names) => {
+                let object = ObjectId::new(kind, stem);
+                let open = numbered(ui, row, &object, names, context, wishes);
+                for name in names.iter().filter(|_| open) {
+                    item(ui, row, &ObjectId::new(kind, name), context, wishes);
+                }
+            }
+        }
     }
+}
+
+/// One name, or many that differ by a running number, with what they begin with.
+enum Run<'a> {
+    One(&'a str),
+    Numbered(&'a str, &'a [String]),
+}
+
+/// From this many on, names that differ by a running number are folded.
+const NUMBERED: usize = 6;
+
+fn stem(name: &str) -> &str {
+    name.trim_end_matches(|c: char| c.is_ascii_digit())
+}
+
+fn runs(names: &[String]) -> Vec<Run<'_>> {
+    let mut runs = Vec::new();
+    for group in names.chunk_by(|a, b| stem(a) == stem(b) && stem(a).len() < a.len() && stem(b).len() < b.len()) {
+        match group {
+            [first, ..] if group.len() >= NUMBERED => runs.push(Run::Numbered(stem(first), group)),
+            _ => runs.extend(group.iter().map(|n| Run::One(n))),
+        }
+    }
+    runs
+}
+
+/// "buoy 01 to 40": gives whether its names are to be listed.
+fn numbered(
+    ui: &mut Ui,
+    height: f32,
+    stem: &ObjectId,
+    names: &[String],
+    context: &Context<'_>,
+    wishes: &mut Wishes,
+) -> bool {
+    let c = colours(ui);
+    let open = context.view.unfolded.contains(stem);
+    let (rect, response) = ui.allocate_exact_size(vec2(ui.available_width(), height), Sense::click());
+    let last = names.last().map_or("", |n| &n[stem.name.len()..]);
+    let words = format!("{} to {last}", names.first().map_or("", String::as_str));
+    response.widget_info(|| WidgetInfo::selected(Role::Button, true, open, &words));
+    let holds = |object: &Option<ObjectId>| {
+        object.as_ref().is_some_and(|o| o.kind == stem.kind && names.iter().any(|n| **n == *o.name))
+    };
+    let row = Rect::from_min_max(rect.min + vec2(4.0, 0.0), rect.max - vec2(4.0, 0.0));
+    if !open && holds(&context.view.selected) {
+        widgets::selected_row(ui, row);
+    } else if response.hovered() {
+        ui.painter().rect_filled(row, 4, c.hover);
+    }
+    let y = rect.center().y;
+    let turn = if open { Icon::Down } else { Icon::Closed };
+    icon::paint(ui.painter(), turn, pos2(rect.left() + 16.0, y), 12.0, c.quiet);
+    icon::paint(ui.painter(), Icon::of(stem.kind), pos2(rect.left() + 34.0, y), 16.0, c.text);
+    let room = rect.right() - 14.0 - rect.left() - 48.0;
+    let words = text::cut_end(ui.painter(), &words, Type::Body, room);
+    text::put(ui.painter(), pos2(rect.left() + 48.0, y), Align::LEFT, &words, Type::Body, c.text);
+    widgets::focus_ring(ui, &response, row);
+    if response.clicked() {
+        wishes.push(Command::Unfold(stem.clone()));
+    }
+    open
 }
 
 fn item(ui: &mut Ui, height: f32, object: &ObjectId, context: &Context<'_>, wishes: &mut Wishes) {

@@ -61,6 +61,7 @@ impl Shown {
             .or_else(|_| task::ledger(opened, &When::Base))
             .ok();
         self.tables = self.ledger.as_ref().map(tables).unwrap_or_default();
+        self.tables.iter_mut().for_each(tidy);
         self.things = opened.solved.rapidities();
         self.faults = opened.faults.clone();
         if let Some(laid) = &self.laid {
@@ -94,6 +95,26 @@ impl Shown {
     /// The faults of an object.
     pub(super) fn faults_of<'a>(&'a self, object: &'a ObjectId) -> impl Iterator<Item = &'a Fault> {
         self.faults.iter().filter(move |f| f.object == *object)
+    }
+}
+
+/// Leaves out what only repeats: momentum across where there is none, a collision's name beside its second sum.
+fn tidy(table: &mut Table) {
+    let across = table.columns.iter().position(|c| c.head == "py");
+    let blank = |i: usize| table.rows.iter().all(|r| r.cells[i].value.is_none_or(|v| v == 0.0));
+    if let Some(i) = across.filter(|&i| blank(i)) {
+        table.columns.remove(i);
+        for row in &mut table.rows {
+            row.cells.remove(i);
+        }
+    }
+    for i in (1..table.rows.len()).rev() {
+        let repeats = table.rows[i].is_sum
+            && table.rows[i - 1].is_sum
+            && table.rows[i].cells[0] == table.rows[i - 1].cells[0];
+        if repeats {
+            table.rows[i].cells[0].text.clear();
+        }
     }
 }
 

@@ -2,7 +2,7 @@
 
 mod columns;
 
-use egui::{Align, Pos2, Rect, Role, ScrollArea, Sense, Stroke, Ui, UiBuilder, WidgetInfo, pos2, vec2};
+use egui::{Align, Pos2, Rect, Response, Role, ScrollArea, Sense, Stroke, Ui, UiBuilder, WidgetInfo, pos2, vec2};
 
 use super::command::{Command, Wishes};
 use super::context::Context;
@@ -107,17 +107,15 @@ fn numbers(ui: &mut Ui, rect: Rect, height: f32, table: &Table, context: &Contex
     ScrollArea::both().auto_shrink(false).show(&mut child, |ui| {
         ui.spacing_mut().item_spacing.y = 0.0;
         for (i, row) in table.rows.iter().enumerate() {
-            let place = line(ui, height, row, &columns, context, wishes);
+            let response = line(ui, height, row, &columns, context, wishes);
+            let place = response.rect;
+            if row.is_sum {
+                explain(&response, row, table);
+            }
             signs(ui, table, i, place, &columns, context);
         }
         for object in &lost {
             faulty(ui, height, object, context, wishes);
-        }
-        for note in &table.notes {
-            let c = colours(ui);
-            let (rect, _) = ui.allocate_exact_size(vec2(ui.available_width(), height), Sense::hover());
-            let at = pos2(rect.left() + 8.0, rect.center().y);
-            text::put(ui.painter(), at, Align::LEFT, note, Type::Caption, c.quiet);
         }
     });
 }
@@ -169,7 +167,7 @@ fn line(
     columns: &Columns,
     context: &Context<'_>,
     wishes: &mut Wishes,
-) -> Rect {
+) -> Response {
     let c = colours(ui);
     let width = ui.available_width().max(columns.end() + 16.0);
     let (rect, response) = ui.allocate_exact_size(vec2(width, height), Sense::click());
@@ -211,7 +209,22 @@ fn line(
     if response.hovered() && row.object.is_some() && row.object != context.view.hovered {
         wishes.push(Command::Hover(row.object.clone()));
     }
-    rect
+    response
+}
+
+/// What the sums of a collision say, when the pointer rests on one.
+fn explain(response: &Response, row: &Row, table: &Table) {
+    let Some(object) = &row.object else { return };
+    let head = format!("{}: ", object.name);
+    let notes: Vec<String> = table
+        .notes
+        .iter()
+        .filter_map(|note| note.strip_prefix(&head))
+        .map(super::list::capital)
+        .collect();
+    if !notes.is_empty() {
+        response.clone().on_hover_text(notes.join("\n"));
+    }
 }
 
 /// Between the two sums: what is the same before and after.

@@ -25,6 +25,8 @@ pub(super) struct View {
     pub(super) ledger_height: Option<f32>,
     /// Kinds folded in the list.
     pub(super) folded: Vec<crate::fault::Kind>,
+    /// Runs of numbered names that are listed one by one, by kind and what the names begin with.
+    pub(super) unfolded: Vec<ObjectId>,
     pub(super) rail: RailView,
     pub(super) chooser: Option<Chooser>,
     pub(super) help: Option<Help>,

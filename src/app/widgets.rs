@@ -193,7 +193,8 @@ pub(super) fn field(
     frame(ui, rect, c.field, edge, width);
     let mut text = typing.unwrap_or(value).to_owned();
     let before = text.clone();
-    let inner = rect.shrink2(vec2(8.0, 2.0));
+    // Capitals in the middle stand higher than the middle of the line.
+    let inner = rect.shrink2(vec2(8.0, 2.0)).translate(vec2(0.0, -1.0));
     let edit = TextEdit::singleline(&mut text)
         .id(id)
         .frame(egui::Frame::NONE)

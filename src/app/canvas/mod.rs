@@ -42,7 +42,6 @@ pub(super) fn canvas(ui: &mut Ui, rect: Rect, context: &Context<'_>, picture: &m
     clip.rect_filled(lie.paper, CornerRadius::ZERO, Color32::WHITE);
     picture.paint(ui, &clip, rect, &lie, context);
     clip.rect_stroke(lie.paper, CornerRadius::ZERO, Stroke::new(1.0, c.rule), StrokeKind::Outside);
-    objects::outlines(&clip, &lie, context);
     if let Some(panel) = context.shown.panels().get(context.view.panel) {
         brackets(&clip, lie.rect(panel.outer).intersect(lie.paper));
     }

@@ -1,7 +1,7 @@
 //! The objects on paper: found by the pointer, by keys and by a screen reader.
 
-use egui::{Painter, Pos2, Rect, Response, Role, Sense, Shape as Line, Stroke, Ui, WidgetInfo};
-use kurbo::{BezPath, ParamCurveNearest as _, PathEl, Point, Shape as _};
+use egui::{Pos2, Rect, Response, Role, Sense, Stroke, Ui, WidgetInfo};
+use kurbo::{ParamCurveNearest as _, Point, Shape as _};
 
 use super::Lie;
 use crate::app::command::{Command, Wishes};
@@ -9,7 +9,7 @@ use crate::app::context::Context;
 use crate::app::theme::{FOCUS, ON_PAPER};
 use crate::app::facts;
 use crate::fault::ObjectId;
-use crate::marks::{Mark, Paint, Shape, Sheet};
+use crate::marks::{Paint, Shape, Sheet};
 
 /// How near the pointer must come, points.
 const REACH: f64 = 10.0;
@@ -149,70 +149,4 @@ fn node(
         let stroke = Stroke::new(FOCUS, ON_PAPER);
         ui.painter().rect_stroke(ring, 4, stroke, egui::StrokeKind::Outside);
     }
-}
-
-/// An outline along what the pointer is over, wherever it is shown.
-pub(super) fn outlines(painter: &Painter, lie: &Lie, context: &Context<'_>) {
-    let (Some(laid), Some(hovered)) = (&context.shown.laid, &context.view.hovered) else {
-        return;
-    };
-    let stroke = Stroke::new(1.5, ON_PAPER);
-    let shows = |mark: &&Mark| {
-        context.shown.objects.get(mark.group).and_then(Option::as_ref) == Some(hovered)
-    };
-    for mark in laid.sheet.marks.iter().filter(shows) {
-        match &mark.shape {
-            Shape::Label { .. } => {}
-            Shape::Path { path, paint: Paint::Fill(_) } => {
-                for line in flattened(path, lie) {
-                    painter.add(Line::line(line, stroke));
-                }
-            }
-            Shape::Path { path, paint: Paint::Stroke(ink) } => {
-                let half = ink.width as f32 * lie.scale / 2.0 + 2.0;
-                for line in flattened(path, lie) {
-                    for side in [-half, half] {
-                        painter.add(Line::line(beside(&line, side), stroke));
-                    }
-                }
-            }
-        }
-    }
-}
-
-fn flattened(path: &BezPath, lie: &Lie) -> Vec<Vec<Pos2>> {
-    let mut lines: Vec<Vec<Pos2>> = Vec::new();
-    kurbo::flatten(path, 0.1 / f64::from(lie.scale), |element| match element {
-        PathEl::MoveTo(p) => lines.push(vec![lie.point(p)]),
-        PathEl::LineTo(p) => {
-            if let Some(line) = lines.last_mut() {
-                line.push(lie.point(p));
-            }
-        }
-        PathEl::ClosePath => {
-            if let Some(line) = lines.last_mut() {
-                line.extend(line.first().copied());
-            }
-        }
-        PathEl::QuadTo(..) | PathEl::CurveTo(..) => {}
-    });
-    lines
-}
-
-/// A line some points to the side of another.
-fn beside(line: &[Pos2], by: f32) -> Vec<Pos2> {
-    let normal = |a: Pos2, b: Pos2| (b - a).normalized().rot90();
-    (0..line.len())
-        .map(|i| {
-            let before = i.checked_sub(1).map(|j| normal(line[j], line[i]));
-            let after = line.get(i + 1).map(|next| normal(line[i], *next));
-            let off = match (before, after) {
-                (Some(a), Some(b)) => (a + b).normalized(),
-                (Some(a), None) => a,
-                (None, Some(b)) => b,
-                (None, None) => egui::Vec2::ZERO,
-            };
-            line[i] + off * by
-        })
-        .collect()
 }

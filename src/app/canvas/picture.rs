@@ -1,15 +1,15 @@
 //! The picture of the marks: the sheet painted by the same code that writes it as PNG, at the screen's scale, kept
-//! until view or sheet change. What is selected gets its band in it, under the ink.
+//! until view or sheet change. What is selected gets its band in it, under the ink; what the pointer is over, a line.
 
 use egui::{Color32, ColorImage, Painter, Rect, TextureHandle, TextureOptions, Ui, pos2, vec2};
-use tiny_skia::{FillRule, LineCap, LineJoin, Paint, Pixmap, Stroke, Transform};
+use tiny_skia::{BlendMode, FillRule, LineCap, LineJoin, Paint, Pixmap, Stroke, Transform};
 
 use super::Lie;
 use crate::app::context::Context;
-use crate::app::theme::{BAND, PAPER, SELECTION};
+use crate::app::theme::{BAND, ON_PAPER, PAPER, SELECTION};
 use crate::export::{Raster, raster_path};
 use crate::fault::ObjectId;
-use crate::marks::{Paint as Ink, Shape, Sheet};
+use crate::marks::{Mark, Paint as Ink, Shape, Sheet};
 
 /// What a kept picture shows.
 #[derive(Clone, Debug, PartialEq)]
@@ -20,6 +20,7 @@ struct Key {
     /// First pixel of the paper that is shown, and how many.
     part: [u32; 4],
     selected: Option<ObjectId>,
+    hovered: Option<ObjectId>,
 }
 
 /// The kept picture.
@@ -55,6 +56,7 @@ impl Picture {
             pixels_per_point: ppp,
             part: [left, top, width, height],
             selected: context.view.selected.clone(),
+            hovered: context.view.hovered.clone(),
         };
         if self.key.as_ref() != Some(&key) {
             let scale = f64::from(lie.scale * ppp);
@@ -85,12 +87,22 @@ impl Picture {
         let [r, g, b] = PAPER;
         pixmap.fill(tiny_skia::Color::from_rgba8(r, g, b, 255));
         raster.paint(&mut pixmap, left, top);
-        if let Some(selected) = &key.selected {
-            let band = f64::from(BAND * key.pixels_per_point);
-            let place = Transform::from_translate(-(left as f32), -(top as f32));
-            bands(&mut pixmap, sheet, scale, band, place, |group| {
-                context.shown.objects.get(group).and_then(Option::as_ref) == Some(selected)
-            });
+        let chosen = |object: &Option<ObjectId>| {
+            let shows = |mark: &&Mark| {
+                object.is_some() && context.shown.objects.get(mark.group) == Some(object)
+            };
+            Chosen {
+                marks: sheet.marks.iter().filter(shows).collect(),
+                scale,
+                place: Transform::from_translate(-(left as f32), -(top as f32)),
+            }
+        };
+        let ppp = f64::from(key.pixels_per_point);
+        if key.selected.is_some() {
+            chosen(&key.selected).band(&mut pixmap, ppp);
+        }
+        if key.hovered.is_some() {
+            chosen(&key.hovered).outline(&mut pixmap, ppp);
         }
         Some(pixmap)
     }
@@ -108,50 +120,70 @@ impl Picture {
     }
 }
 
-/// Bands along the strokes of some groups, under all ink: a dot takes as much of the band's colour as paper shines
-/// through it, which for the plate's dark inks is its darkest channel. Labels get none.
-fn bands(
-    pixmap: &mut Pixmap,
-    sheet: &Sheet,
+/// Marks of chosen groups, to be painted wider than they are. Labels are left out.
+struct Chosen<'a> {
+    marks: Vec<&'a Mark>,
     scale: f64,
-    band: f64,
     place: Transform,
-    chosen: impl Fn(usize) -> bool,
-) {
-    let Some(mut layer) = Pixmap::new(pixmap.width(), pixmap.height()) else {
-        return;
-    };
-    let mut paint = Paint::default();
-    let [r, g, b] = SELECTION;
-    paint.set_color_rgba8(r, g, b, 255);
-    for mark in sheet.marks.iter().filter(|m| chosen(m.group)) {
-        let Shape::Path { path, paint: ink } = &mark.shape else {
-            continue;
-        };
-        let Some(path) = raster_path(path, scale) else {
-            continue;
-        };
-        let width = match ink {
-            Ink::Stroke(stroke) => (stroke.width * scale + 4.0).max(band),
-            Ink::Fill(_) => {
-                layer.fill_path(&path, &paint, FillRule::Winding, place, None);
-                band * 0.6
-            }
-        };
-        let stroke = Stroke {
-            width: width as f32,
-            line_cap: LineCap::Round,
-            line_join: LineJoin::Round,
-            ..Stroke::default()
-        };
-        layer.stroke_path(&path, &paint, &stroke, place, None);
-    }
-    for (dot, over) in pixmap.data_mut().chunks_exact_mut(4).zip(layer.data().chunks_exact(4)) {
-        let [r, g, b, _] = *dot else { continue };
-        let paper = u32::from(r.min(g).min(b)) * u32::from(over[3]);
-        for (channel, band) in dot.iter_mut().zip(SELECTION) {
-            let taken = (paper * (255 - u32::from(band)) + 32_512) / 65_025;
-            *channel = channel.saturating_sub(taken.min(255) as u8);
+}
+
+impl Chosen<'_> {
+    /// Paints every chosen mark `more` dots wider on both sides, and at least `least` dots wide.
+    fn paint(&self, layer: &mut Pixmap, paint: &Paint<'_>, more: f64, least: f64) {
+        for mark in &self.marks {
+            let Shape::Path { path, paint: ink } = &mark.shape else {
+                continue;
+            };
+            let Some(path) = raster_path(path, self.scale) else {
+                continue;
+            };
+            let width = match ink {
+                Ink::Stroke(stroke) => (stroke.width * self.scale + 2.0 * more).max(least),
+                Ink::Fill(_) => {
+                    layer.fill_path(&path, paint, FillRule::Winding, self.place, None);
+                    2.0 * more
+                }
+            };
+            let stroke = Stroke {
+                width: width as f32,
+                line_cap: LineCap::Round,
+                line_join: LineJoin::Round,
+                ..Stroke::default()
+            };
+            layer.stroke_path(&path, paint, &stroke, self.place, None);
         }
+    }
+
+    /// A band under all ink: a dot takes as much of the band's colour as paper shines through it, which for the
+    /// plate's dark inks is its lightest possible share, the least of its channels.
+    fn band(&self, pixmap: &mut Pixmap, pixels_per_point: f64) {
+        let Some(mut layer) = Pixmap::new(pixmap.width(), pixmap.height()) else {
+            return;
+        };
+        let wide = f64::from(BAND) * pixels_per_point;
+        self.paint(&mut layer, &Paint::default(), 2.5 * pixels_per_point, wide);
+        for (dot, over) in pixmap.data_mut().chunks_exact_mut(4).zip(layer.data().chunks_exact(4)) {
+            let [r, g, b, _] = *dot else { continue };
+            let paper = u32::from(r.min(g).min(b)) * u32::from(over[3]);
+            for (channel, band) in dot.iter_mut().zip(SELECTION) {
+                let taken = (paper * (255 - u32::from(band)) + 32_512) / 65_025;
+                *channel = channel.saturating_sub(taken.min(255) as u8);
+            }
+        }
+    }
+
+    /// A line along the ink's edge, a little off it.
+    fn outline(&self, pixmap: &mut Pixmap, pixels_per_point: f64) {
+        let Some(mut layer) = Pixmap::new(pixmap.width(), pixmap.height()) else {
+            return;
+        };
+        let mut paint = Paint::default();
+        let [r, g, b, _] = ON_PAPER.to_array();
+        paint.set_color_rgba8(r, g, b, 255);
+        self.paint(&mut layer, &paint, 3.5 * pixels_per_point, 0.0);
+        paint.blend_mode = BlendMode::DestinationOut;
+        self.paint(&mut layer, &paint, 2.0 * pixels_per_point, 0.0);
+        let plain = tiny_skia::PixmapPaint::default();
+        pixmap.draw_pixmap(0, 0, layer.as_ref(), &plain, Transform::identity(), None);
     }
 }

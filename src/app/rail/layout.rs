@@ -383,24 +383,37 @@ pub(super) fn names(ticks: &[Tick], things: &[RapidityTick], scale: &Scale, widt
     }
 }
 
-/// The first run of touching names of which one no longer stands over its tick.
+/// The crowd to be bracketed next: in the first run of touching names of which one no longer stands over its tick,
+/// the names that would collide where they belong.
 fn crowded(names: &[Name]) -> Option<Range<usize>> {
-    let touches = |i: usize| {
-        let apart = (names[i].width + names[i + 1].width) / 2.0 + NAME_GAP;
-        names[i + 1].at - names[i].at < apart + 0.01
+    let apart = |i: usize| f32::midpoint(names[i].width, names[i + 1].width) + NAME_GAP;
+    let touches = |i: usize| names[i + 1].at - names[i].at < apart(i) + 0.01;
+    let collides = |i: usize| names[i + 1].want() - names[i].want() < apart(i) - 0.01;
+    let run = runs(0..names.len(), touches)
+        .into_iter()
+        .find(|run| run.len() > 1 && !names[run.clone()].iter().all(Name::covers))?;
+    let crowds = runs(run.clone(), collides);
+    let failing = |crowd: &&Range<usize>| {
+        crowd.len() > 1 && !names[(*crowd).clone()].iter().all(Name::covers)
     };
-    let mut start = 0;
-    while start < names.len() {
-        let mut end = start + 1;
-        while end < names.len() && touches(end - 1) {
-            end += 1;
+    crowds
+        .iter()
+        .find(failing)
+        .or_else(|| crowds.iter().filter(|c| c.len() > 1).max_by_key(|c| c.len()))
+        .cloned()
+        .or(Some(run))
+}
+
+/// Cuts a range wherever a name and the next are not joined.
+fn runs(range: Range<usize>, joined: impl Fn(usize) -> bool) -> Vec<Range<usize>> {
+    let mut runs: Vec<Range<usize>> = Vec::new();
+    for i in range {
+        match runs.last_mut() {
+            Some(run) if joined(i - 1) => run.end = i + 1,
+            _ => runs.push(i..i + 1),
         }
-        if end - start > 1 && !names[start..end].iter().all(Name::covers) {
-            return Some(start..end);
-        }
-        start = end;
     }
-    None
+    runs
 }
 
 fn bracket(run: &[Name], ticks: &[Tick], things: &[RapidityTick], measure: Measure<'_>) -> Name {

@@ -386,7 +386,13 @@ fn dimension(ui: &Ui, brush: &Brush<'_>) {
     } else {
         let low = layout.rect.left() + 8.0 + width / 2.0;
         let high = layout.rect.right() - 8.0 - width / 2.0;
-        let at = pos2(f32::midpoint(from, to).clamp(low, high), axis + NUMBERS + 8.0);
+        let mut x = f32::midpoint(from, to).clamp(low, high);
+        let handle = layout.handle();
+        let reach = width / 2.0 + 12.0;
+        if (x - handle.center().x).abs() < reach + handle.width() / 2.0 {
+            x = if x < handle.center().x { handle.left() - reach } else { handle.right() + reach };
+        }
+        let at = pos2(x, axis + NUMBERS);
         let back = Rect::from_center_size(at, vec2(width + 12.0, 17.0));
         brush.painter.rect_filled(back, CornerRadius::same(4), brush.c.panel);
         text::put(brush.painter, at, Align::Center, &words, Type::Caption, brush.c.accent);

@@ -46,6 +46,7 @@ fn extreme_rapidity() {
 #[test]
 fn with_a_fault_and_a_crowd() {
     let mut window = open(Some(&scene("tests/data/desk/crowd.ron")), SMALL);
+    click(&mut window, "40 lines within 0.1");
     click(&mut window, "go to buoy 17");
     click(&mut window, "Events");
     click(&mut window, "event recall in the list");

@@ -30,8 +30,11 @@ fn a_row_of_the_ledger_selects_its_object() {
 
 #[test]
 fn the_status_line_says_that_collisions_balance() {
-    let window = relay_window();
+    let window = open(Some(&scene("tests/data/desk/sound.ron")), Setup::default());
     assert!(window.query_by_label("1 collision, balanced").is_some());
+    // Two masses of 3 at speeds of 4/5 (gamma 5/3) make a lump of 10: 2 (5/3) 3.
+    let sum = window.query_by(|n| n.role() == Role::Row && n.label().is_some_and(|l| l.starts_with("clap sum before 10.0")));
+    assert!(sum.is_some());
 }
 
 #[test]

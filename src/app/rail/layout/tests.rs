@@ -133,7 +133,7 @@ fn forty_names_within_a_tenth_become_one_bracket() {
     let ticks = gather(&all);
     let names = names(&ticks, &all, &axis(&ticks), WIDTH, &measure);
     let texts: Vec<&str> = names.iter().map(|n| n.text.as_str()).collect();
-    assert_eq!(texts, ["station", "40 lines within 0.2", "tender"]);
+    assert_eq!(texts, ["station", "40 lines within 0.1", "tender"]);
 }
 
 #[test]
