@@ -515,7 +515,7 @@ pub(super) fn close_up(bracket: &Name, ticks: &[Tick], width: f32, measure: Meas
     };
     let texts: Vec<String> = shown.iter().map(Tick::text).collect();
     let widths: Vec<f32> = texts.iter().map(|t| measure(t)).collect();
-    let every = every_nth(&widths, width - 2.0 * EDGE);
+    let every = every_nth(&widths, width - 2.0 * EDGE - 16.0);
     let chosen: Vec<usize> = (0..shown.len()).step_by(every).collect();
     CloseUp {
         names: threes(&chosen, shown, &texts, &widths, &scale)
@@ -578,7 +578,8 @@ fn threes(
             sum / block.len() as f32 + boxes[k] / 2.0
         })
         .collect();
-    let placed = spread(&want, &boxes, BLOCK_GAP, (scale.left, scale.right));
+    let bounds = (scale.left + 8.0, scale.right - 8.0);
+    let placed = spread(&want, &boxes, BLOCK_GAP, bounds);
     let mut names = Vec::new();
     for (k, block) in blocks.iter().enumerate() {
         let left = placed[k] - boxes[k] / 2.0;
