@@ -5,6 +5,7 @@ use tiny_skia::{
     FillRule, LineCap, LineJoin, Paint as Brush, Path, PathBuilder, Pixmap, Stroke as Line, StrokeDash, Transform,
 };
 
+use super::goes_anywhere;
 use crate::marks::{Cap, Ink, Join, Mark, Paint, Shape, Sheet};
 
 /// A sheet made ready to be painted at one scale.
@@ -82,7 +83,7 @@ fn narrow(value: f64) -> f32 {
 
 /// A path in mm as one in dots; none for a path that goes nowhere.
 pub fn raster_path(outline: &BezPath, scale: f64) -> Option<Path> {
-    if outline.elements().len() < 2 {
+    if !goes_anywhere(outline) {
         return None;
     }
     let mut path = PathBuilder::new();
