@@ -52,7 +52,7 @@ impl Places {
         let count = |side: f64| ((side / CELL).ceil() as usize).clamp(1, MOST_CELLS);
         let (columns, rows) = (count(panel.width()), count(panel.height()));
         Self {
-            bounds: panel.inset(-style.clear_edge),
+            bounds: panel,
             columns,
             rows,
             ink: vec![Vec::new(); columns * rows],
