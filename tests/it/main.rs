@@ -6,6 +6,7 @@ mod core;
 #[cfg(feature = "window")]
 mod desk;
 mod export;
+mod facts;
 mod hostile;
 mod house;
 mod label;
