@@ -2,7 +2,7 @@
 
 use std::sync::Arc;
 
-use kurbo::{BezPath, Point, Rect, Vec2};
+use kurbo::{Affine, BezPath, Point, Rect, Shape as _, Vec2};
 
 use crate::label::Label;
 
@@ -111,16 +111,49 @@ pub struct Sheet {
 }
 
 impl Shape {
-    /// The box of its ink, mm (a stroke's half width included).
+    /// The box of its ink, mm (a stroke's half width included; a mitred corner may reach beyond it).
     pub fn ink_box(&self) -> Rect {
-        todo!()
+        match self {
+            Self::Path { path, .. } if path.elements().is_empty() => Rect::ZERO,
+            Self::Path {
+                path,
+                paint: Paint::Fill(_),
+            } => path.bounding_box(),
+            Self::Path {
+                path,
+                paint: Paint::Stroke(stroke),
+            } => {
+                let half = stroke.width / 2.0;
+                path.bounding_box().inflate(half, half)
+            }
+            Self::Label { label, at, em, .. } => page(*at, *em).transform_rect_bbox(label.ink),
+        }
     }
     /// A label's outlines in mm, y down; a path as it is.
     pub fn outline(&self) -> BezPath {
-        todo!()
+        match self {
+            Self::Path { path, .. } => path.clone(),
+            Self::Label { label, at, em, .. } => page(*at, *em) * label.outline(),
+        }
     }
     /// The same, moved.
     pub fn moved(self, by: Vec2) -> Self {
-        todo!()
+        match self {
+            Self::Path { path, paint } => Self::Path {
+                path: Affine::translate(by) * path,
+                paint,
+            },
+            Self::Label { label, at, em, ink } => Self::Label {
+                label,
+                at: at + by,
+                em,
+                ink,
+            },
+        }
     }
+}
+
+/// From a label's em (y up, from its baseline) to mm (y down).
+fn page(at: Point, em: f64) -> Affine {
+    Affine::new([em, 0.0, 0.0, -em, at.x, at.y])
 }

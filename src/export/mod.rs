@@ -33,3 +33,28 @@ pub struct ExportFault {
     /// What would mend it.
     pub mend: String,
 }
+
+/// Temporary.
+#[derive(Clone, Copy, Debug)]
+pub enum Format {
+    /// x
+    Svg,
+}
+impl Format {
+    /// x
+    pub fn of_path(_: &std::path::Path) -> Option<Self> {
+        None
+    }
+}
+/// x
+#[derive(Clone, Copy, Debug)]
+pub struct Options {
+    /// x
+    pub dpi: f64,
+    /// x
+    pub lettering: Lettering,
+}
+/// x
+pub fn write(_: &crate::marks::Sheet, _: Format, _: &Options) -> Result<Vec<u8>, ExportFault> {
+    todo!()
+}

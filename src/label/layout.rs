@@ -1,8 +1,11 @@
 //! Placing glyphs by the layout crate.
 
-use kurbo::{BezPath, Rect};
+use kurbo::{Affine, BezPath, Rect, Shape};
+use ratex_font::{FontId, katex_ttf_glyph_char};
+use ratex_layout::{LayoutOptions, layout, to_display_list, validate_layout};
+use ratex_types::{DisplayItem, DisplayList, MathStyle, PathCommand};
 
-use super::Face;
+use super::{Face, reader, words};
 
 /// One placed thing of a label, in em, y up.
 #[derive(Clone, Debug, PartialEq)]
@@ -33,7 +36,7 @@ pub struct Glyph {
 /// A label set in type.
 #[derive(Clone, Debug, PartialEq)]
 pub struct Label {
-    /// The LaTeX math as written.
+    /// The LaTeX math as written; characters beyond ASCII are commands where LaTeX needs them to be.
     pub source: String,
     /// What is drawn, left to right.
     pub pieces: Vec<Piece>,
@@ -54,7 +57,31 @@ pub struct Label {
 impl Label {
     /// All ink as one outline (non-zero winding), em, y up.
     pub fn outline(&self) -> BezPath {
-        todo!()
+        let mut all = BezPath::new();
+        for piece in &self.pieces {
+            match piece {
+                Piece::Glyph(glyph) => all.extend(&glyph.outline()),
+                Piece::Outline(path) => all.extend(path),
+            }
+        }
+        all
+    }
+}
+
+impl Glyph {
+    /// Its outline where it stands, em, y up.
+    pub fn outline(&self) -> BezPath {
+        self.face
+            .outline(self.id)
+            .map(|found| self.place() * &found.0)
+            .unwrap_or_default()
+    }
+    fn place(&self) -> Affine {
+        Affine::new([self.scale, 0.0, 0.0, self.scale, self.x, self.y])
+    }
+    fn ink(&self) -> Option<Rect> {
+        let ink = self.face.outline(self.id)?.1;
+        (ink.area() > 0.0).then(|| self.place().transform_rect_bbox(ink))
     }
 }
 
@@ -70,17 +97,208 @@ pub struct LabelFault {
     pub mend: String,
 }
 
+/// The longest label, bytes.
+const LONGEST: usize = 1_000;
+/// The largest box, em.
+const LARGEST: f64 = 200.0;
+
 /// Sets LaTeX math.
 ///
 /// # Errors
 /// A command that is not allowed, text that does not parse, a character no face has, over 1,000 bytes, a box over
 /// 200 em.
 pub fn typeset(source: &str) -> Result<Label, LabelFault> {
-    todo!()
+    if source.len() > LONGEST {
+        let what = format!("the label is {} bytes long, over {LONGEST}", source.len());
+        return Err(LabelFault {
+            column: 0,
+            what,
+            mend: "shorten it".into(),
+        });
+    }
+    let reading = reader::read(source)?;
+    let words = words::words(&reading.nodes);
+    let letters = words::letters(&reading.nodes);
+    set(&reading.latex, words, letters).map_err(|fault| locate(fault, source, &reading.latex))
 }
 
-/// Sets plain upright text (an object's name); characters no face has become a replacement box, so it never fails.
-/// The label's `source` is the LaTeX of it: `\text{..}` with special characters escaped.
-pub fn plain(text: &str) -> Label {
-    todo!()
+/// A column of the LaTeX that was set is a column of the source where the two are equal.
+fn locate(fault: LabelFault, source: &str, latex: &str) -> LabelFault {
+    let column = if source == latex { fault.column } else { 0 };
+    LabelFault { column, ..fault }
+}
+
+/// Sets LaTeX that is known to hold allowed commands alone.
+pub(super) fn set(latex: &str, words: String, letters: String) -> Result<Label, LabelFault> {
+    let plain = |what: String, mend: &str| LabelFault {
+        column: 0,
+        what,
+        mend: mend.into(),
+    };
+    let nodes = ratex_parser::parse(latex).map_err(|error| {
+        let start = error.loc.map_or(0, |place| place.start);
+        let column = latex
+            .get(..start)
+            .map_or(0, |before| before.chars().count());
+        LabelFault {
+            column,
+            what: format!("the label does not read: {}", error.message),
+            mend: "write it as LaTeX math".into(),
+        }
+    })?;
+    let options = LayoutOptions {
+        style: MathStyle::Text,
+        ..LayoutOptions::default()
+    };
+    let placed = layout(&nodes, &options);
+    validate_layout(&placed)
+        .map_err(|what| plain(format!("the label cannot be set: {what}"), "simplify it"))?;
+    let list = to_display_list(&placed);
+    if !(list.width.abs() < LARGEST && list.height.abs() < LARGEST && list.depth.abs() < LARGEST) {
+        return Err(plain(
+            format!("the label is larger than {LARGEST} em"),
+            "shorten it",
+        ));
+    }
+    let pieces = list
+        .items
+        .iter()
+        .map(|item| piece(item, &list))
+        .collect::<Result<Vec<_>, _>>()?;
+    let pieces: Vec<Piece> = pieces.into_iter().flatten().collect();
+    let ink = pieces
+        .iter()
+        .filter_map(ink_of)
+        .reduce(|all, next| all.union(next))
+        .unwrap_or_default();
+    Ok(Label {
+        source: latex.to_owned(),
+        pieces,
+        words,
+        letters,
+        width: list.width.max(0.0),
+        height: list.height,
+        depth: list.depth.max(0.0),
+        ink,
+    })
+}
+
+fn ink_of(piece: &Piece) -> Option<Rect> {
+    match piece {
+        Piece::Glyph(glyph) => glyph.ink(),
+        Piece::Outline(path) => (!path.elements().is_empty()).then(|| path.bounding_box()),
+    }
+}
+
+/// One item of the display list (y down from the top of the box) as a piece (y up from the baseline).
+fn piece(item: &DisplayItem, list: &DisplayList) -> Result<Option<Piece>, LabelFault> {
+    let bar = |x: f64, y: f64, width: f64, height: f64| {
+        let bottom = list.height - y - height;
+        Piece::Outline(turned(
+            Rect::new(x, bottom, x + width, bottom + height).to_path(1e-6),
+        ))
+    };
+    Ok(match item {
+        DisplayItem::GlyphPath {
+            x,
+            y,
+            scale,
+            font,
+            char_code,
+            ..
+        } => glyph(font, *char_code, *x, list.height - y, *scale)?,
+        DisplayItem::Line {
+            x,
+            y,
+            width,
+            thickness,
+            ..
+        } => Some(bar(*x, y - thickness / 2.0, *width, *thickness)),
+        DisplayItem::Rect {
+            x,
+            y,
+            width,
+            height,
+            ..
+        } => Some(bar(*x, *y, *width, *height)),
+        DisplayItem::Path { x, y, commands, .. } => {
+            Some(Piece::Outline(path(commands, *x, list.height - y)))
+        }
+    })
+}
+
+fn glyph(font: &str, code: u32, x: f64, y: f64, scale: f64) -> Result<Option<Piece>, LabelFault> {
+    let text = char::from_u32(code).unwrap_or(char::REPLACEMENT_CHARACTER);
+    let missing = || LabelFault {
+        column: 0,
+        what: format!("no face has a glyph for \"{text}\" (U+{code:04X})"),
+        mend: "name the symbol by a command, or take it out".into(),
+    };
+    let id = FontId::parse(font).ok_or_else(missing)?;
+    let face = Face::named(font).ok_or_else(missing)?;
+    if text.is_whitespace() {
+        return Ok(None);
+    }
+    let drawn = katex_ttf_glyph_char(id, code);
+    let id = face.glyph(drawn).ok_or_else(missing)?;
+    let text = if ('\u{1D400}'..='\u{1D7FF}').contains(&text) {
+        drawn
+    } else {
+        text
+    };
+    let glyph = Glyph {
+        face,
+        id,
+        text,
+        x,
+        y,
+        scale,
+    };
+    if is_letter(text) {
+        return Ok(Some(Piece::Glyph(glyph)));
+    }
+    Ok(Some(Piece::Outline(glyph.outline())))
+}
+
+/// Accents, parts of tall brackets and glyphs of private codes are drawn, but no one would search for them.
+fn is_letter(text: char) -> bool {
+    !matches!(text,
+        '^' | '~' | '\u{A8}' | '\u{AF}' | '\u{B4}' | '\u{2C6}'..='\u{2DD}' | '\u{300}'..='\u{36F}'
+        | '\u{20D0}'..='\u{20FF}' | '\u{239B}'..='\u{23AE}' | '\u{E000}'..='\u{F8FF}')
+}
+
+fn path(commands: &[PathCommand], left: f64, top: f64) -> BezPath {
+    let at = |x: f64, y: f64| (left + x, top - y);
+    let mut path = BezPath::new();
+    for command in commands {
+        match *command {
+            PathCommand::MoveTo { x, y } => path.move_to(at(x, y)),
+            PathCommand::LineTo { x, y } if !path.elements().is_empty() => path.line_to(at(x, y)),
+            PathCommand::QuadTo { x1, y1, x, y } if !path.elements().is_empty() => {
+                path.quad_to(at(x1, y1), at(x, y))
+            }
+            PathCommand::CubicTo {
+                x1,
+                y1,
+                x2,
+                y2,
+                x,
+                y,
+            } if !path.elements().is_empty() => {
+                path.curve_to(at(x1, y1), at(x2, y2), at(x, y));
+            }
+            PathCommand::Close if !path.elements().is_empty() => path.close_path(),
+            _ => {}
+        }
+    }
+    turned(path)
+}
+
+/// The same outline, running clockwise as TrueType's do: where two pieces overlap their windings add.
+pub(super) fn turned(path: BezPath) -> BezPath {
+    if path.area() > 0.0 {
+        path.reverse_subpaths()
+    } else {
+        path
+    }
 }

@@ -4,7 +4,16 @@
 mod allow;
 mod face;
 mod layout;
+mod plain;
+mod reader;
+mod symbols;
 mod words;
 
 pub use face::Face;
-pub use layout::{Glyph, Label, LabelFault, Piece, plain, typeset};
+pub use layout::{Glyph, Label, LabelFault, Piece, typeset};
+pub use plain::plain;
+
+/// The names of all commands a label may use, without the backslash.
+pub fn commands() -> impl Iterator<Item = &'static str> {
+    allow::names()
+}

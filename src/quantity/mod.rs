@@ -17,7 +17,7 @@ pub use number::Number;
 pub use reading::{Quantity, ReadFault, Typed, read};
 pub use species::{SPECIES, Species, species};
 pub use text::{
-    Decimals, Rounded, decimals_allowed, fixed, grouped, rounded, shortest, significant,
-    with_uncertainty,
+    Decimals, Rounded, decimals_allowed, fixed, grouped, rounded, scientific, shortest,
+    significant, with_uncertainty,
 };
 pub use units::{Dimension, Unit};

@@ -44,6 +44,14 @@ pub fn significant(value: f64, digits: usize) -> String {
     }
 }
 
+/// Rounded to some significant digits (at least one), always with a power of ten: `1.23457e12`. Zero is `0`.
+pub fn scientific(value: f64, digits: usize) -> String {
+    if value == 0.0 {
+        return "0".to_owned();
+    }
+    format!("{value:.*e}", digits.max(1) - 1)
+}
+
 /// With a fixed number of decimals; never `-0.00`.
 pub fn fixed(value: f64, decimals: Decimals) -> String {
     let text = format!("{value:.*}", decimals.0);

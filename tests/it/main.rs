@@ -1,6 +1,7 @@
 //! Behaviour through public doors.
 #![cfg(test)]
 
+mod broken_fields;
 mod cli;
 mod core;
 #[cfg(feature = "window")]
@@ -12,6 +13,7 @@ mod house;
 mod label;
 mod outside;
 mod plate;
+mod program;
 mod quantity;
 mod scene;
 mod solve;
