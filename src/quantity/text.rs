@@ -1,7 +1,7 @@
 //! Numbers as text.
 
+use super::Number;
 use num_bigint::BigInt;
-use num_rational::BigRational;
 
 /// How many digits stand after the decimal sign.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
@@ -16,19 +16,15 @@ pub struct Rounded {
     pub uncertainty: String,
 }
 
-/// The shortest decimal text that reads back to the same f64; whole numbers without `.0`; `-0` as `0`.
-/// Plain notation from 1e-5 up to below 1e16, else `1.5e-7` (as JSON writers print).
+/// The shortest decimal text that reads back to the same f64, as the JSON writer prints it but whole numbers without
+/// `.0`, `-0` as `0` and no sign before the exponent: `0.00001`, `1e16`, `1.5e-7`.
 pub fn shortest(value: f64) -> String {
     if value == 0.0 {
         return "0".to_owned();
     }
-    let scientific = format!("{value:e}");
-    match scientific
-        .split_once('e')
-        .and_then(|(m, e)| Some((m, e.parse::<i32>().ok()?)))
-    {
-        Some((mantissa, exponent)) if (-5..16).contains(&exponent) => plain(mantissa, exponent),
-        _ => scientific,
+    match serde_json::to_string(&value) {
+        Ok(text) if value.is_finite() => text.trim_end_matches(".0").replace("e+", "e"),
+        _ => value.to_string(),
     }
 }
 
@@ -142,14 +138,13 @@ impl Spread {
     }
 }
 
-/// How many times 10^place a value is, to the nearest whole number.
+/// How many times 10^place a value is, to the nearest whole number, half away from 0; of the decimal that is printed,
+/// so that 12.2135 is half way between 12.213 and 12.214.
 fn units_of(value: f64, place: i32) -> Option<BigInt> {
-    let power = BigRational::from(BigInt::from(10)).pow(place);
-    Some(
-        (BigRational::from_float(value)? / power)
-            .round()
-            .to_integer(),
-    )
+    match Number::decimal(&shortest(value))?.over(&Number::scaled(1, 1, place)) {
+        Number::Rational(units) => Some(units.round().to_integer()),
+        Number::Real(_) => None,
+    }
 }
 
 /// A whole number of units of 10^place, in plain notation.
@@ -186,7 +181,7 @@ pub fn rounded(value: f64, uncertainty: f64) -> Option<Rounded> {
 }
 
 /// A value with its uncertainty in parentheses, in units of the last digit: `497.611(13)`; below 1e-4 and from 1e7
-/// with a power of ten, `1.67262192595(52)e-27`. For an uncertainty of 0 the shortest text of the value alone.
+/// with a power of ten, `9.1093837139(28)e-31`. For an uncertainty of 0 the shortest text of the value alone.
 pub fn with_uncertainty(value: f64, uncertainty: f64) -> String {
     let (Some(spread), Some(exponent)) = (
         Spread::of(uncertainty),

@@ -42,6 +42,11 @@ impl<'a> Faults<'a> {
         self.broken
     }
 
+    /// Whether any further fault would not be kept, so that its words need not be found.
+    pub(super) fn full(&self) -> bool {
+        self.list.len() >= MOST
+    }
+
     pub(super) fn into_list(self) -> Vec<Fault> {
         self.list
     }
@@ -83,14 +88,14 @@ impl<'a> Faults<'a> {
     }
 
     fn path(&self, at: usize) -> String {
-        if self.list.len() >= MOST {
+        if self.full() {
             return String::new();
         }
         self.root.map_or_else(String::new, |root| root.path_to(at))
     }
 
     fn put(&mut self, weight: Weight, field: String, at: usize, (what, mend): (String, String)) {
-        if self.list.len() >= MOST {
+        if self.full() {
             return;
         }
         let place = self.source.lines.place(&self.source.text, at);

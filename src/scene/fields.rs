@@ -174,9 +174,13 @@ fn plain_items<'a, T>(
 ) -> Option<Vec<T>> {
     let mut all = Vec::with_capacity(value.len());
     let mut sound = true;
+    // What follows a value without a comma is its fault, not one of its own.
+    let mut torn_off = false;
     for (entry, next) in with_next(value) {
+        let torn = std::mem::replace(&mut torn_off, entry.item.comma.is_none());
         let punctuated = punctuation(entry, next, faults);
         let item = match (entry.key(), entry.value()) {
+            (None, Some(_)) if torn => None,
             (None, Some(item)) => read(item, faults),
             (Some(key), _) => {
                 let what = "a list has no names in it";
@@ -275,9 +279,14 @@ impl<'a> Form<'a> {
             return form;
         }
         let object = faults.root.is_some_and(|root| root.id == value.id);
+        let mut torn_off = false;
         for (entry, next) in with_next(value) {
             form.sound &= punctuation(entry, next, faults).is_some();
-            form.field(entry, object, faults);
+            // What follows a value without a comma is its fault, not one of its own.
+            if !torn_off || entry.key().is_some() {
+                form.field(entry, object, faults);
+            }
+            torn_off = entry.item.comma.is_none();
         }
         form
     }
@@ -326,7 +335,7 @@ impl<'a> Form<'a> {
             let what = format!("`{name}` stands here a second time");
             faults.add(key.start(), what, "delete one of them");
         }
-        if !self.put(name, value) {
+        if !self.put(name, value) && !faults.full() {
             let common = COMMON.iter().copied().filter(|_| object);
             let mend = match nearest(name, names.clone().chain(common)) {
                 Some(near) => format!("did you mean `{near}`?"),

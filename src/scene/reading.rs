@@ -231,6 +231,9 @@ impl<'a> Reader<'a> {
     }
 
     fn unknown_field(&mut self, key: Value<'a>) {
+        if self.own.full() {
+            return;
+        }
         let mend = match nearest(key.raw(), FIELDS) {
             Some(near) => format!("did you mean `{near}`?"),
             None => format!("the fields of a scene are {}", FIELDS.join(", ")),

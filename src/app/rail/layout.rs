@@ -1,6 +1,11 @@
 //! Where everything on the rail stands: pure functions of rapidities, widths of names and the rail's width. Lengths
 //! are points, x from the rail's left end.
 
+#![expect(
+    clippy::cast_possible_truncation,
+    reason = "the screen is in f32 points"
+)]
+
 use std::ops::Range;
 
 use crate::fault::Kind;
@@ -114,12 +119,9 @@ fn kind(thing: &RapidityTick) -> TickKind {
         Kind::Frame if thing.is_base => TickKind::Base,
         Kind::Frame => TickKind::Frame,
         Kind::Particle => TickKind::Particle,
-        Kind::Line
-        | Kind::Scene
-        | Kind::Species
-        | Kind::Event
-        | Kind::Collision
-        | Kind::Plate => TickKind::Line,
+        Kind::Line | Kind::Scene | Kind::Species | Kind::Event | Kind::Collision | Kind::Plate => {
+            TickKind::Line
+        }
     }
 }
 
@@ -285,7 +287,7 @@ pub(super) fn graduate(scale: &Scale) -> Graduation {
 pub(super) fn spread(want: &[f32], widths: &[f32], gap: f32, bounds: (f32, f32)) -> Vec<f32> {
     let mut offsets = vec![0.0_f32; want.len()];
     for i in 1..want.len() {
-        offsets[i] = offsets[i - 1] + (widths[i - 1] + widths[i]) / 2.0 + gap;
+        offsets[i] = offsets[i - 1] + f32::midpoint(widths[i - 1], widths[i]) + gap;
     }
     let mut blocks: Vec<(f32, usize)> = Vec::new();
     for (wanted, offset) in want.iter().zip(&offsets) {
@@ -351,7 +353,13 @@ impl Name {
 pub(super) type Measure<'a> = &'a dyn Fn(&str) -> f32;
 
 /// Names of the ticks on the axis; runs that crowd become brackets.
-pub(super) fn names(ticks: &[Tick], things: &[RapidityTick], scale: &Scale, width: f32, measure: Measure<'_>) -> Vec<Name> {
+pub(super) fn names(
+    ticks: &[Tick],
+    things: &[RapidityTick],
+    scale: &Scale,
+    width: f32,
+    measure: Measure<'_>,
+) -> Vec<Name> {
     let mut names: Vec<Name> = ticks
         .iter()
         .enumerate()
@@ -399,7 +407,12 @@ fn crowded(names: &[Name]) -> Option<Range<usize>> {
     crowds
         .iter()
         .find(failing)
-        .or_else(|| crowds.iter().filter(|c| c.len() > 1).max_by_key(|c| c.len()))
+        .or_else(|| {
+            crowds
+                .iter()
+                .filter(|c| c.len() > 1)
+                .max_by_key(|c| c.len())
+        })
         .cloned()
         .or(Some(run))
 }
@@ -499,7 +512,12 @@ pub(super) struct CloseUp {
 }
 
 /// The close-up of a bracket.
-pub(super) fn close_up(bracket: &Name, ticks: &[Tick], width: f32, measure: Measure<'_>) -> CloseUp {
+pub(super) fn close_up(
+    bracket: &Name,
+    ticks: &[Tick],
+    width: f32,
+    measure: Measure<'_>,
+) -> CloseUp {
     let shown = &ticks[bracket.ticks.clone()];
     let (low, high) = match shown {
         [first, .., last] => (first.rapidity, last.rapidity),
@@ -535,7 +553,9 @@ pub(super) fn close_up(bracket: &Name, ticks: &[Tick], width: f32, measure: Meas
 fn every_nth(widths: &[f32], room: f32) -> usize {
     let needed = |every: usize| {
         let chosen: Vec<f32> = widths.iter().step_by(every).copied().collect();
-        let blocks = chosen.chunks(3).map(|c| widest(c) + BLOCK_EXTRA + BLOCK_GAP);
+        let blocks = chosen
+            .chunks(3)
+            .map(|c| widest(c) + BLOCK_EXTRA + BLOCK_GAP);
         blocks.sum::<f32>() - BLOCK_GAP
     };
     (1..=widths.len().max(1))
