@@ -83,12 +83,13 @@ impl Worldline {
                 "a broken line needs at least two events, and its clock one of them",
             ));
         }
-        let mut pieces = Vec::with_capacity(steps.len());
-        for (i, (&base, &step)) in through.iter().zip(steps).enumerate() {
-            base.checked("an event of a broken line")?;
-            pieces.push(straight_piece(base, step, i + 1)?);
+        for event in through.iter().chain(steps) {
+            event.checked("an event of a broken line")?;
         }
-        through[steps.len()].checked("an event of a broken line")?;
+        let starts = through.iter().zip(steps).enumerate();
+        let mut pieces = starts
+            .map(|(i, (&base, &step))| straight_piece(base, step, i + 1))
+            .collect::<Result<Vec<_>, _>>()?;
         // Readings run both ways from the event whose reading is given.
         let mut later = reading;
         for piece in &mut pieces[at..] {
@@ -320,29 +321,26 @@ fn straight_piece(
     step: Displacement,
     from: usize,
 ) -> Result<Piece, GeometryError> {
-    let why = match step.separation() {
-        Separation::Spacelike => Some("they are spacelike separated"),
-        Separation::Lightlike => Some("they are lightlike separated"),
-        Separation::Timelike if step.t() < 0.0 => Some("it is the earlier one"),
-        Separation::Timelike => None,
+    let why = match (step.separation(), step.rapidity()) {
+        (Separation::Spacelike, _) => "they are spacelike separated",
+        (Separation::Lightlike, _) if step == Displacement::ZERO => "they are one event",
+        (Separation::Timelike, Some(rapidity)) if step.t() > 0.0 => {
+            let duration = step.length();
+            return Ok(Piece {
+                leg: Leg::Free {
+                    rapidity: Rapidity::new(rapidity)?,
+                    across: step.y / duration,
+                },
+                base,
+                step,
+                reading: 0.0,
+                duration,
+            });
+        }
+        (Separation::Timelike, _) => "it is the earlier one",
+        (Separation::Lightlike, _) => "they are lightlike separated",
     };
-    let duration = step.length();
-    let (None, Some(rapidity)) = (why, step.rapidity()) else {
-        return Err(GeometryError::Step {
-            from,
-            why: why.unwrap_or("they are one event"),
-        });
-    };
-    Ok(Piece {
-        leg: Leg::Free {
-            rapidity: Rapidity::new(rapidity)?,
-            across: step.y / duration,
-        },
-        base,
-        step,
-        reading: 0.0,
-        duration,
-    })
+    Err(GeometryError::Step { from, why })
 }
 
 enum Crossing {

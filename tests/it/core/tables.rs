@@ -189,8 +189,9 @@ fn home() -> Worldline {
     traveller(0.0, Displacement::ZERO)
 }
 
+/// In units of EPS: a rapidity made from beta is rounded, and an echo has two meetings.
 fn bound(beta: f64) -> f64 {
-    8.0 + 2.0 * libm::atanh(beta.abs())
+    10.0 + 2.0 * libm::atanh(beta.abs())
 }
 
 /// Home's signal to a traveller and its echo: when it meets him, on his clock, and when it is back.
