@@ -152,32 +152,35 @@ impl Axes {
         let corner = |x: f64, y: f64| Rect::from_origin_size((x, y), (size.x, size.y));
         let mut found = Vec::new();
         if self.has_arcs {
-            found.push(Candidate { rect: corner(p.x - left - size.x, p.y + below), cost: 0.0 });
+            found.push(Candidate { rect: corner(p.x - left - size.x, p.y + below), cost: 0.0, leader: None });
         }
         let first = if self.has_arcs { order } else { 0.0 };
         for (i, slide) in [0.0, -0.5, 0.5, -1.0, 1.0].into_iter().enumerate() {
             let by = slide * style.slide;
             let cost = first + order * SLIDE_COST * i as f64;
-            let [near, far] = if upright {
-                let y = p.y - size.y / 2.0 + by;
-                [(p.x - style.centred_number - size.x, y), (p.x + style.centred_number, y)]
+            let near = if upright {
+                (p.x - style.centred_number - size.x, p.y - size.y / 2.0 + by)
             } else {
-                let x = p.x - size.x / 2.0 + by;
-                [(x, p.y + below), (x, p.y - below - size.y)]
+                (p.x - size.x / 2.0 + by, p.y + below)
             };
-            found.push(Candidate { rect: corner(near.0, near.1), cost });
-            found.push(Candidate { rect: corner(far.0, far.1), cost: cost + 2.0 * order });
+            found.push(Candidate { rect: corner(near.0, near.1), cost, leader: None });
+            if upright {
+                let rect = corner(p.x + style.centred_number, near.1);
+                found.push(Candidate { rect, cost: cost + 2.0 * order, leader: None });
+            }
         }
-        for (k, (x, y)) in [
-            (p.x - left - size.x, p.y + below),
-            (p.x + left, p.y + below),
-            (p.x - left - size.x, p.y - below - size.y),
-            (p.x + left, p.y - below - size.y),
-        ]
-        .into_iter()
-        .enumerate()
-        {
-            found.push(Candidate { rect: corner(x, y), cost: (3.0 + k as f64) * order });
+        let [beside_left, beside_right] = [p.x - left - size.x, p.x + left];
+        let above = p.y - below - size.y;
+        let corners = [
+            (beside_left, p.y + below),
+            (beside_right, p.y + below),
+            (beside_left, above),
+            (beside_right, above),
+        ];
+        // Above a level axis a number would be taken for one of something else.
+        let count = if upright { corners.len() } else { 2 };
+        for (k, &(x, y)) in corners[..count].iter().enumerate() {
+            found.push(Candidate { rect: corner(x, y), cost: (3.0 + k as f64) * order, leader: None });
         }
         found
     }
@@ -198,6 +201,7 @@ impl Axes {
         let candidates = [(top.x - gap - width, 0.0), (top.x + gap, 2.0)].map(|(x, cost)| Candidate {
             rect: on_baseline(canvas, &label, x, top.y + below),
             cost: cost * step,
+            leader: None,
         });
         wish(canvas, Rank::Title, (group, None), (label, INK), candidates.to_vec());
 
@@ -210,7 +214,7 @@ impl Axes {
             let x = right.x + past - width - step * f64::from(i);
             for (y, cost) in [(right.y + below, 0.0), (right.y - below + height / 2.0, 2.0)] {
                 let rect = on_baseline(canvas, &label, x, y);
-                candidates.push(Candidate { rect, cost: (cost + f64::from(i)) * step });
+                candidates.push(Candidate { rect, cost: (cost + f64::from(i)) * step, leader: None });
             }
         }
         wish(canvas, Rank::Title, (group, None), (label, INK), candidates);

@@ -34,6 +34,24 @@ pub(super) enum Layer {
     Text,
 }
 
+impl Layer {
+    /// Lines and arrows that part a name from what it names.
+    fn is_heavy(self) -> bool {
+        match self {
+            Self::Signal | Self::World | Self::Total | Self::After | Self::Before => true,
+            Self::Tint
+            | Self::Curve
+            | Self::Light
+            | Self::Tick
+            | Self::Axis
+            | Self::TiltedAxis
+            | Self::Simultaneity
+            | Self::Event
+            | Self::Text => false,
+        }
+    }
+}
+
 /// In which order labels choose their places: those with least choice first.
 #[derive(Clone, Copy, Debug, PartialEq, Eq, PartialOrd, Ord)]
 pub(super) enum Rank {
@@ -195,7 +213,7 @@ impl<'a> Canvas<'a> {
             return;
         }
         if layer != Layer::Tint {
-            self.take_ink(&path, 0.0);
+            self.take_ink(&path, 0.0, layer);
         }
         let shape = Shape::Path { path, paint: Paint::Fill(ink) };
         self.drawn.push((layer, Mark { group, shape }));
@@ -213,7 +231,7 @@ impl<'a> Canvas<'a> {
         if path.elements().len() < 2 {
             return;
         }
-        self.take_ink(&path, width / 2.0);
+        self.take_ink(&path, width / 2.0, layer);
         let stroke = Stroke { ink, width, dash, cap: Cap::Butt, join: Join::Mitre };
         let shape = Shape::Path { path, paint: Paint::Stroke(stroke) };
         self.drawn.push((layer, Mark { group, shape }));
@@ -241,25 +259,26 @@ impl<'a> Canvas<'a> {
         }
     }
 
-    fn take_ink(&mut self, path: &BezPath, half: f64) {
+    fn take_ink(&mut self, path: &BezPath, half: f64, layer: Layer) {
+        let is_heavy = layer.is_heavy();
         let (mut start, mut last) = (Point::ORIGIN, Point::ORIGIN);
         for &element in path.elements() {
             match element {
                 PathEl::MoveTo(p) => (start, last) = (p, p),
                 PathEl::LineTo(p) | PathEl::QuadTo(_, p) => {
-                    self.places.add_ink(last, p, half);
+                    self.places.add_ink(last, p, half, is_heavy);
                     last = p;
                 }
                 PathEl::CurveTo(p, q, r) => {
                     let from = last;
                     for i in 1..=CHORDS {
                         let next = cubic_at([from, p, q, r], i as f64 / CHORDS as f64);
-                        self.places.add_ink(last, next, half);
+                        self.places.add_ink(last, next, half, is_heavy);
                         last = next;
                     }
                 }
                 PathEl::ClosePath => {
-                    self.places.add_ink(last, start, half);
+                    self.places.add_ink(last, start, half, is_heavy);
                     last = start;
                 }
             }
@@ -321,7 +340,8 @@ impl<'a> Canvas<'a> {
             let x = field.x1 - gap - size.x - part * (field.width() - size.x - 2.0 * gap);
             for (y, cost) in [(field.y1 - gap - size.y, 0.0), (field.y0 + gap, 1.0)] {
                 let rect = Rect::from_origin_size((x, y), (size.x, size.y));
-                candidates.push(Candidate { rect, cost: (cost + part) * self.style.em });
+                let cost = (cost + part) * self.style.em;
+                candidates.push(Candidate { rect, cost, leader: None });
             }
         }
         let seek = Seek::Places(candidates);
@@ -342,6 +362,7 @@ impl<'a> Canvas<'a> {
                 (Vec2::new(cos(angle), -sin(angle)), order * ORDER_WORTH * self.style.em)
             })
             .collect();
+        let off = self.style.event + self.style.clear_ink / 2.0;
         let rings = ((farthest - nearest) / step).round() as usize;
         let candidates: Vec<Candidate> = (0..=rings)
             .flat_map(|ring| {
@@ -349,6 +370,7 @@ impl<'a> Canvas<'a> {
                 ways.iter().map(move |&(way, order)| Candidate {
                     rect: box_at(p, way, size, nearest + far),
                     cost: far + order,
+                    leader: Some(p + way * off),
                 })
             })
             .collect();

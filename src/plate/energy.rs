@@ -55,6 +55,7 @@ struct Sum {
 pub(super) struct Energy {
     vectors: Vec<Vector>,
     sum: Option<Sum>,
+    arrows: Arrows,
     has_words: bool,
     has_shells: bool,
     axes: Axes,
@@ -98,6 +99,7 @@ impl Energy {
         let symbol = if is_projection { format!("{}_x c", primed("p", primes)) } else { format!("{}c", primed("p", primes)) };
         let axis = |symbol: String| Axis { symbol, unit: energy.latex(), factor: 1.0 };
         Self {
+            arrows,
             has_words: collision.is_some(),
             has_shells: panel.hyperbolas != Some(false),
             axes: Axes { x: axis(symbol), y: axis(primed("E", primes)), has_arcs: false, has_halves: true },
@@ -166,7 +168,7 @@ impl Energy {
         let label = job.solved.particles.get(&vector.object.name).and_then(|p| p.label.as_deref());
         let label = job.names.of(&vector.object, label);
         let candidates = match clip::segment(tail, tip, window.field) {
-            Some(ends) => self.name_places(canvas, &label, ends, vector.form, &ARROW_PARTS),
+            Some(ends) => self.name_places(canvas, &label, ends, vector.form, self.name_parts()),
             None => Vec::new(),
         };
         let candidates = if candidates.is_empty() && clip::holds(window.field, tip) {
@@ -191,6 +193,14 @@ impl Energy {
         wish(canvas, Rank::Name, (group, blame), (label, vector.ink), candidates);
     }
 
+    /// Where along its arrow a name is looked for: in a fan near the tip, where its arrows are apart.
+    fn name_parts(&self) -> &'static [f64] {
+        match self.arrows {
+            Arrows::FromOrigin => &FAN_PARTS,
+            Arrows::TipToTail => &CHAIN_PARTS,
+        }
+    }
+
     /// Places beside an arrow, outside the closed figure first.
     fn name_places(
         &self,
@@ -206,15 +216,15 @@ impl Energy {
             Form::Total => canvas.style.stroke.total,
         } / 2.0;
         let sides = match &self.sum {
-            Some(sum) => {
+            Some(sum) if self.arrows == Arrows::TipToTail => {
                 let window = canvas.window;
                 let (foot, tip) = (window.mm(Point::ORIGIN), window.mm(sum.tip));
                 let middle = a.midpoint(b);
                 let turn = (tip - foot).cross(middle - foot);
                 if turn > 0.0 || (turn == 0.0 && form != Form::Before) { Sides::RightFirst } else { Sides::LeftFirst }
             }
-            None if b.x < a.x => Sides::LeftFirst,
-            None => Sides::RightFirst,
+            _ if b.x < a.x => Sides::LeftFirst,
+            _ => Sides::RightFirst,
         };
         beside(canvas, label, &spots((a, b), parts), sides, half)
     }
@@ -303,8 +313,9 @@ impl Energy {
     }
 }
 
-/// Where along an arrow its name is looked for.
-const ARROW_PARTS: [f64; 9] = [0.45, 0.38, 0.52, 0.31, 0.6, 0.68, 0.24, 0.76, 0.17];
+/// Where along an arrow of a chain, and of a fan, its name is looked for.
+const CHAIN_PARTS: [f64; 10] = [0.45, 0.38, 0.52, 0.31, 0.6, 0.68, 0.24, 0.76, 0.17, 0.84];
+const FAN_PARTS: [f64; 10] = [0.8, 0.74, 0.86, 0.68, 0.92, 0.62, 0.55, 0.48, 0.4, 0.32];
 /// Where along an arrow the word for its side is looked for.
 const WORD_PARTS: [f64; 9] = [0.68, 0.75, 0.6, 0.82, 0.52, 0.44, 0.36, 0.28, 0.2];
 /// Masses that differ by less have one shell.

@@ -280,6 +280,6 @@ fn panel_letter(job: &mut Job<'_>, canvas: &mut Canvas<'_>, letter: char) {
     let outer = canvas.window.outer;
     let corner = Point::new(outer.x0, outer.y0 + canvas.style.panel_letter);
     let rect = Rect::from_origin_size(corner, Size::new(size.x, size.y));
-    let seek = Seek::Places(vec![Candidate { rect, cost: 0.0 }]);
+    let seek = Seek::Places(vec![Candidate { rect, cost: 0.0, leader: None }]);
     canvas.wish(Wish { rank: Rank::Title, group, blame: None, label, ink: INK, seek });
 }

@@ -181,11 +181,24 @@ impl Tilted {
         let arc = Hyperbola { centre: self.origin, size, branch: which.branch() };
         let outward = if self.rapidity < 0.0 { -1.0 } else { 1.0 };
         let mut found = Vec::new();
-        for (i, part) in [1.0, 1.12, 1.25, 0.9, -0.85, -1.0, -1.15].into_iter().enumerate() {
+        for (i, part) in [1.0, 1.12, 1.25, 0.9].into_iter().enumerate() {
             let far = outward * part * style.arc_number / window.scale();
             let middle = window.mm(arc.at(arc.away(self.rapidity, far)));
             let rect = Rect::from_center_size(middle, (label.x, label.y));
-            found.push(Candidate { rect, cost: NUMBER_ORDER * i as f64 * style.em });
+            found.push(Candidate { rect, cost: NUMBER_ORDER * i as f64 * style.em, leader: None });
+        }
+        // Inside the overhang the number stands on one side of its arc.
+        for (i, part) in INNER_PARTS.into_iter().enumerate() {
+            let far = -outward * part * style.arc_number / window.scale();
+            let at = arc.away(self.rapidity, far);
+            let foot = window.mm(arc.at(at));
+            let along = window.mm(arc.at(arc.away(at, far / 4.0))) - foot;
+            let normal = Vec2::new(-along.y, along.x).normalize();
+            for side in [normal, -normal] {
+                let rect = box_beside(foot, side, label, style.clear_ink + style.stroke.fine);
+                let cost = NUMBER_ORDER * (found.len() + i) as f64 * style.em;
+                found.push(Candidate { rect, cost, leader: None });
+            }
         }
         let last = found.len() as f64 * NUMBER_ORDER * style.em;
         let p = window.mm(self.origin + which.unit(self.rapidity) * size);
@@ -211,7 +224,7 @@ impl Tilted {
         {
             let foot = p + along * (slide * style.em);
             let rect = box_beside(foot, outward * side, label, half + style.clear_ink + style.stroke.axis);
-            found.push(Candidate { rect, cost: NUMBER_ORDER * i as f64 * style.em });
+            found.push(Candidate { rect, cost: NUMBER_ORDER * i as f64 * style.em, leader: None });
         }
         found
     }
@@ -232,7 +245,7 @@ impl Tilted {
                 (size.x, size.y),
             ),
         };
-        let mut candidates = vec![Candidate { rect: beside_head, cost: 0.0 }];
+        let mut candidates = vec![Candidate { rect: beside_head, cost: 0.0, leader: None }];
         let way = (tip - from).normalize();
         let feet: Vec<Spot> = (0..SYMBOL_SPOTS)
             .map(|i| Spot {
@@ -253,6 +266,12 @@ impl Tilted {
 
 /// What each later place of a number costs, ems.
 const NUMBER_ORDER: f64 = 0.25;
+/// Where along its arc, back from the tick, a number is looked for.
+const INNER_PARTS: [f64; 3] = [0.5, 0.75, 1.0];
+/// Where along a line of simultaneity its name is looked for.
+const CUT_PARTS: [f64; 18] = [
+    0.88, 0.84, 0.8, 0.92, 0.76, 0.72, 0.68, 0.64, 0.6, 0.56, 0.5, 0.44, 0.38, 0.32, 0.26, 0.2, 0.14, 0.1,
+];
 /// Places tried for a symbol along its axis.
 const SYMBOL_SPOTS: i32 = 5;
 
@@ -340,8 +359,8 @@ impl Cut {
         let pen = (self.ink, style.stroke.axis);
         canvas.stroke(Layer::Simultaneity, group, outline::open(&[a, b]), pen, dash);
         let label = job.names.math(&self.label);
-        let places = spots((a, b), &[0.88, 0.8, 0.92, 0.72, 0.64, 0.56, 0.12, 0.2, 0.28, 0.36]);
+        let places = spots((a, b), &CUT_PARTS);
         let candidates = beside(canvas, &label, &places, Sides::BelowFirst, 0.0);
-        wish(canvas, Rank::Curve, (group, Some(self.event.clone())), (label, self.ink), candidates);
+        wish(canvas, Rank::Curve, (group, Some(job.plate.clone())), (label, self.ink), candidates);
     }
 }
