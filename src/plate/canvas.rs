@@ -311,7 +311,7 @@ impl<'a> Canvas<'a> {
                 continue;
             }
             let found = match &wish.seek {
-                Seek::Places(candidates) => self.places.best(candidates),
+                Seek::Places(candidates) => self.places.best(candidates).map(|(_, rect)| rect),
                 Seek::Around(p) => self.around(*p, size),
             };
             match found {
@@ -364,17 +364,28 @@ impl<'a> Canvas<'a> {
             .collect();
         let off = self.style.event + self.style.clear_ink / 2.0;
         let rings = ((farthest - nearest) / step).round() as usize;
-        let candidates: Vec<Candidate> = (0..=rings)
-            .flat_map(|ring| {
-                let far = step * ring as f64;
-                ways.iter().map(move |&(way, order)| Candidate {
+        let mut best: Option<(f64, Rect)> = None;
+        for ring in 0..=rings {
+            let far = step * ring as f64;
+            if best.is_some_and(|(score, _)| far - self.places.worth() >= score) {
+                break;
+            }
+            let candidates: Vec<Candidate> = ways
+                .iter()
+                .map(|&(way, order)| Candidate {
                     rect: box_at(p, way, size, nearest + far),
                     cost: far + order,
                     leader: Some(p + way * off),
                 })
-            })
-            .collect();
-        self.places.best(&candidates)
+                .collect();
+            let found = self.places.best(&candidates);
+            if let Some((score, _)) = found
+                && best.is_none_or(|(least, _)| score < least)
+            {
+                best = found;
+            }
+        }
+        best.map(|(_, rect)| rect)
     }
 
     /// The marks in drawing order.

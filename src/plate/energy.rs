@@ -247,12 +247,12 @@ impl Energy {
         }
         if self.has_shells && sum.mass > 0.0 {
             let pen = (INK, canvas.style.stroke.axis);
-            let curve = shell(canvas, group, sum.mass, pen);
+            shell(canvas, group, sum.mass, pen);
             let symbol = if sum.has_across { r"M_{\mathrm{T}}c^2" } else { "Mc^2" };
             let unit = job.solved.units.energy.latex();
             let value = number(&significant(sum.mass, MASS_DIGITS));
             let label = job.names.math(&format!(r"{symbol}\,{{=}}\,{value}\,{unit}"));
-            let places = along_shell(canvas, &curve, (sum.tip.x, 1.0));
+            let places = along_shell(canvas, sum.mass, sum.tip.x);
             let candidates = beside(canvas, &label, &places, Sides::BelowFirst, pen.1 / 2.0);
             wish(canvas, Rank::Curve, (group, Some(sum.object.clone())), (label, INK), candidates);
         }
@@ -285,9 +285,9 @@ impl Energy {
             }
             seen.push(mass);
             let group = canvas.group(&format!("shell of {}", vector.object));
-            let curve = shell(canvas, group, mass, (GUIDE, canvas.style.stroke.fine));
+            shell(canvas, group, mass, (GUIDE, canvas.style.stroke.fine));
             let label = job.names.math(&shell_label(job.solved, vector));
-            let places = along_shell(canvas, &curve, (0.0, 1.0));
+            let places = along_shell(canvas, mass, 0.0);
             let candidates = beside(canvas, &label, &places, Sides::AboveFirst, 0.0);
             let blame = (!canvas.style.is_large()).then(|| vector.object.clone());
             wish(canvas, Rank::Curve, (group, blame), (label, INK), candidates);
@@ -463,35 +463,31 @@ fn light(job: &mut Job<'_>, canvas: &mut Canvas<'_>) {
     wish(canvas, Rank::Word, (group, None), (label, INK), candidates);
 }
 
-/// Draws a mass shell and gives it back.
-fn shell(canvas: &mut Canvas<'_>, group: usize, mass: f64, pen: (Ink, f64)) -> Hyperbola {
+/// Draws a mass shell.
+fn shell(canvas: &mut Canvas<'_>, group: usize, mass: f64, pen: (Ink, f64)) {
     let window = canvas.window;
     let curve = Hyperbola { centre: Point::ORIGIN, size: mass, branch: Branch::Up };
     for part in curve.inside(window.plane) {
         let path = window.path(&curve.path(part, CURVE_TOLERANCE / window.scale()));
         canvas.stroke(Layer::Curve, group, path, pen, Vec::new());
     }
-    curve
 }
 
-/// Spots along a shell's visible parts, those nearest to some momentum first.
-fn along_shell(canvas: &Canvas<'_>, curve: &Hyperbola, (px, weight): (f64, f64)) -> Vec<Spot> {
+/// Spots along a shell inside the field, those nearest to some momentum first.
+fn along_shell(canvas: &Canvas<'_>, mass: f64, px: f64) -> Vec<Spot> {
     let window = canvas.window;
-    let step = canvas.style.name_step;
-    let around = window.mm(Point::new(px, window.plane.y0)).x;
+    let plane = window.plane;
+    let step = canvas.style.name_step / window.scale();
+    let count = ((plane.width() / step).floor() as usize).min(MOST_SPOTS);
     let mut found = Vec::new();
-    for (from, to) in curve.inside(window.plane) {
-        let mut at = from;
-        while at < to && found.len() < MOST_SPOTS {
-            let here = window.mm(curve.at(at));
-            let next = curve.away(at, step / window.scale());
-            let along = window.mm(curve.at(next)) - here;
-            if along.hypot2() == 0.0 {
-                break;
-            }
-            let order = weight * (here.x - around).abs() / canvas.style.em * SHELL_ORDER;
-            found.push(Spot { foot: here, along, order });
-            at = next;
+    for i in 0..=count {
+        let p = plane.width().mul_add(i as f64 / count as f64, plane.x0);
+        let energy = hypot(mass, p);
+        let here = Point::new(p, energy);
+        if clip::holds(plane, here) {
+            let along = Vec2::new(1.0, -p / energy);
+            let order = (p - px).abs() * window.scale() / canvas.style.em * SHELL_ORDER;
+            found.push(Spot { foot: window.mm(here), along, order });
         }
     }
     found

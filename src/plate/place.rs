@@ -191,9 +191,14 @@ impl Places {
         b.x0 <= rect.x0 && rect.x1 <= b.x1 && b.y0 <= rect.y0 && rect.y1 <= b.y1
     }
 
-    /// The best free place of some.
-    pub(super) fn best(&self, candidates: &[Candidate]) -> Option<Rect> {
-        let worth = self.reach - self.clear_ink;
+    /// What the most clearance takes off a place's score, mm.
+    pub(super) fn worth(&self) -> f64 {
+        self.reach - self.clear_ink
+    }
+
+    /// The best free place of some, with its score.
+    pub(super) fn best(&self, candidates: &[Candidate]) -> Option<(f64, Rect)> {
+        let worth = self.worth();
         let mut order: Vec<usize> = (0..candidates.len()).collect();
         order.sort_by(|&i, &j| candidates[i].cost.total_cmp(&candidates[j].cost));
         let mut best: Option<(f64, Rect)> = None;
@@ -215,7 +220,7 @@ impl Places {
                 best = Some((score, rect));
             }
         }
-        best.map(|(_, rect)| rect)
+        best
     }
 }
 
@@ -293,19 +298,22 @@ fn gap(a: Rect, b: Rect) -> f64 {
     d.hypot()
 }
 
-/// A box of some size whose nearest point is `distance` from `p`, its middle in the direction `way` from there.
+/// A box of some size whose nearest point is `distance` from `p`, its middle in the direction `way` (of length 1).
 pub(super) fn box_at(p: Point, way: Vec2, size: Vec2, distance: f64) -> Rect {
-    let around = |r: f64| Rect::from_center_size(p + way * r, (size.x, size.y));
-    let (mut near, mut far) = (0.0, distance + size.hypot());
-    for _ in 0..24 {
-        let middle = f64::midpoint(near, far);
-        if to_box(p, around(middle)) < distance {
-            near = middle;
-        } else {
-            far = middle;
-        }
-    }
-    around(far)
+    let (a, b) = (size.x / 2.0, size.y / 2.0);
+    let (x, y) = (way.x.abs(), way.y.abs());
+    // Nearest by a vertical side, by a level one, else by a corner.
+    let across = (a + distance) / x;
+    let up = (b + distance) / y;
+    let reach = if across * y <= b {
+        across
+    } else if up * x <= a {
+        up
+    } else {
+        let along = a.mul_add(x, b * y);
+        along + (along * along - (a * a + b * b - distance * distance)).max(0.0).sqrt()
+    };
+    Rect::from_center_size(p + way * reach, (size.x, size.y))
 }
 
 /// A box of some size beside a straight stroke: `distance` from the stroke's middle line, on the side of the unit
@@ -355,11 +363,12 @@ mod tests {
         let next = Rect::new(10.0, 20.0, 14.0, 22.0);
         let candidates =
             [(near, 0.0), (next, 1.0)].map(|(rect, cost)| Candidate { rect, cost, leader: None });
-        let first = places.best(&candidates).unwrap();
-        places.add_label(first);
-        assert_eq!((first, places.best(&candidates)), (near, Some(next)));
+        let rect = |places: &Places| places.best(&candidates).map(|(_, rect)| rect);
+        assert_eq!(rect(&places), Some(near));
+        places.add_label(near);
+        assert_eq!(rect(&places), Some(next));
         places.add_label(next);
-        assert_eq!(places.best(&candidates), None);
+        assert_eq!(rect(&places), None);
     }
 
     #[test]
@@ -368,7 +377,7 @@ mod tests {
         let rect = Rect::new(10.0, 20.0, 14.0, 22.0);
         let across = [Candidate { rect, cost: 0.0, leader: Some(Point::new(12.0, 25.0)) }];
         places.add_ink(Point::new(0.0, 24.0), Point::new(80.0, 24.0), 0.1, false);
-        assert_eq!(places.best(&across), Some(rect));
+        assert_eq!(places.best(&across).map(|(_, r)| r), Some(rect));
         places.add_ink(Point::new(0.0, 24.0), Point::new(80.0, 24.0), 0.2, true);
         assert_eq!(places.best(&across), None);
     }
