@@ -27,11 +27,12 @@ pub fn run(command: &Command) -> u8 {
 }
 
 fn draw(args: &Draw) -> u8 {
-    let Some(format) = Format::of_path(&args.to) else {
-        let to = args.to.display();
-        return refuse(&format!(
-            "{to}: its ending names no format; let it end in .svg, .pdf, .png or .tex"
-        ));
+    let format = match Format::of(&args.to) {
+        Ok(format) => format,
+        Err(fault) => {
+            let to = args.to.display();
+            return refuse(&format!("{to}: {}; {}", fault.what, fault.mend));
+        }
     };
     let Some(opened) = open(&args.scene) else {
         return NOTHING;

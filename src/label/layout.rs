@@ -36,7 +36,8 @@ pub struct Glyph {
 /// A label set in type.
 #[derive(Clone, Debug, PartialEq)]
 pub struct Label {
-    /// The LaTeX math as written; characters beyond ASCII are commands where LaTeX needs them to be.
+    /// The LaTeX math as written, but with commands for characters beyond ASCII and braces round arguments that are
+    /// commands.
     pub source: String,
     /// What is drawn, left to right.
     pub pieces: Vec<Piece>,

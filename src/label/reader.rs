@@ -394,7 +394,13 @@ impl Reader {
             Token::Char('{') => return self.group(column).map(Node::Group),
             Token::Char(character) if allow::math_char(*character) => return self.nucleus(),
             Token::Command(name) => match allow::command(name) {
-                Some(Command::Symbol(_)) => return self.nucleus(),
+                Some(Command::Symbol(_)) => {
+                    // Some symbols are two in TeX, which takes one alone.
+                    self.write("{");
+                    let node = self.nucleus();
+                    self.write("}");
+                    return node;
+                }
                 Some(_) => {}
                 None => return Err(refused_command(name, column)),
             },

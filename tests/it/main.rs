@@ -17,3 +17,4 @@ mod program;
 mod quantity;
 mod scene;
 mod solve;
+mod tools;
