@@ -111,11 +111,14 @@ pub struct Fault {
     pub weight: Weight,
     /// The object it is about.
     pub object: ObjectId,
-    /// The field within the object, as a path: `state`, `through`, `panels.1.range.t`; empty for the whole object.
+    /// The field within the object, as a path of names and, in lists and pairs, of numbers from 0: `state`, `clock.1`,
+    /// `panels.1.range.t.0`; empty for the whole object. The one value that stands bare in a form has the form's own
+    /// path: of `velocity: Beta("3/5")` the value is at `velocity`.
     pub field: String,
     /// Where it stands in the file, once looked up.
     pub place: Option<Place>,
-    /// Characters from the start of the field's value to the very spot, where that is known.
+    /// Characters from the start of the field's value (of a string's contents) to the very spot; 0 is the value as a
+    /// whole.
     pub offset: usize,
     /// What is wrong.
     pub what: String,
@@ -171,28 +174,37 @@ impl Fault {
 
 /// The candidate nearest to `name` by edit distance, if one is near enough to be meant.
 pub fn nearest<'a>(name: &str, candidates: impl IntoIterator<Item = &'a str>) -> Option<&'a str> {
-    let limit = (name.chars().count() / 3).max(1);
+    let length = name.chars().count();
+    let limit = (length / 3).max(1);
     candidates
         .into_iter()
+        .filter(|c| c.chars().count().abs_diff(length) <= limit)
         .map(|c| (edit_distance(name, c), c))
         .filter(|&(d, _)| d <= limit)
         .min_by_key(|&(d, _)| d)
         .map(|(_, c)| c)
 }
 
+/// How many characters are put in, left out, changed or swapped with their neighbour (optimal string alignment).
 fn edit_distance(a: &str, b: &str) -> usize {
     let b: Vec<char> = b.chars().collect();
-    let mut row: Vec<usize> = (0..=b.len()).collect();
+    let mut rows: [Vec<usize>; 2] = [vec![0; b.len() + 1], (0..=b.len()).collect()];
+    let mut last = None;
     for (i, ca) in a.chars().enumerate() {
-        let mut diagonal = row[0];
-        row[0] = i + 1;
+        let [before, above] = &rows;
+        let mut row = vec![i + 1];
         for (j, &cb) in b.iter().enumerate() {
-            let next = (diagonal + usize::from(ca != cb))
-                .min(row[j] + 1)
-                .min(row[j + 1] + 1);
-            diagonal = row[j + 1];
-            row[j + 1] = next;
+            let mut steps = (above[j] + usize::from(ca != cb))
+                .min(above[j + 1] + 1)
+                .min(row[j] + 1);
+            if j > 0 && last == Some(cb) && b[j - 1] == ca {
+                steps = steps.min(before[j - 1] + 1);
+            }
+            row.push(steps);
         }
+        last = Some(ca);
+        rows.swap(0, 1);
+        rows[1] = row;
     }
-    row[b.len()]
+    rows[1][b.len()]
 }

@@ -2,6 +2,7 @@
 
 mod pdf;
 mod png;
+mod raster;
 mod svg;
 mod table;
 mod tikz;
@@ -12,6 +13,7 @@ use kurbo::{BezPath, PathEl};
 
 pub use self::pdf::pdf;
 pub use self::png::png;
+pub use self::raster::{Raster, raster_path};
 pub use self::svg::svg;
 pub use self::table::{json, text};
 pub use self::tikz::tikz;

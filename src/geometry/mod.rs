@@ -1,15 +1,23 @@
 //! The Minkowski plane with c = 1: rapidity, null-coordinate vectors, boosts, worldlines. Pure functions on f64;
 //! no units, no names, no drawing.
+//!
+//! Components are 0 or from 1e-150 to 1e150 in size: there every bound stated holds. What would leave that range is
+//! a [`GeometryError::Range`], never an infinity, a 0 or a subnormal number.
 
+mod angle;
 mod boost;
 mod displacement;
+mod leg;
+mod piece;
 mod rapidity;
 mod worldline;
 
-pub use boost::{Angle, Boost};
+pub use angle::Angle;
+pub use boost::Boost;
 pub use displacement::{Displacement, Separation};
+pub use leg::Leg;
 pub use rapidity::{Rapidity, Side};
-pub use worldline::{Leg, Worldline};
+pub use worldline::Worldline;
 
 /// Why a number or a construction is impossible.
 #[derive(Clone, Debug, PartialEq, thiserror::Error)]
@@ -33,4 +41,29 @@ pub enum GeometryError {
     /// Two lines that never meet, or meet everywhere.
     #[error("{0}")]
     NoMeeting(&'static str),
+    /// Two events of a broken line between which no clock can go.
+    #[error("no clock goes from event {from} of the line to event {}: {why}", from + 1)]
+    Step {
+        /// The earlier event's place in the list, from 1.
+        from: usize,
+        /// Why not.
+        why: &'static str,
+    },
+    /// Something that the kind of line does not have.
+    #[error("{0}")]
+    Lacking(&'static str),
+}
+
+impl GeometryError {
+    /// The components, if all of them are in range.
+    pub(crate) fn check<const N: usize>(
+        what: &'static str,
+        components: [f64; N],
+    ) -> Result<(), Self> {
+        if components.into_iter().all(crate::num::in_range) {
+            Ok(())
+        } else {
+            Err(Self::Range { what })
+        }
+    }
 }

@@ -84,6 +84,9 @@ pub struct LineRow {
 pub struct ParticleRow {
     /// Name.
     pub name: String,
+    /// Standard deviation of the mass where one is known; it limits the digits that are shown.
+    #[serde(skip)]
+    pub mass_uncertainty: Option<f64>,
     /// Mass.
     pub mass: f64,
     /// E.

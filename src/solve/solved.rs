@@ -8,7 +8,7 @@ use crate::dynamics::{Momentum, Total};
 use crate::fault::{Fault, ObjectId};
 use crate::geometry::{Boost, Displacement, Worldline};
 use crate::quantity::{Number, Unit};
-use crate::scene::{Closure, When};
+use crate::scene::Closure;
 
 /// The units of what is shown, and their ratio.
 #[derive(Clone, Debug, PartialEq)]
@@ -23,8 +23,28 @@ pub struct SolvedUnits {
     pub light_way: f64,
 }
 
-/// A number as it was typed in the base frame, to be shown there as it was.
-pub type Stated = Option<f64>;
+/// What was typed of a particle in the base frame, to be shown there as it was; `None` for what was not typed.
+#[derive(Clone, Copy, Debug, PartialEq, Default)]
+pub struct Stated {
+    /// Kinetic energy, energy units.
+    pub kinetic: Option<f64>,
+    /// Total energy, energy units.
+    pub energy: Option<f64>,
+    /// px, energy units.
+    pub px: Option<f64>,
+    /// py, energy units.
+    pub py: Option<f64>,
+    /// Direction, degrees in (-180, 180].
+    pub angle: Option<f64>,
+    /// Speed.
+    pub beta: Option<f64>,
+    /// px / E.
+    pub beta_x: Option<f64>,
+    /// 1 - beta.
+    pub one_minus_beta: Option<f64>,
+    /// gamma.
+    pub gamma: Option<f64>,
+}
 
 /// An event, in the base frame.
 #[derive(Clone, Debug, PartialEq)]
@@ -50,6 +70,8 @@ pub struct SolvedLine {
     pub until: Option<(Arc<str>, Displacement)>,
     /// The particle it follows.
     pub follows: Option<Arc<str>>,
+    /// dx/dt as typed in the base frame.
+    pub stated_beta: Option<f64>,
     /// Its label.
     pub label: Option<String>,
 }
@@ -63,14 +85,8 @@ pub struct SolvedParticle {
     pub species: Option<String>,
     /// Standard deviation of its mass where one is known, energy units.
     pub mass_uncertainty: Option<f64>,
-    /// Its kinetic energy as typed in the base frame.
-    pub stated_kinetic: Stated,
-    /// Its total energy as typed in the base frame.
-    pub stated_energy: Stated,
-    /// px and py as typed in the base frame.
-    pub stated_components: (Stated, Stated),
-    /// Its direction as typed in the base frame, degrees.
-    pub stated_angle: Stated,
+    /// What was typed of it in the base frame.
+    pub stated: Stated,
     /// Largest error of its energy and momentum that half a last typed digit makes, energy units.
     pub typed_error: f64,
     /// Its label: the scene's, else the species' one.
@@ -98,13 +114,6 @@ pub struct SolvedCollision {
     pub label: Option<String>,
 }
 
-impl SolvedCollision {
-    /// Whether E, px and py agree within the tolerance.
-    pub fn balanced(&self) -> bool {
-        todo!()
-    }
-}
-
 /// A named frame.
 #[derive(Clone, Debug, PartialEq)]
 pub struct SolvedFrame {
@@ -112,6 +121,8 @@ pub struct SolvedFrame {
     pub boost: Boost,
     /// The event that is (0, 0) in it, from the base frame's origin.
     pub origin: Displacement,
+    /// The same before any rounding, for an event typed in the base frame.
+    pub origin_exact: Option<(Number, Number)>,
     /// The event's name, where it has one of its own.
     pub origin_name: Option<Arc<str>>,
     /// Its label.
@@ -127,6 +138,8 @@ pub struct Viewing {
     pub boost: Boost,
     /// Its origin.
     pub origin: Displacement,
+    /// The same before any rounding, where that is known.
+    pub origin_exact: Option<(Number, Number)>,
 }
 
 /// A solved scene: whatever could be computed, and the faults of the rest.
@@ -152,34 +165,6 @@ pub struct Solved {
     pub faults: Vec<Fault>,
     /// Every object that is left out: those at fault and those that hang on them.
     pub left_out: Vec<ObjectId>,
-}
-
-impl Solved {
-    /// The base frame.
-    pub fn base_view(&self) -> Viewing {
-        todo!()
-    }
-
-    /// The frame that a panel or a command asks for; `None` if it names none that is sound.
-    pub fn viewing(&self, when: &When) -> Option<Viewing> {
-        todo!()
-    }
-
-    /// A frame moving along x at a rapidity relative to the base, with the base's origin.
-    pub fn viewing_at(&self, rapidity: crate::geometry::Rapidity) -> Viewing {
-        todo!()
-    }
-
-    /// An event as a frame has it, from that frame's origin, in time units. Exact numbers are subtracted before rounding.
-    pub fn seen(&self, event: &SolvedEvent, from: &Viewing) -> Option<Displacement> {
-        todo!()
-    }
-
-    /// Everything that has a rapidity along x relative to the base: lines, massive particles, named frames and the
-    /// base itself, in the scene's order.
-    pub fn rapidities(&self) -> Vec<RapidityTick> {
-        todo!()
-    }
 }
 
 /// Something that stands at a rapidity.

@@ -1,0 +1,57 @@
+//! How many digits a column shows: one number of decimals for all of it, or one power-of-ten form for all of it.
+
+use crate::num::log10;
+use crate::quantity::{Decimals, fixed, scientific};
+
+/// Significant digits that the smallest entry of a column gets.
+const DIGITS: i32 = 6;
+/// Most figures of the largest entry, before and after the decimal sign.
+const FIGURES: i32 = 9;
+
+/// How a column's numbers are written.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub(super) enum Form {
+    Fixed(Decimals),
+    Scientific,
+}
+
+impl Form {
+    /// The form for a column of numbers. `finest` is the number of decimals that an uncertainty allows, if any.
+    pub(super) fn of(values: impl Iterator<Item = f64>, finest: Option<usize>) -> Self {
+        let (mut low, mut high) = (i32::MAX, i32::MIN);
+        for value in values.filter(|v| *v != 0.0 && v.is_finite()) {
+            let order = order(value);
+            low = low.min(order);
+            high = high.max(order);
+        }
+        if low > high {
+            return Self::Fixed(Decimals(0));
+        }
+        if high >= FIGURES || high < -4 {
+            return Self::Scientific;
+        }
+        let wanted = DIGITS - 1 - low;
+        let room = FIGURES - 1 - high.max(0);
+        let decimals = wanted.min(room).max(0);
+        let decimals = usize::try_from(decimals).unwrap_or(0);
+        Self::Fixed(Decimals(decimals.min(finest.unwrap_or(usize::MAX))))
+    }
+
+    /// A number in this form.
+    pub(super) fn text(self, value: f64) -> String {
+        match self {
+            Self::Fixed(decimals) => fixed(value, decimals),
+            Self::Scientific => scientific(value, 6),
+        }
+    }
+}
+
+/// The power of ten of the first digit.
+fn order(value: f64) -> i32 {
+    #[expect(
+        clippy::cast_possible_truncation,
+        reason = "an order of magnitude is small"
+    )]
+    let order = log10(value.abs()).floor() as i32;
+    order
+}

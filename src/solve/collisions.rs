@@ -1,0 +1,204 @@
+//! Collisions: what a closure finds, the sums before and after, and whether they balance.
+
+use super::particles;
+use super::solver::{Solver, Spoiled, fault};
+use super::{SolvedCollision, SolvedParticle};
+use crate::dynamics::{Momentum, Total, remainder};
+use crate::fault::{Fault, Kind, ObjectId};
+use crate::scene::{Closure, Collision};
+
+/// Rounding allowed of a sum, relative to the sum of absolute terms.
+const ROUNDING: f64 = 1e-12;
+
+/// The collision, and the particle its closure has found.
+pub(super) fn solve(
+    solver: &mut Solver<'_>,
+    id: &ObjectId,
+    index: usize,
+) -> Result<(SolvedCollision, Option<(usize, SolvedParticle)>), Spoiled> {
+    let object = solver.scene.collisions.get(&id.name).ok_or(None)?.clone();
+    let form = &object.form;
+    sane(id, form)?;
+    let closes = closing(solver, form, index);
+    let mut typed_error = 0.0;
+    let mut known = |names: &[String]| -> Result<Vec<Momentum>, Spoiled> {
+        let mut parts = Vec::new();
+        for name in names {
+            if closes.as_ref().is_some_and(|(_, closing)| closing == name) {
+                continue;
+            }
+            let particle = solver.particle(name)?;
+            typed_error += particle.typed_error;
+            parts.push(particle.momentum);
+        }
+        Ok(parts)
+    };
+    let mut before = known(&form.before)?;
+    let mut after = known(&form.after)?;
+    let found = match &closes {
+        None => None,
+        Some((particle, name)) => {
+            let stands_after = form.after.contains(name);
+            let momentum = find(id, form, (&before, &after), stands_after)?;
+            if stands_after {
+                after.push(momentum)
+            } else {
+                before.push(momentum)
+            }
+            let own = ObjectId::new(Kind::Particle, name);
+            compare_mass(solver, &own, *particle, &momentum)?;
+            Some((*particle, particles::closed(solver, &own, momentum)?))
+        }
+    };
+    if let (None, true) = (&found, form.closure != Closure::Given) {
+        return Err(fault(
+            id,
+            "closure",
+            format!("its closure {:?} has nothing to find", form.closure),
+            "let one particle be Closing, or use the closure Given",
+        ));
+    }
+    let (total_before, total_after) = (Total::of(&before), Total::of(&after));
+    let scale = |t: &Total| t.energy_scale + t.momentum_scale;
+    let tolerance = ROUNDING * (scale(&total_before) + scale(&total_after)) + typed_error;
+    let names = |list: &[String]| list.iter().map(|n| n.as_str().into()).collect();
+    let collision = SolvedCollision {
+        before: names(&form.before),
+        after: names(&form.after),
+        closure: form.closure,
+        at: form.at.as_deref().map(Into::into),
+        total_before,
+        total_after,
+        tolerance,
+        label: object.common.label.clone(),
+    };
+    solver.faults.extend(imbalance(solver, id, &collision));
+    Ok((collision, found))
+}
+
+fn sane(id: &ObjectId, form: &Collision) -> Result<(), Spoiled> {
+    for (side, names) in [("before", &form.before), ("after", &form.after)] {
+        if names.is_empty() {
+            let what = format!("nothing stands {side}");
+            return Err(fault(id, side, what, "name at least one particle"));
+        }
+    }
+    let mut seen = std::collections::BTreeSet::new();
+    for (side, names) in [("before", &form.before), ("after", &form.after)] {
+        for (i, name) in names.iter().enumerate() {
+            if !seen.insert(name) {
+                let what = format!("particle {name} stands in it twice");
+                return Err(fault(
+                    id,
+                    &format!("{side}.{i}"),
+                    what,
+                    "a particle goes in once or comes out once; give the other one a name of its own",
+                ));
+            }
+        }
+    }
+    Ok(())
+}
+
+/// The particle this collision closes.
+fn closing(solver: &Solver<'_>, form: &Collision, index: usize) -> Option<(usize, String)> {
+    form.before.iter().chain(&form.after).find_map(|name| {
+        let particle = solver.scene.particles.get_index_of(name.as_str())?;
+        (solver.closers[particle] == Some(index)).then(|| (particle, name.clone()))
+    })
+}
+
+/// The one unknown vector: what the other side has more than its own.
+fn find(
+    id: &ObjectId,
+    form: &Collision,
+    (before, after): (&[Momentum], &[Momentum]),
+    stands_after: bool,
+) -> Result<Momentum, Spoiled> {
+    let (whole, parts) = if stands_after {
+        (before, after)
+    } else {
+        (after, before)
+    };
+    if form.closure == Closure::Merge && !parts.is_empty() {
+        return Err(fault(
+            id,
+            "closure",
+            "Merge makes one particle of all that goes in, but others stand beside it",
+            "use the closure Remainder, or leave the others out",
+        ));
+    }
+    let found = if parts.is_empty() {
+        Total::of(whole).to_momentum()
+    } else {
+        remainder(whole, parts)
+    };
+    found.map_err(|e| {
+        fault(
+            id,
+            "closure",
+            e.to_string(),
+            "check the particles that are given: energy must be left over",
+        )
+    })
+}
+
+/// A finding where a closing particle's stated mass is not the one the balance gives.
+fn compare_mass(
+    solver: &mut Solver<'_>,
+    id: &ObjectId,
+    particle: usize,
+    found: &Momentum,
+) -> Result<(), Spoiled> {
+    let Some((_, object)) = solver.scene.particles.get_index(particle) else {
+        return Ok(());
+    };
+    let Some(stated) = particles::mass(solver, id, &object.form)? else {
+        return Ok(());
+    };
+    let off = found.mass() - stated.to_f64();
+    let allowed = 3.0 * stated.uncertainty.unwrap_or(0.0) + 1e-9 * found.energy();
+    if off.abs() > allowed {
+        let unit = solver.units.mass().symbol;
+        let finding = Fault::new(
+            id.clone(),
+            if object.form.species.is_some() {
+                "species"
+            } else {
+                "mass"
+            },
+            format!(
+                "its mass by the balance is {} {unit}, {} more than stated",
+                crate::quantity::significant(found.mass(), 7),
+                crate::quantity::significant(off, 3),
+            ),
+            "leave the mass to the closure, or mend the other particles",
+        );
+        solver.faults.push(finding.finding());
+    }
+    Ok(())
+}
+
+fn imbalance(solver: &Solver<'_>, id: &ObjectId, collision: &SolvedCollision) -> Option<Fault> {
+    if collision.balanced() {
+        return None;
+    }
+    let unit = &solver.units.solved.energy.symbol;
+    let text = |x: f64| crate::quantity::significant(x, 4);
+    let [de, dx, dy] = collision.difference();
+    Some(
+        Fault::new(
+            id.clone(),
+            "",
+            format!(
+                "it does not balance: after less before is E {}, px {}, py {} {unit}, where {} is allowed",
+                text(de),
+                text(dx),
+                text(dy),
+                text(collision.tolerance),
+            ),
+            "mend a particle, or let one be Closing and the closure find it",
+        )
+        .finding(),
+    )
+}

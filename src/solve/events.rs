@@ -1,0 +1,101 @@
+//! Events: by coordinates, along a line, where lines meet, where light meets a line.
+
+use super::SolvedEvent;
+use super::frames;
+use super::solver::{Solver, Spoiled, fault};
+use crate::fault::ObjectId;
+use crate::geometry::{Displacement, GeometryError};
+use crate::quantity::Typed;
+use crate::scene::{Event, When};
+
+pub(super) fn solve(solver: &Solver<'_>, id: &ObjectId) -> Result<SolvedEvent, Spoiled> {
+    let object = solver.scene.events.get(&id.name).ok_or(None)?;
+    let label = object.common.label.clone();
+    let derived = |at| SolvedEvent {
+        at,
+        exact: None,
+        stated: None,
+        label: label.clone(),
+    };
+    match &object.form {
+        Event::At { t, x, when } => {
+            at(solver, id, (t, x), when).map(|event| SolvedEvent { label, ..event })
+        }
+        Event::Along { line, clock } => {
+            let world = &solver.line(line)?.world;
+            let reading = Solver::quantity(id, "clock", clock, &solver.units.solved.time)?;
+            let at = world
+                .at_clock(reading.value.to_f64())
+                .map_err(|e| no_event(id, "line", &e))?;
+            Ok(derived(at))
+        }
+        Event::Meeting { of } => {
+            let (a, b) = (&solver.line(&of[0])?.world, &solver.line(&of[1])?.world);
+            Ok(derived(a.meeting(b).map_err(|e| no_event(id, "of", &e))?))
+        }
+        Event::LightFrom { event, meets } => {
+            let from = solver.event(event)?.at;
+            let world = &solver.line(meets)?.world;
+            Ok(derived(
+                world
+                    .light_from(from)
+                    .map_err(|e| no_event(id, "meets", &e))?,
+            ))
+        }
+    }
+}
+
+fn no_event(id: &ObjectId, field: &str, error: &GeometryError) -> Spoiled {
+    fault(
+        id,
+        field,
+        error.to_string(),
+        "name another line, or give the event by its coordinates",
+    )
+}
+
+/// An event by its coordinates in a frame. In the base they are kept exact.
+fn at(
+    solver: &Solver<'_>,
+    id: &ObjectId,
+    (t, x): (&Typed, &Typed),
+    when: &When,
+) -> Result<SolvedEvent, Spoiled> {
+    let units = &solver.units;
+    let t = Solver::quantity(id, "t", t, &units.solved.time)?.value;
+    let x = Solver::quantity(id, "x", x, &units.solved.length)?.value;
+    let way = x.over(&units.light_way);
+    let (u, v) = (t.minus(&way).to_f64(), t.plus(&way).to_f64());
+    let given = Displacement::new(u, v, 0.0);
+    if let Some(far) = [u, v].into_iter().find(|c| !in_range(*c)) {
+        let what = format!("its coordinates leave the range 1e-150 to 1e150 ({far:e})");
+        return Err(fault(
+            id,
+            "",
+            what,
+            "choose units in which they are of ordinary size",
+        ));
+    }
+    let frame = frames::named(solver, id, when)?;
+    let Some(frame) = frame else {
+        let stated = Some((t.to_f64(), x.to_f64()));
+        return Ok(SolvedEvent {
+            at: given,
+            exact: Some((t, way)),
+            stated,
+            label: None,
+        });
+    };
+    let outside = |e: GeometryError| fault(id, "frame", e.to_string(), "choose a slower frame");
+    let moved = frame.boost.inverse().apply(given).map_err(outside)?;
+    Ok(SolvedEvent {
+        at: moved + frame.origin,
+        exact: None,
+        stated: None,
+        label: None,
+    })
+}
+
+fn in_range(component: f64) -> bool {
+    component == 0.0 || (1e-150..=1e150).contains(&component.abs())
+}

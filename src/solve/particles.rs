@@ -1,0 +1,431 @@
+//! Particles: mass and state to an energy-momentum vector.
+
+use super::frames;
+use super::solver::{Solver, Spoiled, fault};
+use super::velocity;
+use super::{SolvedParticle, Stated};
+use crate::dynamics::{DynamicsError, Momentum};
+use crate::fault::ObjectId;
+use crate::geometry::{Angle, Rapidity};
+use crate::quantity::{Dimension, Number, Quantity, Typed, Unit, species};
+use crate::scene::{Particle, State, Toward, Velocity, When};
+
+/// A particle's mass: the number, its standard deviation and the half of its last digit, if the scene typed it.
+#[derive(Clone, Debug)]
+pub(super) struct Mass {
+    value: Number,
+    pub(super) uncertainty: Option<f64>,
+    half_digit: f64,
+    label: Option<String>,
+}
+
+impl Mass {
+    /// Rounded.
+    pub(super) fn to_f64(&self) -> f64 {
+        self.value.to_f64()
+    }
+}
+
+pub(super) fn solve(solver: &mut Solver<'_>, id: &ObjectId) -> Result<SolvedParticle, Spoiled> {
+    let object = solver.scene.particles.get(&id.name).ok_or(None)?.clone();
+    let form = &object.form;
+    if form.state == State::Closing {
+        return Err(unclosed(solver, id));
+    }
+    let mass = mass(solver, id, form)?.ok_or_else(|| {
+        fault(
+            id,
+            "",
+            "it has neither species nor mass",
+            "give one of them",
+        )
+    })?;
+    let angle = direction(id, form)?;
+    let frame = frames::named(solver, id, &form.when)?;
+    let inputs = inputs(solver, id, form)?;
+    let make = |nudge: Nudge| {
+        let momentum = vector(form, &mass, &inputs, angle, nudge)?;
+        match &frame {
+            Some(frame) => momentum.boosted(frame.boost.inverse()),
+            None => Ok(momentum),
+        }
+    };
+    let momentum = make(Nudge::None).map_err(|e| impossible(id, form, &e))?;
+    let typed_error = typed_error(&momentum, &mass, &inputs, make);
+    let stated = if frame.is_none() {
+        stated(form, &inputs, angle)
+    } else {
+        Stated::default()
+    };
+    solver.faults.extend(inputs.finding);
+    Ok(SolvedParticle {
+        momentum,
+        species: form.species.clone(),
+        mass_uncertainty: mass.uncertainty,
+        stated,
+        typed_error,
+        label: object.common.label.clone().or(mass.label),
+    })
+}
+
+/// A closing particle that no collision closes.
+fn unclosed(solver: &Solver<'_>, id: &ObjectId) -> Spoiled {
+    let users: Vec<&str> = solver
+        .scene
+        .collisions
+        .iter()
+        .filter(|(_, c)| {
+            c.form
+                .before
+                .iter()
+                .chain(&c.form.after)
+                .any(|name| **name == *id.name)
+        })
+        .map(|(name, _)| &**name)
+        .collect();
+    if users.is_empty() {
+        fault(
+            id,
+            "state",
+            "it is Closing, but stands in no collision",
+            "name it in a collision whose closure is Merge or Remainder, or give its state",
+        )
+    } else {
+        fault(
+            id,
+            "state",
+            format!(
+                "it is Closing, but collision {} cannot find it",
+                users.join(", ")
+            ),
+            "a collision with the closure Merge or Remainder finds one unknown particle",
+        )
+    }
+}
+
+/// The mass of a particle by its species or as typed; none where neither is said.
+pub(super) fn mass(
+    solver: &Solver<'_>,
+    id: &ObjectId,
+    form: &Particle,
+) -> Result<Option<Mass>, Spoiled> {
+    let unit = solver.units.mass();
+    let (quantity, typed, label) = match (&form.species, &form.mass) {
+        (Some(_), Some(_)) => {
+            return Err(fault(
+                id,
+                "mass",
+                "it has a species and a mass",
+                "leave one of them out; a mass of its own goes with no species, or with one of the scene's",
+            ));
+        }
+        (None, None) => return Ok(None),
+        (None, Some(typed)) => (Solver::quantity(id, "mass", typed, &unit)?, true, None),
+        (Some(name), None) => {
+            if let Some(own) = solver.scene.species.get(name.as_str()) {
+                let quantity = Solver::quantity(id, "species", &own.form.mass, &unit)?;
+                (quantity, true, own.common.label.clone())
+            } else if let Some(known) = species(name) {
+                let text = Typed::Text(format!("{} MeV/c^2", known.mass));
+                let quantity = Solver::quantity(id, "species", &text, &unit)?;
+                (quantity, false, Some(known.label.to_owned()))
+            } else {
+                return Err(unknown_species(solver, id, name));
+            }
+        }
+    };
+    let mass = quantity.value.to_f64();
+    if mass < 0.0 || (mass != 0.0 && !(1e-150..=1e150).contains(&mass)) {
+        let what = format!("its mass is {mass}");
+        return Err(fault(
+            id,
+            "mass",
+            what,
+            "a mass is 0, or between 1e-150 and 1e150",
+        ));
+    }
+    Ok(Some(Mass {
+        value: quantity.value,
+        uncertainty: quantity.uncertainty,
+        half_digit: if typed { quantity.half_digit } else { 0.0 },
+        label,
+    }))
+}
+
+fn unknown_species(solver: &Solver<'_>, id: &ObjectId, name: &str) -> Spoiled {
+    let own = solver.scene.species.keys().map(|n| &**n);
+    let known = crate::quantity::SPECIES.iter().map(|s| s.name);
+    let mend = match crate::fault::nearest(name, own.chain(known)) {
+        Some(near) => format!("perhaps \"{near}\" is meant"),
+        None => {
+            "give its mass in place of the species, or add it to the scene's species".to_owned()
+        }
+    };
+    fault(
+        id,
+        "species",
+        format!("there is no species named \"{name}\""),
+        mend,
+    )
+}
+
+/// Direction of the motion; none where the state says it by components.
+fn direction(id: &ObjectId, form: &Particle) -> Result<Angle, Spoiled> {
+    let whole = matches!(
+        form.state,
+        State::Components { .. } | State::Longitudinal { .. }
+    );
+    if whole && (form.angle.is_some() || form.toward.is_some()) {
+        let field = if form.angle.is_some() {
+            "angle"
+        } else {
+            "toward"
+        };
+        return Err(fault(
+            id,
+            field,
+            "its state already says which way it moves",
+            "leave the angle out, or give the state by its size alone",
+        ));
+    }
+    let unsigned = match &form.state {
+        State::Velocity(Velocity::Gamma(_) | Velocity::BehindLight(_))
+        | State::Kinetic(_)
+        | State::Energy(_) => true,
+        State::Velocity(_)
+        | State::Momentum(_)
+        | State::Components { .. }
+        | State::Longitudinal { .. }
+        | State::AtRest
+        | State::Closing => false,
+    };
+    if form.toward.is_some() && !unsigned {
+        return Err(fault(
+            id,
+            "toward",
+            "this state carries its own sign",
+            "leave toward out and give the number its sign",
+        ));
+    }
+    let turn = if form.toward == Some(Toward::Minus) {
+        180.0
+    } else {
+        0.0
+    };
+    match &form.angle {
+        Some(typed) => Ok(Angle::from_degrees(frames::degrees(id, typed)? + turn)),
+        None => Ok(Angle::from_degrees(turn)),
+    }
+}
+
+/// The typed numbers of a state, read.
+#[derive(Debug)]
+struct Inputs {
+    /// One or two numbers, in the order of the form.
+    numbers: Vec<Quantity>,
+    /// The rapidity of a velocity.
+    rapidity: Option<Rapidity>,
+    finding: Option<crate::fault::Fault>,
+}
+
+fn inputs(solver: &Solver<'_>, id: &ObjectId, form: &Particle) -> Result<Inputs, Spoiled> {
+    let energy = solver.units.solved.energy.clone();
+    let momentum = solver.units.momentum();
+    let plain = Unit::base(Dimension::Plain);
+    let mut numbers = Vec::new();
+    let mut push = |field: &str, typed: &Typed, unit: &Unit| -> Result<(), Spoiled> {
+        numbers.push(Solver::quantity(id, field, typed, unit)?);
+        Ok(())
+    };
+    match &form.state {
+        State::Velocity(velocity) => {
+            // The toward of a particle turns its direction; the number itself stays positive.
+            let typing = velocity::read(id, "state", velocity, None)?;
+            let numbers = vec![typing.quantity];
+            let rapidity = Some(typing.rapidity);
+            return Ok(Inputs {
+                numbers,
+                rapidity,
+                finding: typing.finding,
+            });
+        }
+        State::Kinetic(typed) | State::Energy(typed) => push("state", typed, &energy)?,
+        State::Momentum(typed) => push("state", typed, &momentum)?,
+        State::Components { px, py } => {
+            push("state.px", px, &momentum)?;
+            push("state.py", py, &momentum)?;
+        }
+        State::Longitudinal { rapidity, py } => {
+            push("state.rapidity", rapidity, &plain)?;
+            push("state.py", py, &momentum)?;
+        }
+        State::AtRest | State::Closing => {}
+    }
+    Ok(Inputs {
+        numbers,
+        rapidity: None,
+        finding: None,
+    })
+}
+
+/// Which typed number is moved by half its last digit.
+#[derive(Clone, Copy, Debug, PartialEq)]
+enum Nudge {
+    None,
+    Number(usize),
+    Mass,
+}
+
+fn vector(
+    form: &Particle,
+    mass: &Mass,
+    inputs: &Inputs,
+    angle: Angle,
+    nudge: Nudge,
+) -> Result<Momentum, DynamicsError> {
+    let m_exact = moved(&mass.value, mass.half_digit, nudge == Nudge::Mass);
+    let m = m_exact.to_f64();
+    let number = |i: usize| {
+        let q = &inputs.numbers[i];
+        moved(&q.value, q.half_digit, nudge == Nudge::Number(i))
+    };
+    match &form.state {
+        State::Velocity(velocity) => {
+            let rapidity = match (inputs.rapidity, nudge) {
+                (Some(rapidity), Nudge::None | Nudge::Mass) => rapidity,
+                _ => nudged_rapidity(velocity, &number(0))?,
+            };
+            Momentum::moving(m, rapidity, angle)
+        }
+        State::Kinetic(_) => Momentum::from_kinetic(m, number(0).to_f64(), angle),
+        State::Energy(_) => Momentum::from_energy(m, number(0).minus(&m_exact).to_f64(), angle),
+        State::Momentum(_) => Momentum::from_momentum(m, number(0).to_f64(), angle),
+        State::Components { .. } => {
+            Momentum::from_components(m, number(0).to_f64(), number(1).to_f64())
+        }
+        State::Longitudinal { .. } => {
+            Momentum::longitudinal(m, Rapidity::new(number(0).to_f64())?, number(1).to_f64())
+        }
+        State::AtRest | State::Closing => Momentum::at_rest(m),
+    }
+}
+
+fn nudged_rapidity(velocity: &Velocity, number: &Number) -> Result<Rapidity, DynamicsError> {
+    Ok(velocity::rapidity_of(
+        velocity,
+        number,
+        crate::geometry::Side::Plus,
+    )?)
+}
+
+fn moved(value: &Number, by: f64, yes: bool) -> Number {
+    if yes {
+        value.plus(&Number::Real(by))
+    } else {
+        value.clone()
+    }
+}
+
+/// How far half a last typed digit of each input moves the energy or the momentum, added up.
+fn typed_error(
+    momentum: &Momentum,
+    mass: &Mass,
+    inputs: &Inputs,
+    make: impl Fn(Nudge) -> Result<Momentum, DynamicsError>,
+) -> f64 {
+    let mut nudges: Vec<Nudge> = (0..inputs.numbers.len())
+        .filter(|&i| inputs.numbers[i].half_digit > 0.0)
+        .map(Nudge::Number)
+        .collect();
+    if mass.half_digit > 0.0 {
+        nudges.push(Nudge::Mass);
+    }
+    nudges
+        .into_iter()
+        .filter_map(|nudge| make(nudge).ok())
+        .map(|other| {
+            let de = (other.energy() - momentum.energy()).abs();
+            let dx = (other.px() - momentum.px()).abs();
+            de.max(dx).max((other.py() - momentum.py()).abs())
+        })
+        .sum()
+}
+
+/// What was typed and what follows from it without arithmetic, to be shown in the base frame as typed.
+fn stated(form: &Particle, inputs: &Inputs, angle: Angle) -> Stated {
+    let number = |i: usize| inputs.numbers.get(i).map(|q| q.value.to_f64());
+    let mut stated = Stated::default();
+    if form.angle.is_some() {
+        stated.angle = Some(angle.degrees());
+    }
+    let along = (angle.sin() == 0.0).then(|| angle.cos());
+    match &form.state {
+        State::Velocity(velocity) => match velocity {
+            Velocity::Beta(_) => {
+                stated.beta = number(0).map(f64::abs);
+                stated.beta_x = along.and_then(|s| number(0).map(|b| s * b));
+            }
+            Velocity::Gamma(_) => stated.gamma = number(0),
+            Velocity::BehindLight(_) => stated.one_minus_beta = number(0),
+            Velocity::Celerity(_) | Velocity::Rapidity(_) | Velocity::Doppler(_) => {}
+        },
+        State::Kinetic(_) => stated.kinetic = number(0),
+        State::Energy(_) => stated.energy = number(0),
+        State::Momentum(_) => {
+            stated.px = along.and_then(|s| number(0).map(|p| s * p));
+        }
+        State::Components { .. } => {
+            stated.px = number(0);
+            stated.py = number(1);
+        }
+        State::Longitudinal { .. } => stated.py = number(1),
+        State::AtRest | State::Closing => {}
+    }
+    stated
+}
+
+fn impossible(id: &ObjectId, form: &Particle, error: &DynamicsError) -> Spoiled {
+    let mend = match &form.state {
+        State::Energy(_) => "a total energy is at least the mass",
+        State::Kinetic(_) => "a kinetic energy is not negative",
+        State::AtRest | State::Velocity(_) => {
+            "light needs an energy or a momentum; a mass needs a velocity below that of light"
+        }
+        State::Momentum(_) | State::Components { .. } | State::Longitudinal { .. } => {
+            "give numbers of ordinary size in the scene's units"
+        }
+        State::Closing => "give its state",
+    };
+    fault(id, "state", error.to_string(), mend)
+}
+
+/// A particle that a collision has found.
+pub(super) fn closed(
+    solver: &Solver<'_>,
+    id: &ObjectId,
+    momentum: Momentum,
+) -> Result<SolvedParticle, Spoiled> {
+    let object = solver.scene.particles.get(&id.name).ok_or(None)?;
+    let form = &object.form;
+    if form.angle.is_some() || form.toward.is_some() || form.when != When::Base {
+        return Err(fault(
+            id,
+            "state",
+            "it is Closing, so its collision finds its motion",
+            "leave angle, toward and frame out",
+        ));
+    }
+    let mass = mass(solver, id, form)?;
+    Ok(SolvedParticle {
+        momentum,
+        species: form.species.clone(),
+        mass_uncertainty: None,
+        stated: Stated::default(),
+        typed_error: 0.0,
+        label: object
+            .common
+            .label
+            .clone()
+            .or_else(|| mass.and_then(|m| m.label)),
+    })
+}
