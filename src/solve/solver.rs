@@ -52,11 +52,8 @@ pub fn solve(scene: &Scene, unread: &[ObjectId]) -> Solved {
         }
     }
     checks::trims(&mut solver, unread);
-    let left_out = order
-        .out
-        .iter()
-        .map(|&node| graph::id_of(scene, node))
-        .collect();
+    let out = order.out.iter().map(|&node| graph::id_of(scene, node));
+    let left_out = out.chain(unread.iter().cloned()).collect();
     solver.finish(left_out)
 }
 

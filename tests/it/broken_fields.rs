@@ -75,9 +75,13 @@ fn a_broken_value_is_pointed_at() {
                 path.display()
             );
             let (line, column) = place(&text, start);
-            let wanted = format!("scene.ron:{line}:{column}:");
+            let pointed = |said: &String| {
+                let mut parts = said.split(':').skip(1).map_while(|n| n.parse::<usize>().ok());
+                parts.next() == Some(line)
+                    && parts.next().is_some_and(|c| (column..column + BROKEN.len()).contains(&c))
+            };
             assert!(
-                lines.iter().any(|l| l.starts_with(&wanted)),
+                lines.iter().any(pointed),
                 "{}: {what} broken at {line}:{column}, but this is said:\n{}",
                 path.display(),
                 lines.join("\n"),
