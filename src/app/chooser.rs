@@ -34,7 +34,10 @@ impl Chooser {
     pub(super) fn at(folder: &Path) -> Self {
         let (entries, fault) = match list(folder) {
             Ok(entries) => (entries, None),
-            Err(fault) => (Vec::new(), Some(format!("{} cannot be listed: {fault}", folder.display()))),
+            Err(fault) => (
+                Vec::new(),
+                Some(format!("{} cannot be listed: {fault}", folder.display())),
+            ),
         };
         Self {
             path: format!("{}{}", folder.display(), std::path::MAIN_SEPARATOR),
@@ -53,7 +56,9 @@ fn list(folder: &Path) -> std::io::Result<Vec<Entry>> {
         let entry = entry?;
         let name = entry.file_name().to_string_lossy().into_owned();
         let is_file = !entry.path().is_dir();
-        let is_scene = Path::new(&name).extension().is_some_and(|e| e.eq_ignore_ascii_case("ron"));
+        let is_scene = Path::new(&name)
+            .extension()
+            .is_some_and(|e| e.eq_ignore_ascii_case("ron"));
         if !name.starts_with('.') && (!is_file || is_scene) {
             entries.push(Entry { is_file, name });
         }
@@ -72,7 +77,11 @@ pub(super) fn chooser(ui: &Ui, state: &mut Chooser, refused: Option<&str>, wishe
         let fault = state.fault.as_deref().or(refused);
         if let Some(fault) = fault {
             let c = colours(ui);
-            ui.label(egui::RichText::new(fault).font(Type::Caption.font()).color(c.fault));
+            ui.label(
+                egui::RichText::new(fault)
+                    .font(Type::Caption.font())
+                    .color(c.fault),
+            );
         }
         ui.add_space(8.0);
         folder(ui, state, wishes);
@@ -103,28 +112,44 @@ fn field(ui: &mut Ui, state: &mut Chooser, wishes: &mut Wishes) {
 /// A folder is gone to, anything else is opened.
 fn chosen(path: &str) -> Command {
     let path = PathBuf::from(path.trim());
-    if path.is_dir() { Command::Browse(path) } else { Command::Open(path) }
+    if path.is_dir() {
+        Command::Browse(path)
+    } else {
+        Command::Open(path)
+    }
 }
 
 fn folder(ui: &mut Ui, state: &Chooser, wishes: &mut Wishes) {
-    ScrollArea::vertical().max_height(300.0).min_scrolled_height(120.0).auto_shrink([false, true]).show(ui, |ui| {
-        ui.spacing_mut().item_spacing.y = 2.0;
-        if let Some(parent) = state.folder.parent()
-            && ui.selectable_label(false, "Folder above").clicked()
-        {
-            wishes.push(Command::Browse(parent.to_owned()));
-        }
-        for entry in &state.entries {
-            let path = state.folder.join(&entry.name);
-            let words = if entry.is_file { entry.name.clone() } else { format!("{}/", entry.name) };
-            if ui.selectable_label(false, words).clicked() {
-                wishes.push(if entry.is_file { Command::Open(path) } else { Command::Browse(path) });
+    ScrollArea::vertical()
+        .max_height(300.0)
+        .min_scrolled_height(120.0)
+        .auto_shrink([false, true])
+        .show(ui, |ui| {
+            ui.spacing_mut().item_spacing.y = 2.0;
+            if let Some(parent) = state.folder.parent()
+                && ui.selectable_label(false, "Folder above").clicked()
+            {
+                wishes.push(Command::Browse(parent.to_owned()));
             }
-        }
-        if state.entries.is_empty() && state.fault.is_none() {
-            ui.weak("No scenes (.ron) and no folders here.");
-        }
-    });
+            for entry in &state.entries {
+                let path = state.folder.join(&entry.name);
+                let words = if entry.is_file {
+                    entry.name.clone()
+                } else {
+                    format!("{}/", entry.name)
+                };
+                if ui.selectable_label(false, words).clicked() {
+                    wishes.push(if entry.is_file {
+                        Command::Open(path)
+                    } else {
+                        Command::Browse(path)
+                    });
+                }
+            }
+            if state.entries.is_empty() && state.fault.is_none() {
+                ui.weak("No scenes (.ron) and no folders here.");
+            }
+        });
 }
 
 fn buttons(ui: &mut Ui, state: &Chooser, wishes: &mut Wishes) {

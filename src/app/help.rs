@@ -21,15 +21,39 @@ const PLACES: &[(&str, &str)] = &[
 
 /// What the desk's words mean.
 const WORDS: &[(&str, &str)] = &[
-    ("base frame", "The frame in which a scene's plain coordinates are given."),
-    ("viewing frame", "The frame a panel is drawn in, given by its rapidity relative to the base frame."),
-    ("rapidity", "artanh of v/c along x. Rapidities along one line add; equal lengths on the rail are equal relative rapidities."),
-    ("β, γ, k", "Speed over c, the Lorentz factor, and the Doppler factor e to the rapidity."),
-    ("line", "A worldline: of a clock, an observer, a particle, a light pulse."),
-    ("collision", "An event with particles before and particles after. A decay is one."),
-    ("conserved", "The same before and after, in one frame: two upright strokes between the sums."),
+    (
+        "base frame",
+        "The frame in which a scene's plain coordinates are given.",
+    ),
+    (
+        "viewing frame",
+        "The frame a panel is drawn in, given by its rapidity relative to the base frame.",
+    ),
+    (
+        "rapidity",
+        "artanh of v/c along x. Rapidities along one line add; equal lengths on the rail are equal relative rapidities.",
+    ),
+    (
+        "β, γ, k",
+        "Speed over c, the Lorentz factor, and the Doppler factor e to the rapidity.",
+    ),
+    (
+        "line",
+        "A worldline: of a clock, an observer, a particle, a light pulse.",
+    ),
+    (
+        "collision",
+        "An event with particles before and particles after. A decay is one.",
+    ),
+    (
+        "conserved",
+        "The same before and after, in one frame: two upright strokes between the sums.",
+    ),
     ("invariant", "The same for every observer."),
-    ("finding", "What is to be mended or known, with the object it is about."),
+    (
+        "finding",
+        "What is to be mended or known, with the object it is about.",
+    ),
 ];
 
 /// Shows a page.
@@ -54,14 +78,17 @@ pub(super) fn page(ui: &Ui, page: Help, wishes: &mut Wishes) {
 fn rows<'a>(ui: &mut Ui, name: &str, rows: impl Iterator<Item = (&'a str, String)>) {
     let quiet = colours(ui).quiet;
     ScrollArea::vertical().max_height(420.0).show(ui, |ui| {
-        Grid::new(name).num_columns(2).spacing([24.0, 6.0]).show(ui, |ui| {
-            for (first, second) in rows {
-                ui.label(first);
-                ui.set_max_width(360.0);
-                ui.add(egui::Label::new(RichText::new(second).color(quiet)).wrap());
-                ui.end_row();
-            }
-        });
+        Grid::new(name)
+            .num_columns(2)
+            .spacing([24.0, 6.0])
+            .show(ui, |ui| {
+                for (first, second) in rows {
+                    ui.label(first);
+                    ui.set_max_width(360.0);
+                    ui.add(egui::Label::new(RichText::new(second).color(quiet)).wrap());
+                    ui.end_row();
+                }
+            });
     });
 }
 
@@ -69,15 +96,25 @@ fn shortcuts(ui: &mut Ui) {
     ui.heading("Shortcuts");
     ui.add_space(8.0);
     let ctx = ui.ctx().clone();
-    let actions = ACTIONS.iter().filter_map(|a| Some((a.words, ctx.format_shortcut(&a.keys?))));
-    let places = PLACES.iter().map(|(what, keys)| (*what, (*keys).to_owned()));
+    let actions = ACTIONS
+        .iter()
+        .filter_map(|a| Some((a.words, ctx.format_shortcut(&a.keys?))));
+    let places = PLACES
+        .iter()
+        .map(|(what, keys)| (*what, (*keys).to_owned()));
     rows(ui, "shortcuts", actions.chain(places));
 }
 
 fn words(ui: &mut Ui) {
     ui.heading("Words used here");
     ui.add_space(8.0);
-    rows(ui, "words", WORDS.iter().map(|(word, meaning)| (*word, (*meaning).to_owned())));
+    rows(
+        ui,
+        "words",
+        WORDS
+            .iter()
+            .map(|(word, meaning)| (*word, (*meaning).to_owned())),
+    );
 }
 
 fn about(ui: &mut Ui) {

@@ -141,7 +141,14 @@ impl Type {
             Self::Caption => (12.0, false),
             Self::CaptionStrong => (12.0, true),
         };
-        FontId::new(size, if strong { semibold() } else { FontFamily::Proportional })
+        FontId::new(
+            size,
+            if strong {
+                semibold()
+            } else {
+                FontFamily::Proportional
+            },
+        )
     }
 
     /// Body or its strong form.
@@ -151,7 +158,11 @@ impl Type {
 
     /// Caption or its strong form.
     pub(crate) fn caption(strong: bool) -> Self {
-        if strong { Self::CaptionStrong } else { Self::Caption }
+        if strong {
+            Self::CaptionStrong
+        } else {
+            Self::Caption
+        }
     }
 }
 

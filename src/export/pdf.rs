@@ -79,13 +79,26 @@ pub fn pdf(sheet: &Sheet, lettering: Lettering) -> Result<Vec<u8>, ExportFault> 
 }
 
 /// Draws all marks; the pieces of tagged content, in order.
-fn draw(surface: Surface<'_>, sheet: &Sheet, lettering: Lettering) -> Result<Vec<Identifier>, String> {
-    let mut writer = Writer { surface, fonts: BTreeMap::new(), tagged: Vec::new() };
-    for run in sheet.marks.chunk_by(|a, b| is_path(&a.shape) && is_path(&b.shape)) {
+fn draw(
+    surface: Surface<'_>,
+    sheet: &Sheet,
+    lettering: Lettering,
+) -> Result<Vec<Identifier>, String> {
+    let mut writer = Writer {
+        surface,
+        fonts: BTreeMap::new(),
+        tagged: Vec::new(),
+    };
+    for run in sheet
+        .marks
+        .chunk_by(|a, b| is_path(&a.shape) && is_path(&b.shape))
+    {
         let shapes: Vec<&Shape> = run.iter().map(|mark| &mark.shape).collect();
         writer.run(&shapes, lettering == Lettering::Outline)?;
     }
-    let Writer { surface, tagged, .. } = writer;
+    let Writer {
+        surface, tagged, ..
+    } = writer;
     surface.finish();
     Ok(tagged)
 }

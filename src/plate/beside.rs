@@ -36,7 +36,13 @@ const OTHER_SIDE: f64 = 0.7;
 const DISTANCES: usize = 6;
 
 /// Places beside some spots, nearest first.
-pub(super) fn beside(canvas: &Canvas<'_>, label: &Label, spots: &[Spot], sides: Sides, half: f64) -> Vec<Candidate> {
+pub(super) fn beside(
+    canvas: &Canvas<'_>,
+    label: &Label,
+    spots: &[Spot],
+    sides: Sides,
+    half: f64,
+) -> Vec<Candidate> {
     let size = canvas.size(label);
     let em = canvas.style.em;
     let [nearest, _, farthest] = canvas.style.name;
@@ -73,7 +79,11 @@ pub(super) fn spots((a, b): (Point, Point), parts: &[f64]) -> Vec<Spot> {
     parts
         .iter()
         .enumerate()
-        .map(|(i, &part)| Spot { foot: a.lerp(b, part), along, order: SPOT_ORDER * i as f64 })
+        .map(|(i, &part)| Spot {
+            foot: a.lerp(b, part),
+            along,
+            order: SPOT_ORDER * i as f64,
+        })
         .collect()
 }
 

@@ -30,7 +30,11 @@ impl Wanted {
         let (w, h) = (self.contents.width(), self.contents.height());
         let far = self.contents.x0.abs().max(self.contents.y0.abs());
         let least = FLAT * w.max(h);
-        let least = if least > far * 1e-9 && least > 0.0 { least } else { (far * 1e-3).max(1.0) };
+        let least = if least > far * 1e-9 && least > 0.0 {
+            least
+        } else {
+            (far * 1e-3).max(1.0)
+        };
         Size::new(w.max(least), h.max(least))
     }
 
@@ -156,7 +160,11 @@ mod tests {
             Rect::new(5e8, 5e8, 7e8, 7e8),
             Rect::new(0.0, -3.0, 1e-9, 0.0),
         ] {
-            let wanted = Wanted { x: None, y: None, contents };
+            let wanted = Wanted {
+                x: None,
+                y: None,
+                contents,
+            };
             let (plane, _, _) = wanted.fit(Size::new(78.3, 75.4), &style);
             assert!(plane.union(contents) == plane, "{contents:?} {plane:?}");
         }

@@ -236,7 +236,11 @@ fn distance(piece: &Piece, r: Rect) -> f64 {
 fn to_segment(p: Point, a: Point, b: Point) -> f64 {
     let d = b - a;
     let length = d.hypot2();
-    let s = if length > 0.0 { ((p - a).dot(d) / length).clamp(0.0, 1.0) } else { 0.0 };
+    let s = if length > 0.0 {
+        ((p - a).dot(d) / length).clamp(0.0, 1.0)
+    } else {
+        0.0
+    };
     (p - (a + d * s)).hypot()
 }
 
@@ -312,8 +316,16 @@ mod tests {
         let mut places = places();
         let near = Rect::new(10.0, 10.0, 14.0, 12.0);
         let next = Rect::new(10.0, 20.0, 14.0, 22.0);
-        let candidates =
-            [Candidate { rect: near, cost: 0.0 }, Candidate { rect: next, cost: 1.0 }];
+        let candidates = [
+            Candidate {
+                rect: near,
+                cost: 0.0,
+            },
+            Candidate {
+                rect: next,
+                cost: 1.0,
+            },
+        ];
         let first = places.best(&candidates).unwrap();
         places.add_label(first);
         assert_eq!((first, places.best(&candidates)), (near, Some(next)));

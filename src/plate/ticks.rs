@@ -43,7 +43,12 @@ impl Step {
             return None;
         }
         let exponent = leading_power(least);
-        let choices = [(1, exponent), (2, exponent), (5, exponent), (1, exponent + 1)];
+        let choices = [
+            (1, exponent),
+            (2, exponent),
+            (5, exponent),
+            (1, exponent + 1),
+        ];
         choices
             .into_iter()
             .map(|(mantissa, exponent)| Self { mantissa, exponent })
@@ -76,14 +81,20 @@ impl Step {
             return (1, 0);
         }
         let (first, last) = (first as i64, last as i64);
-        if last - first > MOST { (1, 0) } else { (first, last) }
+        if last - first > MOST {
+            (1, 0)
+        } else {
+            (first, last)
+        }
     }
 }
 
 /// The power of ten of the leading digit of a finite number above 0.
 fn leading_power(value: f64) -> i32 {
     let text = format!("{value:e}");
-    text.split_once('e').and_then(|(_, e)| e.parse().ok()).unwrap_or(0)
+    text.split_once('e')
+        .and_then(|(_, e)| e.parse().ok())
+        .unwrap_or(0)
 }
 
 /// `digits` times ten to `exponent`, correctly rounded.
@@ -94,14 +105,24 @@ fn decimal(digits: i64, exponent: i32) -> f64 {
 impl Ticks {
     /// Those strictly inside an axis that runs from `low` to `high`, at least `apart` from each other.
     pub(super) fn between(low: f64, high: f64, apart: f64) -> Self {
-        let step = Step::at_least(apart).unwrap_or(Step { mantissa: 1, exponent: 0 });
+        let step = Step::at_least(apart).unwrap_or(Step {
+            mantissa: 1,
+            exponent: 0,
+        });
         let (first, last) = step.counts(low, high);
         let ticks: Vec<Tick> = (first..=last)
-            .map(|count| Tick { count, value: step.times(count) })
+            .map(|count| Tick {
+                count,
+                value: step.times(count),
+            })
             .filter(|tick| low < tick.value && tick.value < high)
             .collect();
         let largest = ticks.iter().map(|t| t.value.abs()).fold(0.0, f64::max);
-        let leading = if largest > 0.0 { leading_power(largest) } else { 0 };
+        let leading = if largest > 0.0 {
+            leading_power(largest)
+        } else {
+            0
+        };
         let large = leading > MOST_DIGITS;
         let small = step.exponent < -MOST_DIGITS + 1 && leading < 0;
         let power = if large || small { leading } else { 0 };

@@ -30,7 +30,12 @@ pub(in crate::app) fn bounded(scale: f32) -> f32 {
 
 impl Lie {
     /// For a sheet of some mm in a region.
-    pub(super) fn new(rect: Rect, (width, height): (f64, f64), camera: Camera, pixels_per_point: f32) -> Self {
+    pub(super) fn new(
+        rect: Rect,
+        (width, height): (f64, f64),
+        camera: Camera,
+        pixels_per_point: f32,
+    ) -> Self {
         let room = room(rect);
         let size = vec2(width as f32, height as f32).max(vec2(1.0, 1.0));
         let (scale, offset) = match camera {

@@ -33,14 +33,25 @@ pub(in crate::app) struct Picture {
 
 impl std::fmt::Debug for Picture {
     fn fmt(&self, f: &mut std::fmt::Formatter<'_>) -> std::fmt::Result {
-        f.debug_struct("Picture").field("key", &self.key).finish_non_exhaustive()
+        f.debug_struct("Picture")
+            .field("key", &self.key)
+            .finish_non_exhaustive()
     }
 }
 
 impl Picture {
     /// Paints the part of the paper that lies in the region.
-    pub(super) fn paint(&mut self, ui: &Ui, painter: &Painter, rect: Rect, lie: &Lie, context: &Context<'_>) {
-        let Some(laid) = &context.shown.laid else { return };
+    pub(super) fn paint(
+        &mut self,
+        ui: &Ui,
+        painter: &Painter,
+        rect: Rect,
+        lie: &Lie,
+        context: &Context<'_>,
+    ) {
+        let Some(laid) = &context.shown.laid else {
+            return;
+        };
         let ppp = ui.pixels_per_point();
         let visible = lie.paper.intersect(rect);
         if visible.width() < 1.0 || visible.height() < 1.0 {
@@ -48,7 +59,10 @@ impl Picture {
         }
         let px = |v: f32| (v * ppp).round().max(0.0) as u32;
         let from = (visible.min - lie.paper.min) * ppp;
-        let (left, top) = (from.x.floor().max(0.0) as u32, from.y.floor().max(0.0) as u32);
+        let (left, top) = (
+            from.x.floor().max(0.0) as u32,
+            from.y.floor().max(0.0) as u32,
+        );
         let (width, height) = (px(visible.width()).max(1), px(visible.height()).max(1));
         let key = Key {
             version: context.shown.version,
@@ -69,11 +83,22 @@ impl Picture {
             let corner = lie.paper.min + vec2(left as f32, top as f32) / ppp;
             let size = vec2(width as f32, height as f32) / ppp;
             let uv = Rect::from_min_max(pos2(0.0, 0.0), pos2(1.0, 1.0));
-            painter.image(texture.id(), Rect::from_min_size(corner, size), uv, Color32::WHITE);
+            painter.image(
+                texture.id(),
+                Rect::from_min_size(corner, size),
+                uv,
+                Color32::WHITE,
+            );
         }
     }
 
-    fn draw(&mut self, sheet: &Sheet, scale: f64, key: &Key, context: &Context<'_>) -> Option<Pixmap> {
+    fn draw(
+        &mut self,
+        sheet: &Sheet,
+        scale: f64,
+        key: &Key,
+        context: &Context<'_>,
+    ) -> Option<Pixmap> {
         let fresh = self
             .raster
             .as_ref()
@@ -162,7 +187,11 @@ impl Chosen<'_> {
         };
         let wide = f64::from(BAND) * pixels_per_point;
         self.paint(&mut layer, &Paint::default(), 2.5 * pixels_per_point, wide);
-        for (dot, over) in pixmap.data_mut().chunks_exact_mut(4).zip(layer.data().chunks_exact(4)) {
+        for (dot, over) in pixmap
+            .data_mut()
+            .chunks_exact_mut(4)
+            .zip(layer.data().chunks_exact(4))
+        {
             let [r, g, b, _] = *dot else { continue };
             let paper = u32::from(r.min(g).min(b)) * u32::from(over[3]);
             for (channel, band) in dot.iter_mut().zip(SELECTION) {

@@ -129,7 +129,11 @@ impl Edge {
         match self.across {
             0 if start < 0 => span.1 = span.0,
             0 => {}
-            step if step > 0 => span.0 = span.0.max((-start).div_euclid(step) + i64::from((-start).rem_euclid(step) > 0)),
+            step if step > 0 => {
+                span.0 = span
+                    .0
+                    .max((-start).div_euclid(step) + i64::from((-start).rem_euclid(step) > 0))
+            }
             step => span.1 = span.1.min(start.div_euclid(-step) + 1),
         }
     }
@@ -282,7 +286,12 @@ mod tests {
     #[test]
     fn triangles_that_share_an_edge_cover_each_pixel_once() {
         let half = Color32::from_rgba_premultiplied(100, 0, 0, 100);
-        let (a, b, c, d) = (pos2(1.3, 2.1), pos2(14.2, 1.7), pos2(13.1, 14.6), pos2(2.4, 13.3));
+        let (a, b, c, d) = (
+            pos2(1.3, 2.1),
+            pos2(14.2, 1.7),
+            pos2(13.1, 14.6),
+            pos2(2.4, 13.3),
+        );
         let picture = painted(&[[a, b, c], [a, c, d]], half);
         let reds: std::collections::BTreeSet<u8> = picture.pixels().iter().map(|p| p[0]).collect();
         assert_eq!(reds.into_iter().collect::<Vec<_>>(), [0, 100]);
@@ -290,7 +299,12 @@ mod tests {
 
     #[test]
     fn a_square_on_whole_pixels_fills_just_these() {
-        let (a, b, c, d) = (pos2(3.0, 4.0), pos2(7.0, 4.0), pos2(7.0, 9.0), pos2(3.0, 9.0));
+        let (a, b, c, d) = (
+            pos2(3.0, 4.0),
+            pos2(7.0, 4.0),
+            pos2(7.0, 9.0),
+            pos2(3.0, 9.0),
+        );
         let picture = painted(&[[a, b, c], [a, c, d]], Color32::WHITE);
         for (i, pixel) in picture.pixels().iter().enumerate() {
             let inside = (3..7).contains(&(i % 16)) && (4..9).contains(&(i / 16));

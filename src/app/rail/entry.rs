@@ -30,17 +30,38 @@ pub(super) fn row(ui: &mut Ui, layout: &Layout, context: &Context<'_>, wishes: &
     let gap = if wide { 20.0 } else { 12.0 };
     let y = layout.rect.top() + ROW;
     let left = layout.rect.left() + MARGIN;
-    let label = text::put(ui.painter(), pos2(left, y), Align::LEFT, "Viewing frame", Type::Body, c.quiet);
+    let label = text::put(
+        ui.painter(),
+        pos2(left, y),
+        Align::LEFT,
+        "Viewing frame",
+        Type::Body,
+        c.quiet,
+    );
     let mut x = (label.right() + 10.0).round();
     let rect = Rect::from_min_size(pos2(x, y - CONTROL / 2.0), vec2(CHOOSER, CONTROL));
     frames(ui, rect, layout, context, wishes);
     x = rect.right() + 8.0;
     let seen = seen_from(context);
-    let place = text::put(ui.painter(), pos2(x, y), Align::LEFT, &seen, Type::Body, c.quiet);
+    let place = text::put(
+        ui.painter(),
+        pos2(x, y),
+        Align::LEFT,
+        &seen,
+        Type::Body,
+        c.quiet,
+    );
     x = place.right() + gap + 4.0;
     let values = speeds(layout.rapidity);
     for (form, name) in FORMS {
-        let label = text::put(ui.painter(), pos2(x.round(), y), Align::LEFT, name, Type::Body, c.quiet);
+        let label = text::put(
+            ui.painter(),
+            pos2(x.round(), y),
+            Align::LEFT,
+            name,
+            Type::Body,
+            c.quiet,
+        );
         let left = (label.right() + 7.0).round();
         let size = vec2(widgets::field_width(layout.rect.width()), CONTROL);
         let rect = Rect::from_min_size(pos2(left, y - CONTROL / 2.0), size);
@@ -155,7 +176,9 @@ fn field(
             text,
             fault: None,
         })),
-        Some(Entered::Done(text)) if plain(&text) == plain(&value) || text.trim().is_empty() => RailCommand::Entry(None),
+        Some(Entered::Done(text)) if plain(&text) == plain(&value) || text.trim().is_empty() => {
+            RailCommand::Entry(None)
+        }
         Some(Entered::Done(text)) => match rapidity_from(form, &plain(&text), values.rapidity) {
             Ok(rapidity) => {
                 wishes.push(Command::Frame(at_rapidity(rapidity)));
@@ -240,7 +263,9 @@ fn reason(ui: &Ui, rect: Rect, fault: &str) {
                 .inner_margin(8)
                 .show(ui, |ui| {
                     ui.set_max_width(280.0);
-                    let words = egui::RichText::new(fault).font(Type::Caption.font()).color(c.fault);
+                    let words = egui::RichText::new(fault)
+                        .font(Type::Caption.font())
+                        .color(c.fault);
                     ui.label(words);
                 });
         });
@@ -262,7 +287,10 @@ mod tests {
         let values = speeds(18.0);
         assert_eq!(shown(SpeedForm::Beta, &values), "1 \u{2212} 4.6e\u{2212}16");
         let values = speeds(-18.0);
-        assert_eq!(shown(SpeedForm::Beta, &values), "\u{2212}1 + 4.6e\u{2212}16");
+        assert_eq!(
+            shown(SpeedForm::Beta, &values),
+            "\u{2212}1 + 4.6e\u{2212}16"
+        );
     }
 
     #[test]
@@ -271,7 +299,10 @@ mod tests {
             let values = speeds(rapidity);
             for (form, name) in FORMS {
                 let back = rapidity_from(form, &plain(&shown(form, &values)), rapidity).unwrap();
-                assert!((back - rapidity).abs() < 1e-4, "{name} of {rapidity}: {back}");
+                assert!(
+                    (back - rapidity).abs() < 1e-4,
+                    "{name} of {rapidity}: {back}"
+                );
             }
         }
     }

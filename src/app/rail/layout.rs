@@ -114,12 +114,9 @@ fn kind(thing: &RapidityTick) -> TickKind {
         Kind::Frame if thing.is_base => TickKind::Base,
         Kind::Frame => TickKind::Frame,
         Kind::Particle => TickKind::Particle,
-        Kind::Line
-        | Kind::Scene
-        | Kind::Species
-        | Kind::Event
-        | Kind::Collision
-        | Kind::Plate => TickKind::Line,
+        Kind::Line | Kind::Scene | Kind::Species | Kind::Event | Kind::Collision | Kind::Plate => {
+            TickKind::Line
+        }
     }
 }
 
@@ -351,7 +348,13 @@ impl Name {
 pub(super) type Measure<'a> = &'a dyn Fn(&str) -> f32;
 
 /// Names of the ticks on the axis; runs that crowd become brackets.
-pub(super) fn names(ticks: &[Tick], things: &[RapidityTick], scale: &Scale, width: f32, measure: Measure<'_>) -> Vec<Name> {
+pub(super) fn names(
+    ticks: &[Tick],
+    things: &[RapidityTick],
+    scale: &Scale,
+    width: f32,
+    measure: Measure<'_>,
+) -> Vec<Name> {
     let mut names: Vec<Name> = ticks
         .iter()
         .enumerate()
@@ -399,7 +402,12 @@ fn crowded(names: &[Name]) -> Option<Range<usize>> {
     crowds
         .iter()
         .find(failing)
-        .or_else(|| crowds.iter().filter(|c| c.len() > 1).max_by_key(|c| c.len()))
+        .or_else(|| {
+            crowds
+                .iter()
+                .filter(|c| c.len() > 1)
+                .max_by_key(|c| c.len())
+        })
         .cloned()
         .or(Some(run))
 }
@@ -499,7 +507,12 @@ pub(super) struct CloseUp {
 }
 
 /// The close-up of a bracket.
-pub(super) fn close_up(bracket: &Name, ticks: &[Tick], width: f32, measure: Measure<'_>) -> CloseUp {
+pub(super) fn close_up(
+    bracket: &Name,
+    ticks: &[Tick],
+    width: f32,
+    measure: Measure<'_>,
+) -> CloseUp {
     let shown = &ticks[bracket.ticks.clone()];
     let (low, high) = match shown {
         [first, .., last] => (first.rapidity, last.rapidity),
@@ -535,7 +548,9 @@ pub(super) fn close_up(bracket: &Name, ticks: &[Tick], width: f32, measure: Meas
 fn every_nth(widths: &[f32], room: f32) -> usize {
     let needed = |every: usize| {
         let chosen: Vec<f32> = widths.iter().step_by(every).copied().collect();
-        let blocks = chosen.chunks(3).map(|c| widest(c) + BLOCK_EXTRA + BLOCK_GAP);
+        let blocks = chosen
+            .chunks(3)
+            .map(|c| widest(c) + BLOCK_EXTRA + BLOCK_GAP);
         blocks.sum::<f32>() - BLOCK_GAP
     };
     (1..=widths.len().max(1))

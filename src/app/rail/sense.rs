@@ -1,7 +1,9 @@
 //! Hands and keys on the rail: read before anything is painted, so that all else follows within the frame.
 
 use egui::accesskit::{Action, ActionData};
-use egui::{CursorIcon, Event, EventFilter, Id, Key, Pos2, Rect, Role, Sense, Ui, WidgetInfo, pos2, vec2};
+use egui::{
+    CursorIcon, Event, EventFilter, Id, Key, Pos2, Rect, Role, Sense, Ui, WidgetInfo, pos2, vec2,
+};
 
 use super::layout::{Scale, key_step};
 use super::{AXIS_CLOSE, Entry, Layout, NAMES, RailCommand, at_rapidity, frame_of, measure};
@@ -21,7 +23,13 @@ pub(super) fn handle_id() -> Id {
 }
 
 /// Reads what is done to the rail.
-pub(in crate::app) fn sense(ui: &mut Ui, rect: Rect, shown: &Shown, view: &View, wishes: &mut Wishes) {
+pub(in crate::app) fn sense(
+    ui: &mut Ui,
+    rect: Rect,
+    shown: &Shown,
+    view: &View,
+    wishes: &mut Wishes,
+) {
     let layout = Layout::new(rect, shown, &view.rail, &measure(ui));
     wheel(ui, &layout, wishes);
     ticks(ui, &layout, shown, wishes);
@@ -29,19 +37,28 @@ pub(in crate::app) fn sense(ui: &mut Ui, rect: Rect, shown: &Shown, view: &View,
 }
 
 fn wheel(ui: &Ui, layout: &Layout, wishes: &mut Wishes) {
-    let band = Rect::from_min_max(layout.rect.left_top() + vec2(0.0, 36.0), layout.rect.right_bottom());
-    let Some(pointer) = ui.input(|i| i.pointer.hover_pos()).filter(|p| band.contains(*p)) else {
+    let band = Rect::from_min_max(
+        layout.rect.left_top() + vec2(0.0, 36.0),
+        layout.rect.right_bottom(),
+    );
+    let Some(pointer) = ui
+        .input(|i| i.pointer.hover_pos())
+        .filter(|p| band.contains(*p))
+    else {
         return;
     };
     if ui.ctx().layer_id_at(pointer) != Some(ui.layer_id()) {
         return;
     }
-    let turned = ui.input(|i| f64::from(i.smooth_scroll_delta().y) + f64::from(i.zoom_delta() - 1.0) * 200.0);
+    let turned = ui
+        .input(|i| f64::from(i.smooth_scroll_delta().y) + f64::from(i.zoom_delta() - 1.0) * 200.0);
     if turned == 0.0 {
         return;
     }
     let scale = &layout.scale;
-    let about = scale.rapidity(pointer.x - layout.rect.left()).clamp(scale.low, scale.high);
+    let about = scale
+        .rapidity(pointer.x - layout.rect.left())
+        .clamp(scale.low, scale.high);
     let factor = crate::num::exp(-turned / 200.0);
     let span = ((scale.high - scale.low) * factor).clamp(1e-6, 1300.0);
     let part = (about - scale.low) / (scale.high - scale.low);
@@ -177,8 +194,10 @@ fn handle(ui: &mut Ui, layout: &Layout, shown: &Shown, view: &View, wishes: &mut
         wishes.push(Command::Rail(RailCommand::Take { axis, grip }));
         response.request_focus();
     }
-    if let (true, Some(at)) = (response.is_pointer_button_down_on() && !pressed, response.interact_pointer_pos())
-        && ui.input(|i| i.pointer.delta().x != 0.0)
+    if let (true, Some(at)) = (
+        response.is_pointer_button_down_on() && !pressed,
+        response.interact_pointer_pos(),
+    ) && ui.input(|i| i.pointer.delta().x != 0.0)
     {
         let x = at.x - grip;
         let held = nearest(layout, scale, pos2(x, at.y), HOLD);
@@ -211,7 +230,9 @@ fn asked(ui: &Ui, layout: &Layout, wishes: &mut Wishes) {
         for (action, by) in [(Action::Increment, step), (Action::Decrement, -step)] {
             let count = i.accesskit_action_requests(handle_id(), action).count();
             if count > 0 {
-                wishes.push(Command::Frame(at_rapidity(layout.rapidity + by * count as f64)));
+                wishes.push(Command::Frame(at_rapidity(
+                    layout.rapidity + by * count as f64,
+                )));
             }
         }
     });
@@ -243,7 +264,11 @@ fn keys(ui: &Ui, layout: &Layout, shown: &Shown, wishes: &mut Wishes) {
         let grid = size / 100.0;
         let rounded = (moved / grid).round() * grid;
         let per = (1.0 / grid).round();
-        let exact = if per >= 1.0 { (rounded * per).round() / per } else { rounded };
+        let exact = if per >= 1.0 {
+            (rounded * per).round() / per
+        } else {
+            rounded
+        };
         wishes.push(Command::Frame(at_rapidity(exact)));
     }
     if ui.input(|i| i.key_pressed(Key::Home)) {
