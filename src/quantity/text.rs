@@ -2,6 +2,7 @@
 
 use super::Number;
 use num_bigint::BigInt;
+use std::ops::Range;
 
 /// How many digits stand after the decimal sign.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
@@ -16,32 +17,19 @@ pub struct Rounded {
     pub uncertainty: String,
 }
 
-/// The shortest decimal text that reads back to the same f64, as the JSON writer prints it but whole numbers without
-/// `.0`, `-0` as `0` and no sign before the exponent: `0.00001`, `1e16`, `1.5e-7`.
+/// The shortest decimal text that reads back to the same f64; whole numbers without `.0`, `-0` as `0`. Plain notation
+/// from 1e-5 up to below 1e16, as JSON writers have it, else `1.5e-7`.
 pub fn shortest(value: f64) -> String {
     if value == 0.0 {
         return "0".to_owned();
     }
-    match serde_json::to_string(&value) {
-        Ok(text) if value.is_finite() => text.trim_end_matches(".0").replace("e+", "e"),
-        _ => value.to_string(),
-    }
+    laid_out(format!("{value:e}"), -5..16)
 }
 
 /// Rounded to some significant digits (at least one), plain notation from 1e-4 to 1e7, else `1.234e-8`. Half to even
 /// on the exact binary value (as the standard formatter does). Zero is `0`.
 pub fn significant(value: f64, digits: usize) -> String {
-    if value == 0.0 {
-        return "0".to_owned();
-    }
-    let scientific = format!("{value:.*e}", digits.max(1) - 1);
-    match scientific
-        .split_once('e')
-        .and_then(|(m, e)| Some((m, e.parse::<i32>().ok()?)))
-    {
-        Some((mantissa, exponent)) if (-4..7).contains(&exponent) => plain(mantissa, exponent),
-        _ => scientific,
-    }
+    laid_out(scientific(value, digits), -4..7)
 }
 
 /// Rounded to some significant digits (at least one), always with a power of ten: `1.23457e12`. Zero is `0`.
@@ -88,6 +76,15 @@ fn push_threes(out: &mut String, digits: &str, first: usize, least: usize) {
             out.push('\u{2009}');
         }
         out.push(digit);
+    }
+}
+
+/// What is written with a power of ten, written out where the power is in `range`.
+fn laid_out(scientific: String, range: Range<i32>) -> String {
+    let parts = scientific.split_once('e');
+    match parts.and_then(|(mantissa, power)| Some((mantissa, power.parse::<i32>().ok()?))) {
+        Some((mantissa, power)) if range.contains(&power) => plain(mantissa, power),
+        _ => scientific,
     }
 }
 

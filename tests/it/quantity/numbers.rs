@@ -39,6 +39,15 @@ proptest! {
         prop_assert_eq!(digits(&shortest(x)), digits(&format!("{x:e}")));
     }
 
+    // Oracle: a JSON writer goes over to powers of ten at the same sizes. (Of two texts as short and as near, either may
+    // be printed, so their lengths are compared.)
+    #[test]
+    fn shortest_is_as_long_as_what_json_prints(mantissa in -1e4..1e4_f64, exponent in -12_i32..24) {
+        let x: f64 = format!("{mantissa}e{exponent}").parse().unwrap();
+        let json = serde_json::to_string(&x).unwrap().replace("e+", "e");
+        prop_assert_eq!(shortest(x).len(), json.strip_suffix(".0").unwrap_or(&json).len());
+    }
+
     // Oracle: IEEE 754 division, which rounds correctly.
     #[test]
     fn quotients_of_whole_numbers_round_as_ieee_division(a in -(1_i64 << 53)..(1 << 53), b in 1_i64..(1 << 53)) {
@@ -81,8 +90,8 @@ proptest! {
 #[derive(Clone, Debug)]
 enum Tree {
     Leaf(u8),
-    Negative(Box<Tree>),
-    Both(char, Box<Tree>, Box<Tree>),
+    Negative(Box<Self>),
+    Both(char, Box<Self>, Box<Self>),
 }
 
 impl Tree {
