@@ -305,15 +305,16 @@ impl<'a> Reader<'a> {
             self.own.unlike(value, "a list of named objects", mend);
             return Ok(());
         }
+        let room = OBJECTS - self.objects;
+        if let Some(excess) = value.items().nth(room) {
+            return Err(Broken::new(
+                excess.start(),
+                format!("the scene has more than {OBJECTS} objects"),
+                "split the scene",
+            ));
+        }
+        self.objects += value.len();
         for (entry, next) in with_next(value) {
-            self.objects += 1;
-            if self.objects > OBJECTS {
-                return Err(Broken::new(
-                    entry.start(),
-                    format!("the scene has more than {OBJECTS} objects"),
-                    "split the scene",
-                ));
-            }
             match (entry.key(), entry.value()) {
                 (Some(key), Some(value)) => {
                     punctuation(entry, next, &mut self.own);
