@@ -11,14 +11,13 @@ use egui::{
 
 use super::layout::{self, CloseUp, Graduation, Name, TickKind, graduate};
 use super::sense::handle_id;
-use super::{AXIS_CLOSE, Layout, NAMES, entry, measure};
+use super::{AXIS_CLOSE, Layout, NAMES, dimension, entry, measure};
 use crate::app::command::Wishes;
 use crate::app::context::Context;
 use crate::app::text;
 use crate::app::theme::{FOCUS, Palette, Type};
 use crate::app::widgets::{self, colours};
-use crate::quantity::{Decimals, fixed, grouped};
-use crate::task::speeds;
+use crate::quantity::{Decimals, fixed};
 
 /// Middles of a close-up's rows of names, from the lowest.
 pub(super) const CLOSE_ROWS: [f32; 3] = [125.0, 110.0, 95.0];
@@ -27,16 +26,15 @@ const SLANT: (f32, f32) = (140.0, 154.0);
 const TICK: f32 = 16.0;
 const TICK_ABOVE: f32 = 10.0;
 /// From an axis down to the middle of its numbers.
-const NUMBERS: f32 = 17.0;
+pub(super) const NUMBERS: f32 = 17.0;
 /// Numbers nearer to the handle are left out.
 const CLEAR: f32 = 26.0;
-const DIMENSION: f32 = 65.0;
 
 /// A painter with what it needs to know.
-struct Brush<'a> {
-    painter: &'a Painter,
-    c: &'static Palette,
-    layout: &'a Layout,
+pub(super) struct Brush<'a> {
+    pub(super) painter: &'a Painter,
+    pub(super) c: &'static Palette,
+    pub(super) layout: &'a Layout,
     standing: Option<usize>,
 }
 
@@ -59,7 +57,7 @@ pub(in crate::app) fn paint(ui: &mut Ui, rect: Rect, context: &Context<'_>, wish
         brush.close_up(close);
     }
     brush.names();
-    dimension(ui, &brush);
+    dimension::dimension(ui, &brush);
     brush.handle();
     if context.document.is_empty() {
         brush.hint();
@@ -93,7 +91,7 @@ fn handle_node(ui: &Ui, layout: &Layout, context: &Context<'_>) {
 }
 
 impl Brush<'_> {
-    fn x(&self, x: f32) -> f32 {
+    pub(super) fn x(&self, x: f32) -> f32 {
         self.layout.rect.left() + x
     }
 
@@ -457,105 +455,4 @@ impl Brush<'_> {
             self.c.quiet,
         );
     }
-}
-
-/// How far apart the two ticks about the pointer are.
-fn dimension(ui: &Ui, brush: &Brush<'_>) {
-    let layout = brush.layout;
-    let (scale, axis) = layout.working();
-    let band = Rect::from_min_max(
-        pos2(layout.rect.left(), axis - 20.0),
-        pos2(layout.rect.right(), axis + 4.0),
-    );
-    let Some(pointer) = ui
-        .input(|i| i.pointer.hover_pos())
-        .filter(|p| band.contains(*p))
-    else {
-        return;
-    };
-    if ui.ctx().layer_id_at(pointer) != Some(ui.layer_id()) || layout.close.is_some() {
-        return;
-    }
-    let at = scale.rapidity(pointer.x - layout.rect.left());
-    let Some(after) = layout
-        .ticks
-        .iter()
-        .position(|t| t.rapidity > at)
-        .filter(|&i| i > 0)
-    else {
-        return;
-    };
-    let (low, high) = (
-        layout.ticks[after - 1].rapidity,
-        layout.ticks[after].rapidity,
-    );
-    let (from, to) = (brush.x(scale.x(low)), brush.x(scale.x(high)));
-    let words = apart(high - low);
-    let width = text::width(brush.painter, &words, Type::Caption);
-    let fits = to - from > width + 44.0;
-    let y = layout.rect.top() + DIMENSION;
-    if fits {
-        let (left, right) = (from + 5.0, to - 5.0);
-        let middle = f32::midpoint(left, right);
-        let half = width / 2.0 + 6.0;
-        arrow(brush, pos2(middle - half, y), pos2(left, y));
-        arrow(brush, pos2(middle + half, y), pos2(right, y));
-        let at = pos2(middle, y);
-        text::put(
-            brush.painter,
-            at,
-            Align::Center,
-            &words,
-            Type::Caption,
-            brush.c.accent,
-        );
-    } else {
-        let low = layout.rect.left() + 8.0 + width / 2.0;
-        let high = layout.rect.right() - 8.0 - width / 2.0;
-        let mut x = f32::midpoint(from, to).clamp(low, high);
-        let handle = layout.handle();
-        let reach = width / 2.0 + 12.0;
-        if (x - handle.center().x).abs() < reach + handle.width() / 2.0 {
-            x = if x < handle.center().x {
-                handle.left() - reach
-            } else {
-                handle.right() + reach
-            };
-        }
-        let at = pos2(x, axis + NUMBERS);
-        let back = Rect::from_center_size(at, vec2(width + 12.0, 17.0));
-        brush
-            .painter
-            .rect_filled(back, CornerRadius::same(4), brush.c.panel);
-        text::put(
-            brush.painter,
-            at,
-            Align::Center,
-            &words,
-            Type::Caption,
-            brush.c.accent,
-        );
-    }
-}
-
-fn apart(rapidity: f64) -> String {
-    let beta = grouped(&fixed(speeds(rapidity).beta, Decimals(6)));
-    format!("{} apart, β {beta}", grouped(&fixed(rapidity, Decimals(6))))
-}
-
-fn arrow(brush: &Brush<'_>, from: Pos2, to: Pos2) {
-    let y = from.y.floor() + 0.5;
-    let stroke = Stroke::new(1.0, brush.c.accent);
-    brush
-        .painter
-        .line_segment([pos2(from.x, y), pos2(to.x, y)], stroke);
-    let back = 6.0 * (from.x - to.x).signum();
-    let head = vec![
-        pos2(to.x, y),
-        pos2(to.x + back, y - 3.0),
-        pos2(to.x + back, y + 3.0),
-    ];
-    brush
-        .painter
-        .add(Shape::convex_polygon(head, brush.c.accent, Stroke::NONE));
 }
