@@ -32,6 +32,8 @@ pub(super) enum Sides {
 
 /// What the second side costs, ems.
 const OTHER_SIDE: f64 = 0.7;
+/// How far off its stroke's edge the way to a name begins, mm.
+const OFF_STROKE: f64 = 0.1;
 /// Steps of growing distance.
 const DISTANCES: usize = 6;
 
@@ -63,6 +65,7 @@ pub(super) fn beside(
                 found.push(Candidate {
                     rect: box_beside(spot.foot, side, size, nearest + half + far),
                     cost: far + (spot.order + cost) * em,
+                    leader: Some(spot.foot + side * (half + OFF_STROKE)),
                 });
             }
         }

@@ -34,6 +34,24 @@ pub(super) enum Layer {
     Text,
 }
 
+impl Layer {
+    /// Lines and arrows that part a name from what it names.
+    fn is_heavy(self) -> bool {
+        match self {
+            Self::Signal | Self::World | Self::Total | Self::After | Self::Before => true,
+            Self::Tint
+            | Self::Curve
+            | Self::Light
+            | Self::Tick
+            | Self::Axis
+            | Self::TiltedAxis
+            | Self::Simultaneity
+            | Self::Event
+            | Self::Text => false,
+        }
+    }
+}
+
 /// In which order labels choose their places: those with least choice first.
 #[derive(Clone, Copy, Debug, PartialEq, Eq, PartialOrd, Ord)]
 pub(super) enum Rank {
@@ -66,10 +84,7 @@ impl Window {
     /// From the plane to mm.
     pub(super) fn affine(&self) -> Affine {
         let s = self.scale();
-        let (x, y) = (
-            self.field.x0 - s * self.plane.x0,
-            self.field.y1 + s * self.plane.y0,
-        );
+        let (x, y) = (self.field.x0 - s * self.plane.x0, self.field.y1 + s * self.plane.y0);
         Affine::new([s, 0.0, 0.0, -s, x, y])
     }
 
@@ -114,13 +129,7 @@ impl Groups {
         }
         let plain: String = title
             .chars()
-            .map(|c| {
-                if c.is_ascii_alphanumeric() || c == '_' || c == '.' {
-                    c
-                } else {
-                    '-'
-                }
-            })
+            .map(|c| if c.is_ascii_alphanumeric() || c == '_' || c == '.' { c } else { '-' })
             .collect();
         let stem = format!("{letter}-{plain}");
         let mut id = stem.clone();
@@ -132,10 +141,7 @@ impl Groups {
         let index = self.list.len();
         self.ids.insert(id.clone(), index);
         self.known.insert((letter, title.to_owned()), index);
-        self.list.push(Group {
-            id,
-            title: title.to_owned(),
-        });
+        self.list.push(Group { id, title: title.to_owned() });
         index
     }
 }
@@ -191,23 +197,9 @@ const WAYS: usize = 24;
 
 impl<'a> Canvas<'a> {
     /// An empty panel.
-    pub(super) fn new(
-        style: &'a Style,
-        window: Window,
-        letter: char,
-        groups: &'a mut Groups,
-    ) -> Self {
+    pub(super) fn new(style: &'a Style, window: Window, letter: char, groups: &'a mut Groups) -> Self {
         let places = Places::new(window.outer, style);
-        Self {
-            style,
-            window,
-            letter,
-            groups,
-            drawn: Vec::new(),
-            places,
-            wishes: Vec::new(),
-            has_light_word: false,
-        }
+        Self { style, window, letter, groups, drawn: Vec::new(), places, wishes: Vec::new(), has_light_word: false }
     }
 
     /// The group of some title on this panel.
@@ -221,12 +213,9 @@ impl<'a> Canvas<'a> {
             return;
         }
         if layer != Layer::Tint {
-            self.take_ink(&path, 0.0);
+            self.take_ink(&path, 0.0, layer);
         }
-        let shape = Shape::Path {
-            path,
-            paint: Paint::Fill(ink),
-        };
+        let shape = Shape::Path { path, paint: Paint::Fill(ink) };
         self.drawn.push((layer, Mark { group, shape }));
     }
 
@@ -242,56 +231,24 @@ impl<'a> Canvas<'a> {
         if path.elements().len() < 2 {
             return;
         }
-        self.take_ink(&path, width / 2.0);
-        let stroke = Stroke {
-            ink,
-            width,
-            dash,
-            cap: Cap::Butt,
-            join: Join::Mitre,
-        };
-        let shape = Shape::Path {
-            path,
-            paint: Paint::Stroke(stroke),
-        };
+        self.take_ink(&path, width / 2.0, layer);
+        let stroke = Stroke { ink, width, dash, cap: Cap::Butt, join: Join::Mitre };
+        let shape = Shape::Path { path, paint: Paint::Stroke(stroke) };
         self.drawn.push((layer, Mark { group, shape }));
     }
 
     /// A solid straight stroke.
-    pub(super) fn line(
-        &mut self,
-        layer: Layer,
-        group: usize,
-        (a, b): (Point, Point),
-        pen: (Ink, f64),
-    ) {
+    pub(super) fn line(&mut self, layer: Layer, group: usize, (a, b): (Point, Point), pen: (Ink, f64)) {
         self.stroke(layer, group, outline::open(&[a, b]), pen, Vec::new());
     }
 
     /// A momentum arrow, cut at the field.
-    pub(super) fn arrow(
-        &mut self,
-        layer: Layer,
-        group: usize,
-        tip: Point,
-        arrow: &Arrow,
-        ink: Ink,
-    ) {
+    pub(super) fn arrow(&mut self, layer: Layer, group: usize, tip: Point, arrow: &Arrow, ink: Ink) {
         let field = self.window.field;
         for body in &arrow.body {
-            self.fill(
-                layer,
-                group,
-                outline::closed(&clip::polygon(body, field)),
-                ink,
-            );
+            self.fill(layer, group, outline::closed(&clip::polygon(body, field)), ink);
         }
-        self.fill(
-            layer,
-            group,
-            outline::closed(&clip::polygon(&arrow.paper, field)),
-            PAPER,
-        );
+        self.fill(layer, group, outline::closed(&clip::polygon(&arrow.paper, field)), PAPER);
         if let Some((radius, paper)) = arrow.dot
             && clip::holds(field, tip)
         {
@@ -302,25 +259,26 @@ impl<'a> Canvas<'a> {
         }
     }
 
-    fn take_ink(&mut self, path: &BezPath, half: f64) {
+    fn take_ink(&mut self, path: &BezPath, half: f64, layer: Layer) {
+        let is_heavy = layer.is_heavy();
         let (mut start, mut last) = (Point::ORIGIN, Point::ORIGIN);
         for &element in path.elements() {
             match element {
                 PathEl::MoveTo(p) => (start, last) = (p, p),
                 PathEl::LineTo(p) | PathEl::QuadTo(_, p) => {
-                    self.places.add_ink(last, p, half);
+                    self.places.add_ink(last, p, half, is_heavy);
                     last = p;
                 }
                 PathEl::CurveTo(p, q, r) => {
                     let from = last;
                     for i in 1..=CHORDS {
                         let next = cubic_at([from, p, q, r], i as f64 / CHORDS as f64);
-                        self.places.add_ink(last, next, half);
+                        self.places.add_ink(last, next, half, is_heavy);
                         last = next;
                     }
                 }
                 PathEl::ClosePath => {
-                    self.places.add_ink(last, start, half);
+                    self.places.add_ink(last, start, half, is_heavy);
                     last = start;
                 }
             }
@@ -353,7 +311,7 @@ impl<'a> Canvas<'a> {
                 continue;
             }
             let found = match &wish.seek {
-                Seek::Places(candidates) => self.places.best(candidates),
+                Seek::Places(candidates) => self.places.best(candidates).map(|(_, rect)| rect),
                 Seek::Around(p) => self.around(*p, size),
             };
             match found {
@@ -369,13 +327,7 @@ impl<'a> Canvas<'a> {
         let em = self.style.em;
         let at = Point::new(rect.x0 - em * label.ink.x0, rect.y1 + em * label.ink.y0);
         self.places.add_label(rect);
-        self.drawn.push((
-            Layer::Text,
-            Mark {
-                group,
-                shape: Shape::Label { label, at, em, ink },
-            },
-        ));
+        self.drawn.push((Layer::Text, Mark { group, shape: Shape::Label { label, at, em, ink } }));
     }
 
     /// Asks for a place for a remark along the field's lower edge, else its upper one.
@@ -388,21 +340,12 @@ impl<'a> Canvas<'a> {
             let x = field.x1 - gap - size.x - part * (field.width() - size.x - 2.0 * gap);
             for (y, cost) in [(field.y1 - gap - size.y, 0.0), (field.y0 + gap, 1.0)] {
                 let rect = Rect::from_origin_size((x, y), (size.x, size.y));
-                candidates.push(Candidate {
-                    rect,
-                    cost: (cost + part) * self.style.em,
-                });
+                let cost = (cost + part) * self.style.em;
+                candidates.push(Candidate { rect, cost, leader: None });
             }
         }
         let seek = Seek::Places(candidates);
-        self.wish(Wish {
-            rank: Rank::Word,
-            group,
-            blame: None,
-            label,
-            ink: INK,
-            seek,
-        });
+        self.wish(Wish { rank: Rank::Word, group, blame: None, label, ink: INK, seek });
     }
 
     /// The best place around a point: rings of growing distance, on each the directions away from the strokes through
@@ -414,28 +357,35 @@ impl<'a> Canvas<'a> {
         let ways: Vec<(Vec2, f64)> = (0..WAYS)
             .map(|w| {
                 let angle = turn(w);
-                let away = strokes
-                    .iter()
-                    .map(|d| apart(angle, *d))
-                    .fold(HALF_PI, f64::min);
+                let away = strokes.iter().map(|d| apart(angle, *d)).fold(HALF_PI, f64::min);
                 let order = (HALF_PI - away) / HALF_PI + TIE * apart(angle, PREFERRED);
-                (
-                    Vec2::new(cos(angle), -sin(angle)),
-                    order * ORDER_WORTH * self.style.em,
-                )
+                (Vec2::new(cos(angle), -sin(angle)), order * ORDER_WORTH * self.style.em)
             })
             .collect();
+        let off = self.style.event + self.style.clear_ink / 2.0;
         let rings = ((farthest - nearest) / step).round() as usize;
-        let candidates: Vec<Candidate> = (0..=rings)
-            .flat_map(|ring| {
-                let far = step * ring as f64;
-                ways.iter().map(move |&(way, order)| Candidate {
+        let mut best: Option<(f64, Rect)> = None;
+        for ring in 0..=rings {
+            let far = step * ring as f64;
+            if best.is_some_and(|(score, _)| far - self.places.worth() >= score) {
+                break;
+            }
+            let candidates: Vec<Candidate> = ways
+                .iter()
+                .map(|&(way, order)| Candidate {
                     rect: box_at(p, way, size, nearest + far),
                     cost: far + order,
+                    leader: Some(p + way * off),
                 })
-            })
-            .collect();
-        self.places.best(&candidates)
+                .collect();
+            let found = self.places.best(&candidates);
+            if let Some((score, _)) = found
+                && best.is_none_or(|(least, _)| score < least)
+            {
+                best = found;
+            }
+        }
+        best.map(|(_, rect)| rect)
     }
 
     /// The marks in drawing order.

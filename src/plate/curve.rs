@@ -178,6 +178,7 @@ impl Hyperbola {
         let (c, s) = (cosh(h / 2.0), sinh(h / 2.0));
         let handle = 4.0 / 3.0 * tanh(h / 4.0);
         let (along, across) = (handle.mul_add(-s, c), handle.mul_add(c, -s));
+        let (shrink, grow) = (exp(-middle), exp(middle));
         let mut worst = 0.0_f64;
         for i in 1..SAMPLES {
             let w = i as f64 / SAMPLES as f64;
@@ -186,7 +187,7 @@ impl Hyperbola {
             let a = (e0 + e3).mul_add(c, (e1 + e2) * along);
             let x = (e3 - e0).mul_add(s, (e1 - e2) * across);
             // Null components in the middle's frame, then at their place on paper.
-            let (u, v) = ((a - x) * exp(-middle), (a + x) * exp(middle));
+            let (u, v) = ((a - x) * shrink, (a + x) * grow);
             let off = ((a - x) * (a + x) - 1.0).abs();
             let slope = hypot(u, v) * std::f64::consts::SQRT_2;
             worst = worst.max(off / slope);
@@ -195,8 +196,8 @@ impl Hyperbola {
     }
 }
 
-/// Enough to fix a length to rounding.
-const BISECTIONS: usize = 60;
+/// Enough to fix a length on paper.
+const BISECTIONS: usize = 36;
 /// Enough to fix a piece's length to a hundredth.
 const PIECE_BISECTIONS: usize = 12;
 /// Points at which a piece is compared with the curve.

@@ -224,6 +224,11 @@ impl Job<'_> {
                     format!("an axis' title has no free place on panel {letter}"),
                     "make the panel wider, or show less",
                 ),
+                (Rank::Curve, Some(object)) if object.kind == Kind::Plate => self.finding(
+                    &format!("panels.{index}"),
+                    format!("the words of a curve or a line of simultaneity have no free place on panel {letter}"),
+                    "make the panel wider, or show less",
+                ),
                 (_, Some(object)) => self.names.fault(
                     Fault::new(
                         object,

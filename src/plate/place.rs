@@ -12,6 +12,8 @@ struct Piece {
     a: Point,
     b: Point,
     half: f64,
+    /// Thick enough to part a label from what it names.
+    is_heavy: bool,
 }
 
 /// One place a label may take.
@@ -21,6 +23,8 @@ pub(super) struct Candidate {
     pub(super) rect: Rect,
     /// Distance and order of preference together, mm.
     pub(super) cost: f64,
+    /// Where what it names begins: no heavy ink may lie between there and the label, and thin ink had better not.
+    pub(super) leader: Option<Point>,
 }
 
 /// Ink and labels of a panel, by cells.
@@ -37,6 +41,8 @@ pub(super) struct Places {
     clear_label: f64,
     /// How much clearance counts, mm.
     reach: f64,
+    /// What thin ink between a label and what it names costs, mm.
+    thin_between: f64,
 }
 
 /// Side of a cell, mm.
@@ -45,6 +51,8 @@ const CELL: f64 = 4.0;
 const MOST_CELLS: usize = 256;
 /// Clearance beyond the least that still counts for a place, in ems.
 const CLEARANCE_WORTH: f64 = 0.4;
+/// What thin ink between a label and what it names costs, ems.
+const THIN_BETWEEN: f64 = 0.8;
 
 impl Places {
     /// None taken, inside a panel.
@@ -62,6 +70,7 @@ impl Places {
             clear_ink: style.clear_ink,
             clear_label: style.clear_label,
             reach: style.clear_ink + CLEARANCE_WORTH * style.em,
+            thin_between: THIN_BETWEEN * style.em,
         }
     }
 
@@ -76,12 +85,12 @@ impl Places {
     }
 
     /// Takes up a straight piece of ink.
-    pub(super) fn add_ink(&mut self, a: Point, b: Point, half: f64) {
+    pub(super) fn add_ink(&mut self, a: Point, b: Point, half: f64, is_heavy: bool) {
         if !(a.is_finite() && b.is_finite()) {
             return;
         }
         let index = self.pieces.len() as u32;
-        self.pieces.push(Piece { a, b, half });
+        self.pieces.push(Piece { a, b, half, is_heavy });
         let height = self.bounds.height() / self.rows as f64;
         let (low, high) = (a.y.min(b.y) - half, a.y.max(b.y) + half);
         for row in self.row(low)..=self.row(high) {
@@ -125,6 +134,29 @@ impl Places {
         least
     }
 
+    /// What it costs that ink lies between a label and what it names; `None` where that is heavy.
+    fn parting(&self, leader: Option<Point>, rect: Rect) -> Option<f64> {
+        let Some(start) = leader else { return Some(0.0) };
+        let end = Point::new(start.x.clamp(rect.x0, rect.x1), start.y.clamp(rect.y0, rect.y1));
+        let (y0, y1) = (start.y.min(end.y), start.y.max(end.y));
+        let (x0, x1) = (start.x.min(end.x), start.x.max(end.x));
+        let mut cost = 0.0;
+        for row in self.row(y0)..=self.row(y1) {
+            for column in self.column(x0)..=self.column(x1) {
+                for &i in &self.ink[row * self.columns + column] {
+                    let piece = &self.pieces[i as usize];
+                    if cross(start, end, piece.a, piece.b) {
+                        if piece.is_heavy {
+                            return None;
+                        }
+                        cost = self.thin_between;
+                    }
+                }
+            }
+        }
+        Some(cost)
+    }
+
     fn meets_label(&self, rect: Rect) -> bool {
         let near = rect.inflate(self.clear_label - HAIR, self.clear_label - HAIR);
         (self.row(near.y0)..=self.row(near.y1)).any(|row| {
@@ -136,19 +168,12 @@ impl Places {
         })
     }
 
-    /// Whether a label may stand there.
-    pub(super) fn is_free(&self, rect: Rect) -> bool {
-        self.inside(rect)
-            && !self.meets_label(rect)
-            && self.clearance(rect) >= self.clear_ink - HAIR
-    }
-
     /// Directions (angles, counter-clockwise to the eye) in which strokes leave a point, those within `near` of it.
     pub(super) fn strokes_through(&self, p: Point, near: f64) -> Vec<f64> {
         let cell = &self.ink[self.row(p.y) * self.columns + self.column(p.x)];
         let mut found = Vec::new();
         for &i in cell {
-            let Piece { a, b, half } = self.pieces[i as usize];
+            let Piece { a, b, half, is_heavy: _ } = self.pieces[i as usize];
             if to_segment(p, a, b) > near + half {
                 continue;
             }
@@ -166,14 +191,19 @@ impl Places {
         b.x0 <= rect.x0 && rect.x1 <= b.x1 && b.y0 <= rect.y0 && rect.y1 <= b.y1
     }
 
-    /// The best free place of some.
-    pub(super) fn best(&self, candidates: &[Candidate]) -> Option<Rect> {
-        let worth = self.reach - self.clear_ink;
+    /// What the most clearance takes off a place's score, mm.
+    pub(super) fn worth(&self) -> f64 {
+        self.reach - self.clear_ink
+    }
+
+    /// The best free place of some, with its score.
+    pub(super) fn best(&self, candidates: &[Candidate]) -> Option<(f64, Rect)> {
+        let worth = self.worth();
         let mut order: Vec<usize> = (0..candidates.len()).collect();
         order.sort_by(|&i, &j| candidates[i].cost.total_cmp(&candidates[j].cost));
         let mut best: Option<(f64, Rect)> = None;
         for i in order {
-            let Candidate { rect, cost } = candidates[i];
+            let Candidate { rect, cost, leader } = candidates[i];
             if best.is_some_and(|(score, _)| cost - worth >= score) {
                 break;
             }
@@ -181,12 +211,16 @@ impl Places {
                 continue;
             }
             let clear = self.clearance(rect) - self.clear_ink;
-            let score = cost - clear;
-            if clear >= -HAIR && best.is_none_or(|(least, _)| score < least) {
+            if clear < -HAIR {
+                continue;
+            }
+            let Some(parting) = self.parting(leader, rect) else { continue };
+            let score = cost + parting - clear;
+            if best.is_none_or(|(least, _)| score < least) {
                 best = Some((score, rect));
             }
         }
-        best.map(|(_, rect)| rect)
+        best
     }
 }
 
@@ -214,6 +248,12 @@ fn beyond(piece: &Piece, r: Rect, by: f64) -> bool {
         || piece.a.y.min(piece.b.y) > r.y1 + by
 }
 
+/// Whether two segments cross.
+fn cross(a: Point, b: Point, p: Point, q: Point) -> bool {
+    let side = |o: Point, d: Point, s: Point| (d - o).cross(s - o);
+    side(a, b, p) * side(a, b, q) < 0.0 && side(p, q, a) * side(p, q, b) < 0.0
+}
+
 /// From a segment's middle line to a box; 0 where they meet.
 fn distance(piece: &Piece, r: Rect) -> f64 {
     let (a, b) = (piece.a, piece.b);
@@ -236,11 +276,7 @@ fn distance(piece: &Piece, r: Rect) -> f64 {
 fn to_segment(p: Point, a: Point, b: Point) -> f64 {
     let d = b - a;
     let length = d.hypot2();
-    let s = if length > 0.0 {
-        ((p - a).dot(d) / length).clamp(0.0, 1.0)
-    } else {
-        0.0
-    };
+    let s = if length > 0.0 { ((p - a).dot(d) / length).clamp(0.0, 1.0) } else { 0.0 };
     (p - (a + d * s)).hypot()
 }
 
@@ -262,19 +298,22 @@ fn gap(a: Rect, b: Rect) -> f64 {
     d.hypot()
 }
 
-/// A box of some size whose nearest point is `distance` from `p`, its middle in the direction `way` from there.
+/// A box of some size whose nearest point is `distance` from `p`, its middle in the direction `way` (of length 1).
 pub(super) fn box_at(p: Point, way: Vec2, size: Vec2, distance: f64) -> Rect {
-    let around = |r: f64| Rect::from_center_size(p + way * r, (size.x, size.y));
-    let (mut near, mut far) = (0.0, distance + size.hypot());
-    for _ in 0..24 {
-        let middle = f64::midpoint(near, far);
-        if to_box(p, around(middle)) < distance {
-            near = middle;
-        } else {
-            far = middle;
-        }
-    }
-    around(far)
+    let (a, b) = (size.x / 2.0, size.y / 2.0);
+    let (x, y) = (way.x.abs(), way.y.abs());
+    // Nearest by a vertical side, by a level one, else by a corner.
+    let across = (a + distance) / x;
+    let up = (b + distance) / y;
+    let reach = if across * y <= b {
+        across
+    } else if up * x <= a {
+        up
+    } else {
+        let along = a.mul_add(x, b * y);
+        along + (along * along - (a * a + b * b - distance * distance)).max(0.0).sqrt()
+    };
+    Rect::from_center_size(p + way * reach, (size.x, size.y))
 }
 
 /// A box of some size beside a straight stroke: `distance` from the stroke's middle line, on the side of the unit
@@ -288,6 +327,12 @@ pub(super) fn box_beside(foot: Point, side: Vec2, size: Vec2, distance: f64) -> 
 mod tests {
     use super::*;
 
+    impl Places {
+        fn is_free(&self, rect: Rect) -> bool {
+            self.best(&[Candidate { rect, cost: 0.0, leader: None }]).is_some()
+        }
+    }
+
     fn places() -> Places {
         Places::new(Rect::new(0.0, 0.0, 80.0, 60.0), &Style::new(9.0))
     }
@@ -295,7 +340,7 @@ mod tests {
     #[test]
     fn a_label_keeps_its_distance_to_ink() {
         let mut places = places();
-        places.add_ink(Point::new(0.0, 30.0), Point::new(80.0, 30.0), 0.25);
+        places.add_ink(Point::new(0.0, 30.0), Point::new(80.0, 30.0), 0.25, true);
         assert!(!places.is_free(Rect::new(10.0, 30.6, 14.0, 33.0)));
         assert!(places.is_free(Rect::new(10.0, 30.8, 14.0, 33.0)));
         assert_eq!(places.clearance(Rect::new(10.0, 29.0, 14.0, 33.0)), 0.0);
@@ -304,7 +349,7 @@ mod tests {
     #[test]
     fn a_long_slanted_stroke_is_met_in_every_cell() {
         let mut places = places();
-        places.add_ink(Point::new(1.0, 2.0), Point::new(79.0, 58.0), 0.1);
+        places.add_ink(Point::new(1.0, 2.0), Point::new(79.0, 58.0), 0.1, false);
         for i in 0..100 {
             let p = Point::new(1.0, 2.0).lerp(Point::new(79.0, 58.0), f64::from(i) / 99.0);
             assert!(places.clearance(Rect::from_center_size(p, (0.2, 0.2))) == 0.0);
@@ -316,21 +361,25 @@ mod tests {
         let mut places = places();
         let near = Rect::new(10.0, 10.0, 14.0, 12.0);
         let next = Rect::new(10.0, 20.0, 14.0, 22.0);
-        let candidates = [
-            Candidate {
-                rect: near,
-                cost: 0.0,
-            },
-            Candidate {
-                rect: next,
-                cost: 1.0,
-            },
-        ];
-        let first = places.best(&candidates).unwrap();
-        places.add_label(first);
-        assert_eq!((first, places.best(&candidates)), (near, Some(next)));
+        let candidates =
+            [(near, 0.0), (next, 1.0)].map(|(rect, cost)| Candidate { rect, cost, leader: None });
+        let rect = |places: &Places| places.best(&candidates).map(|(_, rect)| rect);
+        assert_eq!(rect(&places), Some(near));
+        places.add_label(near);
+        assert_eq!(rect(&places), Some(next));
         places.add_label(next);
-        assert_eq!(places.best(&candidates), None);
+        assert_eq!(rect(&places), None);
+    }
+
+    #[test]
+    fn heavy_ink_parts_a_label_from_what_it_names() {
+        let mut places = places();
+        let rect = Rect::new(10.0, 20.0, 14.0, 22.0);
+        let across = [Candidate { rect, cost: 0.0, leader: Some(Point::new(12.0, 25.0)) }];
+        places.add_ink(Point::new(0.0, 24.0), Point::new(80.0, 24.0), 0.1, false);
+        assert_eq!(places.best(&across).map(|(_, r)| r), Some(rect));
+        places.add_ink(Point::new(0.0, 24.0), Point::new(80.0, 24.0), 0.2, true);
+        assert_eq!(places.best(&across), None);
     }
 
     #[test]

@@ -4,11 +4,12 @@
 use std::sync::Arc;
 
 use super::faults::{Faults, Source};
-use super::fields::{Form, common, number, punctuation, short_text, text, with_next};
+use super::fields::{Form, common};
 use super::lines::Lines;
 use super::places::Index;
 use super::scanner::{Broken, scan};
 use super::tree::{Entry, Shape, Value};
+use super::values::{number, punctuation, short_text, text, with_next};
 use super::{List, Object, Places, Scene, Units, forms};
 use crate::disk::LIMIT;
 use crate::fault::{Fault, Kind, ObjectId, Place, nearest};

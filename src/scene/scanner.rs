@@ -282,19 +282,15 @@ impl Scanner<'_> {
             ));
         }
         let at = self.at;
-        let node = match self.word_before().filter(|_| shape == Shape::Round) {
-            Some(word) => {
-                self.tree.node_mut(word).open_at(at, shape);
-                word
-            }
-            None => {
-                let mut node = Node::leaf(Span::new(at, at));
-                node.open_at(at, shape);
-                let id = self.add(node)?;
-                self.value(id);
-                id
-            }
+        let word = self.word_before().filter(|_| shape == Shape::Round);
+        let node = if let Some(word) = word {
+            word
+        } else {
+            let id = self.add(Node::leaf(Span::new(at, at)))?;
+            self.value(id);
+            id
         };
+        self.tree.node_mut(node).open_at(at, shape);
         self.levels.push(Level {
             node,
             first: self.pending.len(),

@@ -11,6 +11,7 @@ use super::{
     checks, collisions, events, frames, lines, particles,
 };
 use crate::fault::{Fault, Kind, ObjectId};
+use crate::geometry::Displacement;
 use crate::quantity::{Number, Quantity, Typed, Unit, read};
 use crate::scene::Scene;
 
@@ -239,13 +240,18 @@ pub(super) fn fault(
     Some(Box::new(Fault::new(id.clone(), field, what, mend)))
 }
 
-/// The two coordinates before rounding, less those of an origin.
-pub(super) fn exact_difference(
-    a: &(Number, Number),
-    b: &(Number, Number),
-) -> crate::geometry::Displacement {
+/// What is between two pairs of coordinates (t and x): differences are formed before rounding.
+pub(super) fn exact_difference(a: &(Number, Number), b: &(Number, Number)) -> Displacement {
     let (t, x) = (a.0.minus(&b.0), a.1.minus(&b.1));
-    crate::geometry::Displacement::new(t.minus(&x).to_f64(), t.plus(&x).to_f64(), 0.0)
+    Displacement::new(t.minus(&x).to_f64(), t.plus(&x).to_f64(), 0.0)
+}
+
+/// From event `b` to event `a`, from the numbers before rounding where both have them.
+pub(super) fn difference(a: &SolvedEvent, b: &SolvedEvent) -> Displacement {
+    match (&a.exact, &b.exact) {
+        (Some(a), Some(b)) => exact_difference(a, b),
+        _ => a.at - b.at,
+    }
 }
 
 /// Everything that has a rapidity, for the rail.

@@ -1,5 +1,6 @@
 //! Hostile texts end in words.
 
+use std::fmt::Write as _;
 use std::time::{Duration, Instant};
 
 use conewright::disk::LIMIT;
@@ -113,7 +114,7 @@ fn size_is_limited() {
 fn events(count: usize, last: &str) -> String {
     let mut text = String::from("events: {\n");
     for n in 0..count {
-        text.push_str(&format!("\"e{n}\": At(t: {n}, x: 0),\n"));
+        writeln!(text, "\"e{n}\": At(t: {n}, x: 0),").unwrap();
     }
     text.push_str(last);
     text.push('}');

@@ -20,10 +20,6 @@ fn quoted(text: &str) -> Typed {
     Typed::Text(text.to_owned())
 }
 
-fn some(text: &str) -> Option<String> {
-    Some(text.to_owned())
-}
-
 fn names(all: &[&str]) -> Vec<String> {
     all.iter().map(|&name| name.to_owned()).collect()
 }
@@ -127,7 +123,7 @@ fn relay_plate() -> Plate {
     let second = Panel {
         view: View::EnergyMomentum,
         when: When::Frame("balance".to_owned()),
-        collision: some("strike"),
+        collision: Some("strike".to_owned()),
         ..Panel::default()
     };
     Plate {
@@ -142,18 +138,18 @@ fn relay() -> Scene {
         particle: "lump".to_owned(),
         through: "turn".to_owned(),
         clock: None,
-        from: some("turn"),
+        from: Some("turn".to_owned()),
         until: None,
     };
     let strike = Collision {
         before: names(&["beam", "target"]),
         after: names(&["lump"]),
         closure: Closure::Merge,
-        at: some("turn"),
+        at: Some("turn".to_owned()),
     };
     let rest = LineOrParticle::Line {
         line: "courier".to_owned(),
-        at: some("turn"),
+        at: Some("turn".to_owned()),
     };
     let of = Ok("strike".to_owned());
     Scene {
@@ -161,15 +157,15 @@ fn relay() -> Scene {
         title: "Relay and courier".to_owned(),
         base: "station".to_owned(),
         units: Units {
-            time: some("ns"),
-            length: some("m"),
-            energy: some("MeV"),
+            time: Some("ns".to_owned()),
+            length: Some("m".to_owned()),
+            energy: Some("MeV".to_owned()),
         },
         species: List::new(),
         events: relay_events(),
         lines: list([
             ("station", free(bare("0"), None)),
-            ("courier", free(quoted("3/5"), some("turn"))),
+            ("courier", free(quoted("3/5"), Some("turn".to_owned()))),
             ("lump", follows),
         ]),
         particles: relay_particles(),
@@ -179,7 +175,7 @@ fn relay() -> Scene {
                 "courier",
                 Frame {
                     part: FramePart::RestOf(rest),
-                    origin: some("depart"),
+                    origin: Some("depart".to_owned()),
                 },
             ),
             (
@@ -244,8 +240,8 @@ fn lines_read_all_their_fields() {
         toward: Some(Toward::Minus),
         when: When::Rapidity(quoted("1/2")),
         clock: Some(("f".to_owned(), quoted("3 ns"))),
-        from: some("g"),
-        until: some("h"),
+        from: Some("g".to_owned()),
+        until: Some("h".to_owned()),
     };
     assert_eq!(only_line(full), expected);
     let broken = Line::Broken {
@@ -258,7 +254,7 @@ fn lines_read_all_their_fields() {
         through: "e".to_owned(),
         toward: Toward::Plus,
         from: None,
-        until: some("f"),
+        until: Some("f".to_owned()),
     };
     let text = "Light(through: \"e\", toward: Plus, until: \"f\")";
     assert_eq!(only_line(text), light);
