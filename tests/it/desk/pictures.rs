@@ -61,32 +61,3 @@ fn empty() {
     let mut window = open(None, Setup::default());
     window.snapshot("empty");
 }
-
-#[test]
-fn scratch() {
-    let small = Setup {
-        size: [900.0, 640.0],
-        ..SMALL
-    };
-    let mut window = open(Some(&scene("scenes/tug-and-beacon.ron")), small);
-    window.snapshot("zz-small");
-    let two = Setup {
-        size: [1100.0, 700.0],
-        scale: 2.0,
-        theme: egui::Theme::Dark,
-    };
-    let mut window = open(Some(&scene("scenes/kaon-on-proton.ron")), two);
-    click(&mut window, "View");
-    window.snapshot("zz-two");
-    let mut window = open(Some(&scene("scenes/kaon-on-proton.ron")), SMALL);
-    click(&mut window, "Frame");
-    window.snapshot("zz-frame");
-    let mut window = open(Some(&scene("scenes/kaon-on-proton.ron")), SMALL);
-    click(&mut window, "Help");
-    click(&mut window, "Words used here");
-    window.snapshot("zz-words");
-    let mut window = open(Some(&scene("scenes/kaon-on-proton.ron")), SMALL);
-    enter(&mut window, "β", "1.5");
-    click(&mut window, "Particles");
-    window.snapshot("zz-entry");
-}

@@ -66,8 +66,8 @@ impl Scale {
 /// 1, 2 or 5 times a power of ten, kept so that multiples come out as their decimals.
 #[derive(Clone, Copy, Debug, PartialEq)]
 pub(in crate::app::rail) struct Step {
-    digit: f64,
-    power: i32,
+    pub(super) digit: f64,
+    pub(super) power: i32,
 }
 
 impl Step {
