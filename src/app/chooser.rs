@@ -32,6 +32,7 @@ struct Entry {
 impl Chooser {
     /// Lists a folder.
     pub(super) fn at(folder: &Path) -> Self {
+        let folder = &std::path::absolute(folder).unwrap_or_else(|_| folder.to_owned());
         let (entries, fault) = match list(folder) {
             Ok(entries) => (entries, None),
             Err(fault) => (

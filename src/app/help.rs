@@ -1,12 +1,15 @@
 //! Pages of help, over the desk.
 
-use egui::{Grid, RichText, ScrollArea, Ui};
+use egui::{Align, Layout, RichText, ScrollArea, Ui, vec2};
 
 use super::action::ACTIONS;
 use super::command::{Command, Wishes};
 use super::theme::Type;
 use super::view::Help;
 use super::widgets::{self, colours};
+
+/// Width of the words at the left.
+const COLUMN: f32 = 230.0;
 
 /// Keys that belong to a place rather than to the whole desk.
 const PLACES: &[(&str, &str)] = &[
@@ -75,20 +78,20 @@ pub(super) fn page(ui: &Ui, page: Help, wishes: &mut Wishes) {
     }
 }
 
-fn rows<'a>(ui: &mut Ui, name: &str, rows: impl Iterator<Item = (&'a str, String)>) {
+/// Words at the left, what they stand for at the right.
+fn rows<'a>(ui: &mut Ui, rows: impl Iterator<Item = (&'a str, String)>) {
     let quiet = colours(ui).quiet;
     ScrollArea::vertical().max_height(420.0).show(ui, |ui| {
-        Grid::new(name)
-            .num_columns(2)
-            .spacing([24.0, 6.0])
-            .show(ui, |ui| {
-                for (first, second) in rows {
+        for (first, second) in rows {
+            ui.horizontal_top(|ui| {
+                let size = vec2(COLUMN, 18.0);
+                ui.allocate_ui_with_layout(size, Layout::left_to_right(Align::Min), |ui| {
+                    ui.set_min_width(COLUMN);
                     ui.label(first);
-                    ui.set_max_width(360.0);
-                    ui.add(egui::Label::new(RichText::new(second).color(quiet)).wrap());
-                    ui.end_row();
-                }
+                });
+                ui.add(egui::Label::new(RichText::new(second).color(quiet)).wrap());
             });
+        }
     });
 }
 
@@ -102,7 +105,7 @@ fn shortcuts(ui: &mut Ui) {
     let places = PLACES
         .iter()
         .map(|(what, keys)| (*what, (*keys).to_owned()));
-    rows(ui, "shortcuts", actions.chain(places));
+    rows(ui, actions.chain(places));
 }
 
 fn words(ui: &mut Ui) {
@@ -110,7 +113,6 @@ fn words(ui: &mut Ui) {
     ui.add_space(8.0);
     rows(
         ui,
-        "words",
         WORDS
             .iter()
             .map(|(word, meaning)| (*word, (*meaning).to_owned())),

@@ -49,7 +49,7 @@ pub enum RunFault {
 pub fn run(scene: Option<PathBuf>, paint: Paint) -> Result<(), RunFault> {
     let mut event_loop = EventLoop::<UserEvent>::with_user_event()
         .build()
-        .map_err(|_| RunFault::NoDisplay)?;
+        .map_err(|_no_display| RunFault::NoDisplay)?;
     // The desk is handed over only once a window stands, so that a failed attempt leaves it to the next.
     let desk = Rc::new(RefCell::new(Some(Desk::new(scene))));
     if paint != Paint::Software {

@@ -67,7 +67,7 @@ impl Shown {
         self.tables = self.ledger.as_ref().map(tables).unwrap_or_default();
         self.tables.iter_mut().for_each(tidy);
         self.things = opened.solved.rapidities();
-        self.faults = opened.faults.clone();
+        self.faults.clone_from(&opened.faults);
         if let Some(laid) = &self.laid {
             self.faults.extend(laid.faults.iter().cloned());
             let ids = laid

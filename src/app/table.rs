@@ -332,7 +332,7 @@ fn explain(response: &Response, row: &Row, table: &Table) {
         .notes
         .iter()
         .filter_map(|note| note.strip_prefix(&head))
-        .map(super::list::capital)
+        .map(super::findings::capital)
         .collect();
     if !notes.is_empty() {
         response.clone().on_hover_text(notes.join("\n"));
@@ -400,7 +400,7 @@ fn faulty(ui: &mut Ui, height: f32, object: &ObjectId, context: &Context<'_>, wi
         .faults_of(object)
         .find(|f| f.weight == Weight::Fault);
     let words = match root {
-        Some(fault) => super::list::capital(&fault.what),
+        Some(fault) => super::findings::capital(&fault.what),
         None => "hangs on something that is to be mended first".to_owned(),
     };
     response

@@ -84,7 +84,10 @@ impl Window {
     /// From the plane to mm.
     pub(super) fn affine(&self) -> Affine {
         let s = self.scale();
-        let (x, y) = (self.field.x0 - s * self.plane.x0, self.field.y1 + s * self.plane.y0);
+        let (x, y) = (
+            self.field.x0 - s * self.plane.x0,
+            self.field.y1 + s * self.plane.y0,
+        );
         Affine::new([s, 0.0, 0.0, -s, x, y])
     }
 
@@ -129,7 +132,13 @@ impl Groups {
         }
         let plain: String = title
             .chars()
-            .map(|c| if c.is_ascii_alphanumeric() || c == '_' || c == '.' { c } else { '-' })
+            .map(|c| {
+                if c.is_ascii_alphanumeric() || c == '_' || c == '.' {
+                    c
+                } else {
+                    '-'
+                }
+            })
             .collect();
         let stem = format!("{letter}-{plain}");
         let mut id = stem.clone();
@@ -141,7 +150,10 @@ impl Groups {
         let index = self.list.len();
         self.ids.insert(id.clone(), index);
         self.known.insert((letter, title.to_owned()), index);
-        self.list.push(Group { id, title: title.to_owned() });
+        self.list.push(Group {
+            id,
+            title: title.to_owned(),
+        });
         index
     }
 }
@@ -197,9 +209,23 @@ const WAYS: usize = 24;
 
 impl<'a> Canvas<'a> {
     /// An empty panel.
-    pub(super) fn new(style: &'a Style, window: Window, letter: char, groups: &'a mut Groups) -> Self {
+    pub(super) fn new(
+        style: &'a Style,
+        window: Window,
+        letter: char,
+        groups: &'a mut Groups,
+    ) -> Self {
         let places = Places::new(window.outer, style);
-        Self { style, window, letter, groups, drawn: Vec::new(), places, wishes: Vec::new(), has_light_word: false }
+        Self {
+            style,
+            window,
+            letter,
+            groups,
+            drawn: Vec::new(),
+            places,
+            wishes: Vec::new(),
+            has_light_word: false,
+        }
     }
 
     /// The group of some title on this panel.
@@ -215,7 +241,10 @@ impl<'a> Canvas<'a> {
         if layer != Layer::Tint {
             self.take_ink(&path, 0.0, layer);
         }
-        let shape = Shape::Path { path, paint: Paint::Fill(ink) };
+        let shape = Shape::Path {
+            path,
+            paint: Paint::Fill(ink),
+        };
         self.drawn.push((layer, Mark { group, shape }));
     }
 
@@ -232,23 +261,55 @@ impl<'a> Canvas<'a> {
             return;
         }
         self.take_ink(&path, width / 2.0, layer);
-        let stroke = Stroke { ink, width, dash, cap: Cap::Butt, join: Join::Mitre };
-        let shape = Shape::Path { path, paint: Paint::Stroke(stroke) };
+        let stroke = Stroke {
+            ink,
+            width,
+            dash,
+            cap: Cap::Butt,
+            join: Join::Mitre,
+        };
+        let shape = Shape::Path {
+            path,
+            paint: Paint::Stroke(stroke),
+        };
         self.drawn.push((layer, Mark { group, shape }));
     }
 
     /// A solid straight stroke.
-    pub(super) fn line(&mut self, layer: Layer, group: usize, (a, b): (Point, Point), pen: (Ink, f64)) {
+    pub(super) fn line(
+        &mut self,
+        layer: Layer,
+        group: usize,
+        (a, b): (Point, Point),
+        pen: (Ink, f64),
+    ) {
         self.stroke(layer, group, outline::open(&[a, b]), pen, Vec::new());
     }
 
     /// A momentum arrow, cut at the field.
-    pub(super) fn arrow(&mut self, layer: Layer, group: usize, tip: Point, arrow: &Arrow, ink: Ink) {
+    pub(super) fn arrow(
+        &mut self,
+        layer: Layer,
+        group: usize,
+        tip: Point,
+        arrow: &Arrow,
+        ink: Ink,
+    ) {
         let field = self.window.field;
         for body in &arrow.body {
-            self.fill(layer, group, outline::closed(&clip::polygon(body, field)), ink);
+            self.fill(
+                layer,
+                group,
+                outline::closed(&clip::polygon(body, field)),
+                ink,
+            );
         }
-        self.fill(layer, group, outline::closed(&clip::polygon(&arrow.paper, field)), PAPER);
+        self.fill(
+            layer,
+            group,
+            outline::closed(&clip::polygon(&arrow.paper, field)),
+            PAPER,
+        );
         if let Some((radius, paper)) = arrow.dot
             && clip::holds(field, tip)
         {
@@ -327,7 +388,13 @@ impl<'a> Canvas<'a> {
         let em = self.style.em;
         let at = Point::new(rect.x0 - em * label.ink.x0, rect.y1 + em * label.ink.y0);
         self.places.add_label(rect);
-        self.drawn.push((Layer::Text, Mark { group, shape: Shape::Label { label, at, em, ink } }));
+        self.drawn.push((
+            Layer::Text,
+            Mark {
+                group,
+                shape: Shape::Label { label, at, em, ink },
+            },
+        ));
     }
 
     /// Asks for a place for a remark along the field's lower edge, else its upper one.
@@ -341,11 +408,22 @@ impl<'a> Canvas<'a> {
             for (y, cost) in [(field.y1 - gap - size.y, 0.0), (field.y0 + gap, 1.0)] {
                 let rect = Rect::from_origin_size((x, y), (size.x, size.y));
                 let cost = (cost + part) * self.style.em;
-                candidates.push(Candidate { rect, cost, leader: None });
+                candidates.push(Candidate {
+                    rect,
+                    cost,
+                    leader: None,
+                });
             }
         }
         let seek = Seek::Places(candidates);
-        self.wish(Wish { rank: Rank::Word, group, blame: None, label, ink: INK, seek });
+        self.wish(Wish {
+            rank: Rank::Word,
+            group,
+            blame: None,
+            label,
+            ink: INK,
+            seek,
+        });
     }
 
     /// The best place around a point: rings of growing distance, on each the directions away from the strokes through
@@ -357,9 +435,15 @@ impl<'a> Canvas<'a> {
         let ways: Vec<(Vec2, f64)> = (0..WAYS)
             .map(|w| {
                 let angle = turn(w);
-                let away = strokes.iter().map(|d| apart(angle, *d)).fold(HALF_PI, f64::min);
+                let away = strokes
+                    .iter()
+                    .map(|d| apart(angle, *d))
+                    .fold(HALF_PI, f64::min);
                 let order = (HALF_PI - away) / HALF_PI + TIE * apart(angle, PREFERRED);
-                (Vec2::new(cos(angle), -sin(angle)), order * ORDER_WORTH * self.style.em)
+                (
+                    Vec2::new(cos(angle), -sin(angle)),
+                    order * ORDER_WORTH * self.style.em,
+                )
             })
             .collect();
         let off = self.style.event + self.style.clear_ink / 2.0;

@@ -15,8 +15,8 @@ use super::job::{Job, letter};
 use super::names::number;
 use super::place::Candidate;
 use super::spacetime::{primed, primes_of};
-use super::words::kind;
 use super::style::{CLARET, CURVE_TOLERANCE, GUIDE, INK, OCHRE, OWNERS, TEAL};
+use super::words::kind;
 use crate::dynamics::{Momentum, Total};
 use crate::fault::{Fault, Kind, ObjectId};
 use crate::label::Label;
@@ -72,37 +72,66 @@ impl Energy {
     pub(super) fn of(job: &mut Job<'_>, index: usize, panel: &Panel, from: &Viewing) -> Self {
         let field = format!("panels.{index}");
         let collision = collision(job, &field, panel);
-        let usual = if collision.is_some() { Arrows::TipToTail } else { Arrows::FromOrigin };
+        let usual = if collision.is_some() {
+            Arrows::TipToTail
+        } else {
+            Arrows::FromOrigin
+        };
         let arrows = panel.arrows.unwrap_or(usual);
         let (vectors, sum) = match &collision {
             Some(name) => of_collision(job, name, from, arrows),
             None => of_particles(job, &field, panel, from, arrows),
         };
-        let is_projection = vectors.iter().any(|v| v.has_across) || sum.as_ref().is_some_and(|s| s.has_across);
+        let is_projection =
+            vectors.iter().any(|v| v.has_across) || sum.as_ref().is_some_and(|s| s.has_across);
         if is_projection {
             job.finding(
                 &field,
-                format!("panel {} shows E and px alone: momentum across is drawn in projection", letter(index)),
+                format!(
+                    "panel {} shows E and px alone: momentum across is drawn in projection",
+                    letter(index)
+                ),
                 "say so in the caption",
             );
         }
         let energy = job.solved.units.energy.clone();
         let momentum = energy.for_dimension(Dimension::Momentum);
         let range = &panel.range;
-        let y = job.range(range.energy.as_ref(), &energy, &format!("{field}.range.energy"));
+        let y = job.range(
+            range.energy.as_ref(),
+            &energy,
+            &format!("{field}.range.energy"),
+        );
         let x = job.range(range.px.as_ref(), &momentum, &format!("{field}.range.px"));
         let mut contents = Rect::ZERO;
-        for p in vectors.iter().flat_map(|v| [v.tail, v.tip]).chain(sum.iter().map(|s| s.tip)) {
+        for p in vectors
+            .iter()
+            .flat_map(|v| [v.tail, v.tip])
+            .chain(sum.iter().map(|s| s.tip))
+        {
             contents = contents.union_pt(p);
         }
         let primes = primes_of(job, from);
-        let symbol = if is_projection { format!("{}_x c", primed("p", primes)) } else { format!("{}c", primed("p", primes)) };
-        let axis = |symbol: String| Axis { symbol, unit: energy.latex(), factor: 1.0 };
+        let symbol = if is_projection {
+            format!("{}_x c", primed("p", primes))
+        } else {
+            format!("{}c", primed("p", primes))
+        };
+        let axis = |symbol: String| Axis {
+            symbol,
+            unit: energy.latex(),
+            factor: 1.0,
+        };
         Self {
             arrows,
             has_words: collision.is_some(),
             has_shells: panel.hyperbolas != Some(false),
-            axes: Axes { x: axis(symbol), y: axis(primed("E", primes)), has_arcs: false, has_halves: true },
+            axes: Axes {
+                x: axis(symbol),
+                y: axis(primed("E", primes)),
+                has_arcs: false,
+                has_halves: true,
+            },
             wanted: Wanted { x, y, contents },
             vectors,
             sum,
@@ -118,7 +147,11 @@ impl Energy {
     /// What it shows, in words.
     pub(super) fn words(&self) -> Vec<String> {
         let of = |form: Form| -> Vec<&str> {
-            self.vectors.iter().filter(|v| v.form == form).map(|v| &*v.object.name).collect()
+            self.vectors
+                .iter()
+                .filter(|v| v.form == form)
+                .map(|v| &*v.object.name)
+                .collect()
         };
         let (before, after) = (of(Form::Before), of(Form::After));
         if self.has_words {
@@ -165,14 +198,22 @@ impl Energy {
         };
         let drawn = arrow(tail, tip, vector.form, 0.0, canvas.style);
         canvas.arrow(layer, group, tip, &drawn, vector.ink);
-        let label = job.solved.particles.get(&vector.object.name).and_then(|p| p.label.as_deref());
+        let label = job
+            .solved
+            .particles
+            .get(&vector.object.name)
+            .and_then(|p| p.label.as_deref());
         let label = job.names.of(&vector.object, label);
         let candidates = match clip::segment(tail, tip, window.field) {
             Some(ends) => self.name_places(canvas, &label, ends, vector.form, self.name_parts()),
             None => Vec::new(),
         };
         let candidates = if candidates.is_empty() && clip::holds(window.field, tip) {
-            let spot = Spot { foot: tip, along: Vec2::new(0.0, 1.0), order: 0.0 };
+            let spot = Spot {
+                foot: tip,
+                along: Vec2::new(0.0, 1.0),
+                order: 0.0,
+            };
             beside(canvas, &label, &[spot], Sides::RightFirst, canvas.style.dot)
         } else {
             candidates
@@ -182,7 +223,10 @@ impl Energy {
                 Fault::new(
                     vector.object.clone(),
                     "",
-                    format!("its arrow lies outside the range of a panel of {}", job.plate),
+                    format!(
+                        "its arrow lies outside the range of a panel of {}",
+                        job.plate
+                    ),
                     "widen the range, or take the particle off the panel's list",
                 )
                 .finding(),
@@ -190,7 +234,13 @@ impl Energy {
             return;
         }
         let blame = Some(vector.object.clone());
-        wish(canvas, Rank::Name, (group, blame), (label, vector.ink), candidates);
+        wish(
+            canvas,
+            Rank::Name,
+            (group, blame),
+            (label, vector.ink),
+            candidates,
+        );
     }
 
     /// Where along its arrow a name is looked for: in a fan near the tip, where its arrows are apart.
@@ -221,7 +271,11 @@ impl Energy {
                 let (foot, tip) = (window.mm(Point::ORIGIN), window.mm(sum.tip));
                 let middle = a.midpoint(b);
                 let turn = (tip - foot).cross(middle - foot);
-                if turn > 0.0 || (turn == 0.0 && form != Form::Before) { Sides::RightFirst } else { Sides::LeftFirst }
+                if turn > 0.0 || (turn == 0.0 && form != Form::Before) {
+                    Sides::RightFirst
+                } else {
+                    Sides::LeftFirst
+                }
             }
             _ if b.x < a.x => Sides::LeftFirst,
             _ => Sides::RightFirst,
@@ -234,7 +288,11 @@ impl Energy {
         let group = canvas.group(&format!("total of {}", sum.object));
         let (foot, tip) = (window.mm(Point::ORIGIN), window.mm(sum.tip));
         if sum.has_arrow {
-            let back = if self.is_crowded(canvas, tip, tip - foot) { canvas.style.head_back } else { 0.0 };
+            let back = if self.is_crowded(canvas, tip, tip - foot) {
+                canvas.style.head_back
+            } else {
+                0.0
+            };
             let drawn = arrow(foot, tip, Form::Total, back, canvas.style);
             canvas.arrow(Layer::Total, group, tip, &drawn, INK);
             if let Some(ends) = clip::segment(foot, tip, window.field) {
@@ -248,13 +306,25 @@ impl Energy {
         if self.has_shells && sum.mass > 0.0 {
             let pen = (INK, canvas.style.stroke.axis);
             shell(canvas, group, sum.mass, pen);
-            let symbol = if sum.has_across { r"M_{\mathrm{T}}c^2" } else { "Mc^2" };
+            let symbol = if sum.has_across {
+                r"M_{\mathrm{T}}c^2"
+            } else {
+                "Mc^2"
+            };
             let unit = job.solved.units.energy.latex();
             let value = number(&significant(sum.mass, MASS_DIGITS));
-            let label = job.names.math(&format!(r"{symbol}\,{{=}}\,{value}\,{unit}"));
+            let label = job
+                .names
+                .math(&format!(r"{symbol}\,{{=}}\,{value}\,{unit}"));
             let places = along_shell(canvas, sum.mass, sum.tip.x);
             let candidates = beside(canvas, &label, &places, Sides::BelowFirst, pen.1 / 2.0);
-            wish(canvas, Rank::Curve, (group, Some(sum.object.clone())), (label, INK), candidates);
+            wish(
+                canvas,
+                Rank::Curve,
+                (group, Some(sum.object.clone())),
+                (label, INK),
+                candidates,
+            );
         }
     }
 
@@ -279,7 +349,10 @@ impl Energy {
         for vector in self.vectors.iter().filter(|v| v.tail == Point::ORIGIN) {
             let mass = vector.transverse_mass;
             let is_known = seen.iter().any(|m| (m - mass).abs() <= SAME_MASS * mass)
-                || self.sum.as_ref().is_some_and(|sum| (sum.mass - mass).abs() <= SAME_MASS * mass);
+                || self
+                    .sum
+                    .as_ref()
+                    .is_some_and(|sum| (sum.mass - mass).abs() <= SAME_MASS * mass);
             if mass <= 0.0 || is_known {
                 continue;
             }
@@ -290,23 +363,37 @@ impl Energy {
             let places = along_shell(canvas, mass, 0.0);
             let candidates = beside(canvas, &label, &places, Sides::AboveFirst, 0.0);
             let blame = (!canvas.style.is_large()).then(|| vector.object.clone());
-            wish(canvas, Rank::Curve, (group, blame), (label, INK), candidates);
+            wish(
+                canvas,
+                Rank::Curve,
+                (group, blame),
+                (label, INK),
+                candidates,
+            );
         }
     }
 
     /// `before` and `after` beside their last arrows.
     fn sides(&self, job: &mut Job<'_>, canvas: &mut Canvas<'_>) {
-        for (form, text, ink) in [(Form::Before, "before", CLARET), (Form::After, "after", TEAL)] {
+        for (form, text, ink) in [
+            (Form::Before, "before", CLARET),
+            (Form::After, "after", TEAL),
+        ] {
             let own: Vec<&Vector> = self.vectors.iter().filter(|v| v.form == form).collect();
             let group = canvas.group(text);
             let label = job.names.word(text);
             let mut candidates = Vec::new();
             for (i, vector) in own.iter().rev().enumerate() {
                 let ends = (canvas.window.mm(vector.tail), canvas.window.mm(vector.tip));
-                let Some(ends) = clip::segment(ends.0, ends.1, canvas.window.field) else { continue };
+                let Some(ends) = clip::segment(ends.0, ends.1, canvas.window.field) else {
+                    continue;
+                };
                 let places = self.name_places(canvas, &label, ends, form, &WORD_PARTS);
                 let later = i as f64 * canvas.style.em;
-                candidates.extend(places.into_iter().map(|c| Candidate { cost: c.cost + later, ..c }));
+                candidates.extend(places.into_iter().map(|c| Candidate {
+                    cost: c.cost + later,
+                    ..c
+                }));
             }
             wish(canvas, Rank::Word, (group, None), (label, ink), candidates);
         }
@@ -332,12 +419,23 @@ fn collision(job: &mut Job<'_>, field: &str, panel: &Panel) -> Option<Arc<str>> 
         }
         return found;
     }
-    let only = if solved.collisions.len() == 1 { solved.collisions.keys().next() } else { None };
+    let only = if solved.collisions.len() == 1 {
+        solved.collisions.keys().next()
+    } else {
+        None
+    };
     only.filter(|_| panel.particles.is_none()).cloned()
 }
 
-fn of_collision(job: &mut Job<'_>, name: &Arc<str>, from: &Viewing, arrows: Arrows) -> (Vec<Vector>, Option<Sum>) {
-    let Some(collision) = job.solved.collisions.get(name) else { return (Vec::new(), None) };
+fn of_collision(
+    job: &mut Job<'_>,
+    name: &Arc<str>,
+    from: &Viewing,
+    arrows: Arrows,
+) -> (Vec<Vector>, Option<Sum>) {
+    let Some(collision) = job.solved.collisions.get(name) else {
+        return (Vec::new(), None);
+    };
     let before = boosted(job, &collision.before, from);
     let after = boosted(job, &collision.after, from);
     let total = Total::of(&before.iter().map(|p| p.1).collect::<Vec<_>>());
@@ -345,10 +443,20 @@ fn of_collision(job: &mut Job<'_>, name: &Arc<str>, from: &Viewing, arrows: Arro
     let mut vectors = Vec::new();
     for (form, ink, parts) in [(Form::Before, CLARET, &before), (Form::After, TEAL, &after)] {
         let whole = form == Form::Before || collision.balanced();
-        chain(&mut vectors, parts, (form, |_| ink), arrows, whole.then_some(tip));
+        chain(
+            &mut vectors,
+            parts,
+            (form, |_| ink),
+            arrows,
+            whole.then_some(tip),
+        );
     }
-    let object = ObjectId { kind: Kind::Collision, name: name.clone() };
-    let has_arrow = before.len() != 1 && (after.len() != 1 || arrows == Arrows::FromOrigin && !collision.balanced());
+    let object = ObjectId {
+        kind: Kind::Collision,
+        name: name.clone(),
+    };
+    let has_arrow = before.len() != 1
+        && (after.len() != 1 || arrows == Arrows::FromOrigin && !collision.balanced());
     let sum = (!before.is_empty()).then(|| sum_of(object, &total, has_arrow));
     (vectors, sum)
 }
@@ -360,7 +468,11 @@ fn of_particles(
     from: &Viewing,
     arrows: Arrows,
 ) -> (Vec<Vector>, Option<Sum>) {
-    let list = if panel.collision.is_some() { Some(&[][..]) } else { panel.particles.as_deref() };
+    let list = if panel.collision.is_some() {
+        Some(&[][..])
+    } else {
+        panel.particles.as_deref()
+    };
     let known = job.solved.particles.keys().cloned().collect();
     let names = job.chosen(list, Kind::Particle, &format!("{field}.particles"), known);
     let parts = boosted(job, &names, from);
@@ -368,7 +480,13 @@ fn of_particles(
     let tip = Point::new(total.px, total.energy);
     let mut vectors = Vec::new();
     let owner = |i: usize| OWNERS[i % OWNERS.len()];
-    chain(&mut vectors, &parts, (Form::Before, owner), arrows, Some(tip));
+    chain(
+        &mut vectors,
+        &parts,
+        (Form::Before, owner),
+        arrows,
+        Some(tip),
+    );
     let has_sum = arrows == Arrows::TipToTail && parts.len() > 1;
     let sum = has_sum.then(|| sum_of(job.plate.clone(), &total, true));
     (vectors, sum)
@@ -391,13 +509,23 @@ const ACROSS: f64 = 1e-12;
 fn boosted(job: &mut Job<'_>, names: &[Arc<str>], from: &Viewing) -> Vec<(ObjectId, Momentum)> {
     let mut found = Vec::new();
     for name in names {
-        let Some(particle) = job.solved.particles.get(name) else { continue };
-        let id = ObjectId { kind: Kind::Particle, name: name.clone() };
+        let Some(particle) = job.solved.particles.get(name) else {
+            continue;
+        };
+        let id = ObjectId {
+            kind: Kind::Particle,
+            name: name.clone(),
+        };
         match particle.momentum.boosted(from.boost) {
             Ok(momentum) => found.push((id, momentum)),
             Err(wrong) => job.names.fault(
-                Fault::new(id, "", format!("it cannot be drawn from this frame: {wrong}"), "choose a slower frame")
-                    .finding(),
+                Fault::new(
+                    id,
+                    "",
+                    format!("it cannot be drawn from this frame: {wrong}"),
+                    "choose a slower frame",
+                )
+                .finding(),
             ),
         }
     }
@@ -418,7 +546,11 @@ fn chain(
     if arrows == Arrows::TipToTail {
         order.sort_by(|&i, &j| {
             let slopes = parts[i].1.beta_x().total_cmp(&parts[j].1.beta_x());
-            if form == Form::After { slopes.reverse() } else { slopes }
+            if form == Form::After {
+                slopes.reverse()
+            } else {
+                slopes
+            }
         });
     }
     let mut at = Point::ORIGIN;
@@ -453,12 +585,17 @@ fn light(job: &mut Job<'_>, canvas: &mut Canvas<'_>) {
     let label = job.names.word("light");
     let mut candidates = Vec::new();
     for (way, order) in [(Vec2::new(1.0, 1.0), 0.0), (Vec2::new(-1.0, 1.0), 1.0)] {
-        let Some((a, b)) = clip::ray(Point::ORIGIN, way, window.plane) else { continue };
+        let Some((a, b)) = clip::ray(Point::ORIGIN, way, window.plane) else {
+            continue;
+        };
         let ends = (window.mm(a), window.mm(b));
         canvas.line(Layer::Light, group, ends, pen);
         let places = spots(ends, &[0.86, 0.8, 0.74, 0.68, 0.92, 0.6, 0.5, 0.4]);
         let beside = beside(canvas, &label, &places, Sides::BelowFirst, 0.0);
-        candidates.extend(beside.into_iter().map(|c| Candidate { cost: c.cost + order * canvas.style.em, ..c }));
+        candidates.extend(beside.into_iter().map(|c| Candidate {
+            cost: c.cost + order * canvas.style.em,
+            ..c
+        }));
     }
     wish(canvas, Rank::Word, (group, None), (label, INK), candidates);
 }
@@ -466,7 +603,11 @@ fn light(job: &mut Job<'_>, canvas: &mut Canvas<'_>) {
 /// Draws a mass shell.
 fn shell(canvas: &mut Canvas<'_>, group: usize, mass: f64, pen: (Ink, f64)) {
     let window = canvas.window;
-    let curve = Hyperbola { centre: Point::ORIGIN, size: mass, branch: Branch::Up };
+    let curve = Hyperbola {
+        centre: Point::ORIGIN,
+        size: mass,
+        branch: Branch::Up,
+    };
     for part in curve.inside(window.plane) {
         let path = window.path(&curve.path(part, CURVE_TOLERANCE / window.scale()));
         canvas.stroke(Layer::Curve, group, path, pen, Vec::new());
@@ -487,7 +628,11 @@ fn along_shell(canvas: &Canvas<'_>, mass: f64, px: f64) -> Vec<Spot> {
         if clip::holds(plane, here) {
             let along = Vec2::new(1.0, -p / energy);
             let order = (p - px).abs() * window.scale() / canvas.style.em * SHELL_ORDER;
-            found.push(Spot { foot: window.mm(here), along, order });
+            found.push(Spot {
+                foot: window.mm(here),
+                along,
+                order,
+            });
         }
     }
     found
@@ -504,7 +649,11 @@ fn shell_label(solved: &Solved, vector: &Vector) -> String {
     let label = solved.particles.get(name).and_then(|p| p.label.clone());
     let simple = label.map(|l| without_scripts(&l)).filter(|l| !l.is_empty());
     let index = simple.unwrap_or_else(|| crate::label::plain(name).source);
-    if vector.has_across { format!(r"m_{{\mathrm{{T}},{index}}}") } else { format!("m_{{{index}}}") }
+    if vector.has_across {
+        format!(r"m_{{\mathrm{{T}},{index}}}")
+    } else {
+        format!("m_{{{index}}}")
+    }
 }
 
 /// LaTeX math up to its first script: scripts of scripts would be too small to read.

@@ -90,7 +90,12 @@ impl Places {
             return;
         }
         let index = self.pieces.len() as u32;
-        self.pieces.push(Piece { a, b, half, is_heavy });
+        self.pieces.push(Piece {
+            a,
+            b,
+            half,
+            is_heavy,
+        });
         let height = self.bounds.height() / self.rows as f64;
         let (low, high) = (a.y.min(b.y) - half, a.y.max(b.y) + half);
         for row in self.row(low)..=self.row(high) {
@@ -136,8 +141,13 @@ impl Places {
 
     /// What it costs that ink lies between a label and what it names; `None` where that is heavy.
     fn parting(&self, leader: Option<Point>, rect: Rect) -> Option<f64> {
-        let Some(start) = leader else { return Some(0.0) };
-        let end = Point::new(start.x.clamp(rect.x0, rect.x1), start.y.clamp(rect.y0, rect.y1));
+        let Some(start) = leader else {
+            return Some(0.0);
+        };
+        let end = Point::new(
+            start.x.clamp(rect.x0, rect.x1),
+            start.y.clamp(rect.y0, rect.y1),
+        );
         let (y0, y1) = (start.y.min(end.y), start.y.max(end.y));
         let (x0, x1) = (start.x.min(end.x), start.x.max(end.x));
         let mut cost = 0.0;
@@ -173,7 +183,12 @@ impl Places {
         let cell = &self.ink[self.row(p.y) * self.columns + self.column(p.x)];
         let mut found = Vec::new();
         for &i in cell {
-            let Piece { a, b, half, is_heavy: _ } = self.pieces[i as usize];
+            let Piece {
+                a,
+                b,
+                half,
+                is_heavy: _,
+            } = self.pieces[i as usize];
             if to_segment(p, a, b) > near + half {
                 continue;
             }
@@ -214,7 +229,9 @@ impl Places {
             if clear < -HAIR {
                 continue;
             }
-            let Some(parting) = self.parting(leader, rect) else { continue };
+            let Some(parting) = self.parting(leader, rect) else {
+                continue;
+            };
             let score = cost + parting - clear;
             if best.is_none_or(|(least, _)| score < least) {
                 best = Some((score, rect));
@@ -276,7 +293,11 @@ fn distance(piece: &Piece, r: Rect) -> f64 {
 fn to_segment(p: Point, a: Point, b: Point) -> f64 {
     let d = b - a;
     let length = d.hypot2();
-    let s = if length > 0.0 { ((p - a).dot(d) / length).clamp(0.0, 1.0) } else { 0.0 };
+    let s = if length > 0.0 {
+        ((p - a).dot(d) / length).clamp(0.0, 1.0)
+    } else {
+        0.0
+    };
     (p - (a + d * s)).hypot()
 }
 
@@ -311,7 +332,10 @@ pub(super) fn box_at(p: Point, way: Vec2, size: Vec2, distance: f64) -> Rect {
         up
     } else {
         let along = a.mul_add(x, b * y);
-        along + (along * along - (a * a + b * b - distance * distance)).max(0.0).sqrt()
+        along
+            + (along * along - (a * a + b * b - distance * distance))
+                .max(0.0)
+                .sqrt()
     };
     Rect::from_center_size(p + way * reach, (size.x, size.y))
 }
@@ -329,7 +353,12 @@ mod tests {
 
     impl Places {
         fn is_free(&self, rect: Rect) -> bool {
-            self.best(&[Candidate { rect, cost: 0.0, leader: None }]).is_some()
+            self.best(&[Candidate {
+                rect,
+                cost: 0.0,
+                leader: None,
+            }])
+            .is_some()
         }
     }
 
@@ -361,8 +390,11 @@ mod tests {
         let mut places = places();
         let near = Rect::new(10.0, 10.0, 14.0, 12.0);
         let next = Rect::new(10.0, 20.0, 14.0, 22.0);
-        let candidates =
-            [(near, 0.0), (next, 1.0)].map(|(rect, cost)| Candidate { rect, cost, leader: None });
+        let candidates = [(near, 0.0), (next, 1.0)].map(|(rect, cost)| Candidate {
+            rect,
+            cost,
+            leader: None,
+        });
         let rect = |places: &Places| places.best(&candidates).map(|(_, rect)| rect);
         assert_eq!(rect(&places), Some(near));
         places.add_label(near);
@@ -375,7 +407,11 @@ mod tests {
     fn heavy_ink_parts_a_label_from_what_it_names() {
         let mut places = places();
         let rect = Rect::new(10.0, 20.0, 14.0, 22.0);
-        let across = [Candidate { rect, cost: 0.0, leader: Some(Point::new(12.0, 25.0)) }];
+        let across = [Candidate {
+            rect,
+            cost: 0.0,
+            leader: Some(Point::new(12.0, 25.0)),
+        }];
         places.add_ink(Point::new(0.0, 24.0), Point::new(80.0, 24.0), 0.1, false);
         assert_eq!(places.best(&across).map(|(_, r)| r), Some(rect));
         places.add_ink(Point::new(0.0, 24.0), Point::new(80.0, 24.0), 0.2, true);

@@ -3,6 +3,7 @@
 
 #![expect(
     clippy::cast_possible_truncation,
+    clippy::cast_possible_wrap,
     clippy::cast_sign_loss,
     reason = "the screen is in f32 points and whole pixels"
 )]
@@ -134,11 +135,8 @@ impl Edge {
         match self.across {
             0 if start < 0 => span.1 = span.0,
             0 => {}
-            step if step > 0 => {
-                span.0 = span
-                    .0
-                    .max((-start).div_euclid(step) + i64::from((-start).rem_euclid(step) > 0))
-            }
+            // Rounded up: the first column that is not outside.
+            step if step > 0 => span.0 = span.0.max(-start.div_euclid(step)),
             step => span.1 = span.1.min(start.div_euclid(-step) + 1),
         }
     }

@@ -13,6 +13,10 @@ use crate::quantity::{Decimals, fixed, grouped, shortest, significant};
 use crate::scene::When;
 use crate::task::{SpeedForm, Speeds, rapidity_from, speeds};
 
+/// The narrowest window in which the row says what it is.
+const LABELLED: f32 = 1000.0;
+/// The narrowest window in which it says from where the frame is seen.
+const SEEN: f32 = 1180.0;
 /// Width of the chooser of frames.
 const CHOOSER: f32 = 136.0;
 
@@ -29,29 +33,29 @@ pub(super) fn row(ui: &mut Ui, layout: &Layout, context: &Context<'_>, wishes: &
     let wide = layout.rect.width() >= WIDE;
     let gap = if wide { 20.0 } else { 12.0 };
     let y = layout.rect.top() + ROW;
-    let left = layout.rect.left() + MARGIN;
-    let label = text::put(
-        ui.painter(),
-        pos2(left, y),
-        Align::LEFT,
-        "Viewing frame",
-        Type::Body,
-        c.quiet,
-    );
-    let mut x = (label.right() + 10.0).round();
+    let mut x = layout.rect.left() + MARGIN;
+    // In a narrow window the words give way before the numbers do.
+    if layout.rect.width() >= LABELLED {
+        let at = pos2(x, y);
+        let label = text::put(
+            ui.painter(),
+            at,
+            Align::LEFT,
+            "Viewing frame",
+            Type::Body,
+            c.quiet,
+        );
+        x = (label.right() + 10.0).round();
+    }
     let rect = Rect::from_min_size(pos2(x, y - CONTROL / 2.0), vec2(CHOOSER, CONTROL));
     frames(ui, rect, layout, context, wishes);
-    x = rect.right() + 8.0;
-    let seen = seen_from(context);
-    let place = text::put(
-        ui.painter(),
-        pos2(x, y),
-        Align::LEFT,
-        &seen,
-        Type::Body,
-        c.quiet,
-    );
-    x = place.right() + gap + 4.0;
+    x = rect.right() + gap;
+    if layout.rect.width() >= SEEN {
+        let at = pos2(rect.right() + 8.0, y);
+        let words = text::cut_end(ui.painter(), &seen_from(context), Type::Body, 220.0);
+        let place = text::put(ui.painter(), at, Align::LEFT, &words, Type::Body, c.quiet);
+        x = place.right() + gap + 4.0;
+    }
     let values = speeds(layout.rapidity);
     for (form, name) in FORMS {
         let label = text::put(

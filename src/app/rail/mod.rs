@@ -1,5 +1,6 @@
 //! The rail: the viewing frame's rapidity, with a tick at the rapidity of everything in the scene.
 
+mod dimension;
 mod entry;
 mod layout;
 mod paint;

@@ -185,19 +185,27 @@ fn handle(ui: &mut Ui, layout: &Layout, shown: &Shown, view: &View, wishes: &mut
         .on_hover_cursor(CursorIcon::ResizeHorizontal);
     response.widget_info(|| WidgetInfo::slider(true, layout.rapidity, "Viewing frame rapidity"));
     let (scale, _) = layout.working();
-    // The press counts, not the distance after which a press becomes a drag: nothing of the move is lost.
-    let pressed = ui.input(|i| i.pointer.primary_pressed()) && response.is_pointer_button_down_on();
-    let mut grip = view.rail.grip;
-    if let (true, Some(at)) = (pressed, response.interact_pointer_pos()) {
-        grip = at.x - peg.center().x;
+    // The press counts, not the distance after which a press becomes a drag, and the last move counts that comes
+    // with the release: nothing of the way is lost.
+    let (pressed, down, origin, at) = ui.input(|i| {
+        let p = &i.pointer;
+        (
+            p.primary_pressed(),
+            p.primary_down(),
+            p.press_origin(),
+            p.latest_pos(),
+        )
+    });
+    let mut grip = view.rail.held.map(|_| view.rail.grip);
+    if let (true, true, Some(origin)) = (pressed, response.is_pointer_button_down_on(), origin) {
+        let off = origin.x - peg.center().x;
         let axis = (layout.scale.low, layout.scale.high);
-        wishes.push(Command::Rail(RailCommand::Take { axis, grip }));
+        wishes.push(Command::Rail(RailCommand::Take { axis, grip: off }));
         response.request_focus();
+        grip = (at != Some(origin)).then_some(off);
     }
-    if let (true, Some(at)) = (
-        response.is_pointer_button_down_on() && !pressed,
-        response.interact_pointer_pos(),
-    ) && ui.input(|i| i.pointer.delta().x != 0.0)
+    if let (Some(grip), Some(at)) = (grip, at)
+        && ui.input(|i| i.pointer.delta().x != 0.0)
     {
         let x = at.x - grip;
         let held = nearest(layout, scale, pos2(x, at.y), HOLD);
@@ -207,7 +215,7 @@ fn handle(ui: &mut Ui, layout: &Layout, shown: &Shown, view: &View, wishes: &mut
         };
         wishes.push(Command::Frame(when));
     }
-    if view.rail.held.is_some() && !ui.input(|i| i.pointer.primary_down()) {
+    if view.rail.held.is_some() && !down {
         wishes.push(Command::Rail(RailCommand::Release));
     }
     asked(ui, layout, wishes);
