@@ -121,15 +121,15 @@ fn leg_of(momentum: &Momentum) -> Option<Leg> {
             across: py / mass,
         }),
         Momentum::Massless {
-            p_minus,
+            p_minus: 0.0,
             p_plus: _,
             py: 0.0,
-        } if p_minus == 0.0 => Some(Leg::Light(Side::Plus)),
+        } => Some(Leg::Light(Side::Plus)),
         Momentum::Massless {
             p_minus: _,
-            p_plus,
+            p_plus: 0.0,
             py: 0.0,
-        } if p_plus == 0.0 => Some(Leg::Light(Side::Minus)),
+        } => Some(Leg::Light(Side::Minus)),
         Momentum::Massless { .. } => None,
     }
 }

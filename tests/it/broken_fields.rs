@@ -14,17 +14,20 @@ fn values(text: &str) -> Vec<(usize, usize)> {
     let mut i = 0;
     while i < bytes.len() {
         match bytes[i] {
-            b'"' => i = string_end(text, i),
+            b'"' => {
+                i = string_end(text, i);
+                continue;
+            }
             b'/' if bytes.get(i + 1) == Some(&b'/') => {
-                i += text[i..].find('\n').unwrap_or(text.len() - i)
+                i += text[i..].find('\n').unwrap_or(text.len() - i);
             }
             b':' => {
                 let start = i + 1 + text[i + 1..].find(|c: char| !c.is_whitespace()).unwrap();
                 found.push((start, value_end(text, start)));
-                i += 1;
             }
-            _ => i += 1,
+            _ => {}
         }
+        i += 1;
     }
     found
 }
@@ -45,9 +48,8 @@ fn value_end(text: &str, start: usize) -> usize {
                 continue;
             }
             b'(' | b'[' | b'{' => depth += 1,
-            b')' | b']' | b'}' if depth == 0 => return i,
+            b')' | b']' | b'}' | b',' if depth == 0 => return i,
             b')' | b']' | b'}' => depth -= 1,
-            b',' if depth == 0 => return i,
             _ => {}
         }
         i += 1;
