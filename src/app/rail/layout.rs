@@ -313,6 +313,7 @@ fn upward(value: f64) -> String {
     if value <= 0.0 {
         return "0".to_owned();
     }
+    #[expect(clippy::cast_possible_truncation, reason = "a power of ten of an f64")]
     let power = num::log10(value).floor() as i32;
     let unit = Step { digit: 1.0, power };
     let count = (value / unit.value() - 1e-6).ceil();
