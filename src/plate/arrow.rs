@@ -64,25 +64,54 @@ pub(super) fn arrow(tail: Point, tip: Point, form: Form, back: f64, style: &Styl
     let taper = style.taper.min(length / 4.0);
     let half = form.shaft(style) / 2.0;
     let unit = way / length;
-    let back = if back + 2.0 * head.length < length { back } else { 0.0 };
+    let back = if back + 2.0 * head.length < length {
+        back
+    } else {
+        0.0
+    };
     let neck = tip - unit * back;
     let outline = outline(tail, neck, unit, (half, taper), head);
-    let paper = if form == Form::After { inwards(&outline, style.stroke.rim) } else { Vec::new() };
+    let paper = if form == Form::After {
+        inwards(&outline, style.stroke.rim)
+    } else {
+        Vec::new()
+    };
     let mut body = vec![outline];
     if back > 0.0 {
-        body.push(spike(neck - unit * (head.length / 2.0), tip, unit, half, taper));
+        body.push(spike(
+            neck - unit * (head.length / 2.0),
+            tip,
+            unit,
+            half,
+            taper,
+        ));
     }
-    Arrow { body, paper, dot: None, half_slope: head.width / 2.0 / head.length }
+    Arrow {
+        body,
+        paper,
+        dot: None,
+        half_slope: head.width / 2.0 / head.length,
+    }
 }
 
 /// A head on a short arrow: both lengths shrink so that the head is half of it, the width less.
 fn shortened(head: Head, length: f64) -> Head {
     const LEAST_WIDTH: f64 = 0.75;
     let k = (length / (2.0 * head.length)).min(1.0);
-    Head { length: head.length * k, width: head.width * k.max(LEAST_WIDTH), notch: head.notch * k }
+    Head {
+        length: head.length * k,
+        width: head.width * k.max(LEAST_WIDTH),
+        notch: head.notch * k,
+    }
 }
 
-fn outline(tail: Point, tip: Point, unit: Vec2, (half, taper): (f64, f64), head: Head) -> Vec<Point> {
+fn outline(
+    tail: Point,
+    tip: Point,
+    unit: Vec2,
+    (half, taper): (f64, f64),
+    head: Head,
+) -> Vec<Point> {
     let across = Vec2::new(-unit.y, unit.x);
     let at = |from: Point, along: f64, side: f64| from + unit * along + across * side;
     let wing = head.width / 2.0;
@@ -104,7 +133,13 @@ fn outline(tail: Point, tip: Point, unit: Vec2, (half, taper): (f64, f64), head:
 fn spike(from: Point, tip: Point, unit: Vec2, half: f64, taper: f64) -> Vec<Point> {
     let across = Vec2::new(-unit.y, unit.x) * half;
     let shoulder = tip - unit * taper;
-    vec![from + across, shoulder + across, tip, shoulder - across, from - across]
+    vec![
+        from + across,
+        shoulder + across,
+        tip,
+        shoulder - across,
+        from - across,
+    ]
 }
 
 /// Too short for a head: a thin stroke, and at its tip a dot or a ring.
@@ -113,7 +148,12 @@ fn stub(tail: Point, tip: Point, form: Form, style: &Style) -> Arrow {
     let length = way.hypot();
     let body = if length > 0.0 {
         let across = Vec2::new(-way.y, way.x) * (style.stroke.axis / 2.0 / length);
-        vec![vec![tail + across, tip + across, tip - across, tail - across]]
+        vec![vec![
+            tail + across,
+            tip + across,
+            tip - across,
+            tail - across,
+        ]]
     } else {
         Vec::new()
     };
@@ -124,13 +164,20 @@ fn stub(tail: Point, tip: Point, form: Form, style: &Style) -> Arrow {
             (style.ring + half, style.ring - half)
         }
     };
-    Arrow { body, paper: Vec::new(), dot: Some(dot), half_slope: 0.0 }
+    Arrow {
+        body,
+        paper: Vec::new(),
+        dot: Some(dot),
+        half_slope: 0.0,
+    }
 }
 
 /// The polygon with every edge moved inwards by `by`, corners mitred; empty where nothing is left.
 fn inwards(points: &[Point], by: f64) -> Vec<Point> {
     let n = points.len();
-    let area: f64 = (0..n).map(|i| points[i].to_vec2().cross(points[(i + 1) % n].to_vec2())).sum();
+    let area: f64 = (0..n)
+        .map(|i| points[i].to_vec2().cross(points[(i + 1) % n].to_vec2()))
+        .sum();
     let turn = area.signum();
     let edge = |i: usize| {
         let (a, b) = (points[i], points[(i + 1) % n]);
@@ -145,7 +192,11 @@ fn inwards(points: &[Point], by: f64) -> Vec<Point> {
             (cross != 0.0).then(|| a + u * ((b - a).cross(v) / cross))
         })
         .collect();
-    if inner.len() == n && inner.iter().all(|p| p.is_finite()) { inner } else { Vec::new() }
+    if inner.len() == n && inner.iter().all(|p| p.is_finite()) {
+        inner
+    } else {
+        Vec::new()
+    }
 }
 
 /// A solid head without a shaft, its tip on a point.
@@ -182,15 +233,34 @@ mod tests {
 
     #[test]
     fn a_hollow_arrow_keeps_an_even_rim() {
-        let arrow = arrow(Point::ORIGIN, Point::new(20.0, 0.0), Form::After, 0.0, &style());
-        let open = arrow.paper.iter().map(|p| p.y).filter(|y| y.abs() < 0.3).fold(0.0, f64::max);
+        let arrow = arrow(
+            Point::ORIGIN,
+            Point::new(20.0, 0.0),
+            Form::After,
+            0.0,
+            &style(),
+        );
+        let open = arrow
+            .paper
+            .iter()
+            .map(|p| p.y)
+            .filter(|y| y.abs() < 0.3)
+            .fold(0.0, f64::max);
         // Half of 0.78 less a rim of 0.6 pt: an opening of 0.36 mm, as the tokens say.
         assert!((2.0 * open - (0.78 - 2.0 * 0.6 * 25.4 / 72.0)).abs() < 1e-12);
     }
 
     #[test]
     fn short_arrows_shrink_and_then_lose_their_head() {
-        let length = |l: f64| arrow(Point::ORIGIN, Point::new(l, 0.0), Form::Before, 0.0, &style());
+        let length = |l: f64| {
+            arrow(
+                Point::ORIGIN,
+                Point::new(l, 0.0),
+                Form::Before,
+                0.0,
+                &style(),
+            )
+        };
         assert!((length(3.5).body[0][1].x - 1.75).abs() < 1e-12);
         assert!((length(3.5).body[0][1].y - 0.75 * 0.75).abs() < 1e-12);
         assert_eq!(length(2.5).dot, Some((0.5, 0.0)));

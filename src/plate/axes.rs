@@ -5,12 +5,13 @@ use std::sync::Arc;
 use kurbo::{Point, Rect, Vec2};
 
 use super::arrow::{head, shaft_end};
-use super::canvas::{Canvas, Layer, Rank, Seek, Window, Wish};
+use super::canvas::{Canvas, Layer, Rank, Seek, Wish};
 use super::names::{Names, number};
 use super::outline;
 use super::place::Candidate;
 use super::style::{INK, Style};
 use super::ticks::Ticks;
+use super::window::Window;
 use crate::fault::ObjectId;
 use crate::label::Label;
 use crate::marks::Ink;
@@ -56,7 +57,11 @@ const CLOSEST: f64 = 0.55;
 impl Axis {
     /// `ct / m`; a compound unit or a power of ten stands in parentheses.
     pub(super) fn title(&self, power: i32) -> String {
-        let Self { symbol, unit, factor: _ } = self;
+        let Self {
+            symbol,
+            unit,
+            factor: _,
+        } = self;
         let compound = unit.contains(r"\,") || unit.contains('/');
         match (power, compound) {
             (0, false) => format!(r"{symbol}\,/\,{unit}"),
@@ -88,18 +93,43 @@ impl Axes {
     }
 
     /// Draws them and asks for places for their numbers and titles.
-    pub(super) fn draw(&self, canvas: &mut Canvas<'_>, names: &mut Names, ticks: &AxisTicks, group: usize) {
+    pub(super) fn draw(
+        &self,
+        canvas: &mut Canvas<'_>,
+        names: &mut Names,
+        ticks: &AxisTicks,
+        group: usize,
+    ) {
         let (plane, field) = (canvas.window.plane, canvas.window.field);
-        let crossing = Point::new(0.0_f64.clamp(plane.x0, plane.x1), 0.0_f64.clamp(plane.y0, plane.y1));
+        let crossing = Point::new(
+            0.0_f64.clamp(plane.x0, plane.x1),
+            0.0_f64.clamp(plane.y0, plane.y1),
+        );
         let at = canvas.window.mm(crossing);
         let past = canvas.style.past_field;
         let top = Point::new(at.x, field.y0 - past);
         let right = Point::new(field.x1 + past, at.y);
         let pen = (INK, canvas.style.stroke.axis);
-        headed(canvas, Layer::Axis, group, (Point::new(at.x, field.y1), top), pen);
-        headed(canvas, Layer::Axis, group, (Point::new(field.x0, at.y), right), pen);
-        let x_places = places(&ticks.x, self.x.factor, |v| canvas.window.mm(Point::new(v, crossing.y)));
-        let y_places = places(&ticks.y, self.y.factor, |v| canvas.window.mm(Point::new(crossing.x, v)));
+        headed(
+            canvas,
+            Layer::Axis,
+            group,
+            (Point::new(at.x, field.y1), top),
+            pen,
+        );
+        headed(
+            canvas,
+            Layer::Axis,
+            group,
+            (Point::new(field.x0, at.y), right),
+            pen,
+        );
+        let x_places = places(&ticks.x, self.x.factor, |v| {
+            canvas.window.mm(Point::new(v, crossing.y))
+        });
+        let y_places = places(&ticks.y, self.y.factor, |v| {
+            canvas.window.mm(Point::new(crossing.x, v))
+        });
         for (_, p) in &x_places {
             tick(canvas, group, *p, Vec2::new(0.0, 1.0), false);
         }
@@ -110,12 +140,19 @@ impl Axes {
             self.halves(canvas, ticks, crossing, group);
         }
         let is_origin = crossing == Point::ORIGIN;
-        for (upright, ticks, places) in [(true, &ticks.y, &y_places), (false, &ticks.x, &x_places)] {
+        for (upright, ticks, places) in [(true, &ticks.y, &y_places), (false, &ticks.x, &x_places)]
+        {
             for &(count, p) in places {
                 if count != 0 || !is_origin {
                     let label = names.math(&number(&ticks.text(count)));
                     let candidates = self.number_places(canvas, &label, p, upright);
-                    wish(canvas, Rank::Number, (group, None), (label, INK), candidates);
+                    wish(
+                        canvas,
+                        Rank::Number,
+                        (group, None),
+                        (label, INK),
+                        candidates,
+                    );
                 }
             }
         }
@@ -129,7 +166,7 @@ impl Axes {
             (false, &self.x, &ticks.x, plane.x0, plane.x1),
         ] {
             let f = axis.factor;
-            if ticks.step.times(1) / f * scale <= canvas.style.half_from || ticks.ticks.is_empty() {
+            if ticks.step.times(1) / f * scale <= canvas.style.half_from || ticks.marks.is_empty() {
                 continue;
             }
             for v in ticks.step.halves(low * f, high * f) {
@@ -144,15 +181,29 @@ impl Axes {
         }
     }
 
-    fn number_places(&self, canvas: &Canvas<'_>, label: &Label, p: Point, upright: bool) -> Vec<Candidate> {
+    fn number_places(
+        &self,
+        canvas: &Canvas<'_>,
+        label: &Label,
+        p: Point,
+        upright: bool,
+    ) -> Vec<Candidate> {
         let style = canvas.style;
         let size = canvas.size(label);
         let order = style.em;
-        let [left, below] = if upright { style.upright_number } else { style.level_number };
+        let [left, below] = if upright {
+            style.upright_number
+        } else {
+            style.level_number
+        };
         let corner = |x: f64, y: f64| Rect::from_origin_size((x, y), (size.x, size.y));
         let mut found = Vec::new();
         if self.has_arcs {
-            found.push(Candidate { rect: corner(p.x - left - size.x, p.y + below), cost: 0.0, leader: None });
+            found.push(Candidate {
+                rect: corner(p.x - left - size.x, p.y + below),
+                cost: 0.0,
+                leader: None,
+            });
         }
         let first = if self.has_arcs { order } else { 0.0 };
         for (i, slide) in [0.0, -0.5, 0.5, -1.0, 1.0].into_iter().enumerate() {
@@ -163,10 +214,18 @@ impl Axes {
             } else {
                 (p.x - size.x / 2.0 + by, p.y + below)
             };
-            found.push(Candidate { rect: corner(near.0, near.1), cost, leader: None });
+            found.push(Candidate {
+                rect: corner(near.0, near.1),
+                cost,
+                leader: None,
+            });
             if upright {
                 let rect = corner(p.x + style.centred_number, near.1);
-                found.push(Candidate { rect, cost: cost + 2.0 * order, leader: None });
+                found.push(Candidate {
+                    rect,
+                    cost: cost + 2.0 * order,
+                    leader: None,
+                });
             }
         }
         let [beside_left, beside_right] = [p.x - left - size.x, p.x + left];
@@ -180,7 +239,11 @@ impl Axes {
         // Above a level axis a number would be taken for one of something else.
         let count = if upright { corners.len() } else { 2 };
         for (k, &(x, y)) in corners[..count].iter().enumerate() {
-            found.push(Candidate { rect: corner(x, y), cost: (3.0 + k as f64) * order, leader: None });
+            found.push(Candidate {
+                rect: corner(x, y),
+                cost: (3.0 + k as f64) * order,
+                leader: None,
+            });
         }
         found
     }
@@ -198,12 +261,19 @@ impl Axes {
         let label = names.math(&self.y.title(ticks.y.power));
         let [gap, below] = style.upright_title;
         let width = canvas.size(&label).x;
-        let candidates = [(top.x - gap - width, 0.0), (top.x + gap, 2.0)].map(|(x, cost)| Candidate {
-            rect: on_baseline(canvas, &label, x, top.y + below),
-            cost: cost * step,
-            leader: None,
-        });
-        wish(canvas, Rank::Title, (group, None), (label, INK), candidates.to_vec());
+        let candidates =
+            [(top.x - gap - width, 0.0), (top.x + gap, 2.0)].map(|(x, cost)| Candidate {
+                rect: on_baseline(canvas, &label, x, top.y + below),
+                cost: cost * step,
+                leader: None,
+            });
+        wish(
+            canvas,
+            Rank::Title,
+            (group, None),
+            (label, INK),
+            candidates.to_vec(),
+        );
 
         let label = names.math(&self.x.title(ticks.x.power));
         let [past, below] = style.level_title;
@@ -212,9 +282,16 @@ impl Axes {
         let mut candidates = Vec::new();
         for i in 0..TITLE_SHIFTS {
             let x = right.x + past - width - step * f64::from(i);
-            for (y, cost) in [(right.y + below, 0.0), (right.y - below + height / 2.0, 2.0)] {
+            for (y, cost) in [
+                (right.y + below, 0.0),
+                (right.y - below + height / 2.0, 2.0),
+            ] {
                 let rect = on_baseline(canvas, &label, x, y);
-                candidates.push(Candidate { rect, cost: (cost + f64::from(i)) * step, leader: None });
+                candidates.push(Candidate {
+                    rect,
+                    cost: (cost + f64::from(i)) * step,
+                    leader: None,
+                });
             }
         }
         wish(canvas, Rank::Title, (group, None), (label, INK), candidates);
@@ -241,11 +318,22 @@ pub(super) fn wish(
     (label, ink): (Arc<Label>, Ink),
     candidates: Vec<Candidate>,
 ) {
-    canvas.wish(Wish { rank, group, blame, label, ink, seek: Seek::Places(candidates) });
+    canvas.wish(Wish {
+        rank,
+        group,
+        blame,
+        label,
+        ink,
+        seek: Seek::Places(candidates),
+    });
 }
 
 fn places(ticks: &Ticks, factor: f64, mm: impl Fn(f64) -> Point) -> Vec<(i64, Point)> {
-    ticks.ticks.iter().map(|tick| (tick.count, mm(tick.value / factor))).collect()
+    ticks
+        .marks
+        .iter()
+        .map(|tick| (tick.count, mm(tick.value / factor)))
+        .collect()
 }
 
 fn tick(canvas: &mut Canvas<'_>, group: usize, p: Point, across: Vec2, is_half: bool) {
@@ -269,6 +357,11 @@ pub(super) fn headed(
 ) {
     let unit = (tip - from).normalize();
     let size = canvas.style.axis_head;
-    canvas.line(layer, group, (from, shaft_end(tip, unit, size)), (ink, width));
+    canvas.line(
+        layer,
+        group,
+        (from, shaft_end(tip, unit, size)),
+        (ink, width),
+    );
     canvas.fill(layer, group, outline::closed(&head(tip, unit, size)), ink);
 }

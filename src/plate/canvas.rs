@@ -1,18 +1,18 @@
 //! A panel being drawn: marks by layer, the groups they belong to, the ink they put down, the labels still to be set.
 
-use std::collections::BTreeMap;
 use std::sync::Arc;
 
-use kurbo::{Affine, BezPath, PathEl, Point, Rect, Vec2};
+use kurbo::{BezPath, PathEl, Point, Rect, Vec2};
 
 use super::arrow::Arrow;
 use super::clip;
 use super::outline;
 use super::place::{Candidate, Places, box_at};
 use super::style::{INK, PAPER, Style};
+use super::window::{Groups, Window};
 use crate::fault::ObjectId;
 use crate::label::Label;
-use crate::marks::{Cap, Group, Ink, Join, Mark, Paint, Shape, Stroke};
+use crate::marks::{Cap, Ink, Join, Mark, Paint, Shape, Stroke};
 use crate::num::{atan2, cos, sin};
 
 /// What lies over what, lowest first.
@@ -62,88 +62,6 @@ pub(super) enum Rank {
     Name,
     Curve,
     Word,
-}
-
-/// Where a panel stands on its sheet and what part of the plane it shows.
-#[derive(Clone, Copy, Debug, PartialEq)]
-pub(super) struct Window {
-    /// The whole panel, mm.
-    pub(super) outer: Rect,
-    /// The field, mm.
-    pub(super) field: Rect,
-    /// What of the plane it shows: x right, t or E up.
-    pub(super) plane: Rect,
-}
-
-impl Window {
-    /// mm per unit of the plane, the same both ways.
-    pub(super) fn scale(&self) -> f64 {
-        self.field.width() / self.plane.width()
-    }
-
-    /// From the plane to mm.
-    pub(super) fn affine(&self) -> Affine {
-        let s = self.scale();
-        let (x, y) = (self.field.x0 - s * self.plane.x0, self.field.y1 + s * self.plane.y0);
-        Affine::new([s, 0.0, 0.0, -s, x, y])
-    }
-
-    /// A point of the plane, mm. Differences are formed before scaling, so that far-off ranges keep their digits.
-    pub(super) fn mm(&self, p: Point) -> Point {
-        let s = self.scale();
-        Point::new(
-            s.mul_add(p.x - self.plane.x0, self.field.x0),
-            s.mul_add(self.plane.y0 - p.y, self.field.y1),
-        )
-    }
-
-    /// A path of the plane, mm.
-    pub(super) fn path(&self, path: &BezPath) -> BezPath {
-        path.elements()
-            .iter()
-            .map(|&element| match element {
-                PathEl::MoveTo(p) => PathEl::MoveTo(self.mm(p)),
-                PathEl::LineTo(p) => PathEl::LineTo(self.mm(p)),
-                PathEl::QuadTo(p, q) => PathEl::QuadTo(self.mm(p), self.mm(q)),
-                PathEl::CurveTo(p, q, r) => PathEl::CurveTo(self.mm(p), self.mm(q), self.mm(r)),
-                PathEl::ClosePath => PathEl::ClosePath,
-            })
-            .collect()
-    }
-}
-
-/// The groups of a sheet, one for each object and panel, with ids fit for XML.
-#[derive(Clone, Debug, Default)]
-pub(super) struct Groups {
-    /// In order of first use.
-    pub(super) list: Vec<Group>,
-    known: BTreeMap<(char, String), usize>,
-    ids: BTreeMap<String, usize>,
-}
-
-impl Groups {
-    /// The group of a title on a panel.
-    pub(super) fn of(&mut self, letter: char, title: &str) -> usize {
-        if let Some(&index) = self.known.get(&(letter, title.to_owned())) {
-            return index;
-        }
-        let plain: String = title
-            .chars()
-            .map(|c| if c.is_ascii_alphanumeric() || c == '_' || c == '.' { c } else { '-' })
-            .collect();
-        let stem = format!("{letter}-{plain}");
-        let mut id = stem.clone();
-        let mut count = 1;
-        while self.ids.contains_key(&id) {
-            count += 1;
-            id = format!("{stem}-{count}");
-        }
-        let index = self.list.len();
-        self.ids.insert(id.clone(), index);
-        self.known.insert((letter, title.to_owned()), index);
-        self.list.push(Group { id, title: title.to_owned() });
-        index
-    }
 }
 
 /// Where a label looks for a place.
@@ -197,9 +115,23 @@ const WAYS: usize = 24;
 
 impl<'a> Canvas<'a> {
     /// An empty panel.
-    pub(super) fn new(style: &'a Style, window: Window, letter: char, groups: &'a mut Groups) -> Self {
+    pub(super) fn new(
+        style: &'a Style,
+        window: Window,
+        letter: char,
+        groups: &'a mut Groups,
+    ) -> Self {
         let places = Places::new(window.outer, style);
-        Self { style, window, letter, groups, drawn: Vec::new(), places, wishes: Vec::new(), has_light_word: false }
+        Self {
+            style,
+            window,
+            letter,
+            groups,
+            drawn: Vec::new(),
+            places,
+            wishes: Vec::new(),
+            has_light_word: false,
+        }
     }
 
     /// The group of some title on this panel.
@@ -215,7 +147,10 @@ impl<'a> Canvas<'a> {
         if layer != Layer::Tint {
             self.take_ink(&path, 0.0, layer);
         }
-        let shape = Shape::Path { path, paint: Paint::Fill(ink) };
+        let shape = Shape::Path {
+            path,
+            paint: Paint::Fill(ink),
+        };
         self.drawn.push((layer, Mark { group, shape }));
     }
 
@@ -232,23 +167,55 @@ impl<'a> Canvas<'a> {
             return;
         }
         self.take_ink(&path, width / 2.0, layer);
-        let stroke = Stroke { ink, width, dash, cap: Cap::Butt, join: Join::Mitre };
-        let shape = Shape::Path { path, paint: Paint::Stroke(stroke) };
+        let stroke = Stroke {
+            ink,
+            width,
+            dash,
+            cap: Cap::Butt,
+            join: Join::Mitre,
+        };
+        let shape = Shape::Path {
+            path,
+            paint: Paint::Stroke(stroke),
+        };
         self.drawn.push((layer, Mark { group, shape }));
     }
 
     /// A solid straight stroke.
-    pub(super) fn line(&mut self, layer: Layer, group: usize, (a, b): (Point, Point), pen: (Ink, f64)) {
+    pub(super) fn line(
+        &mut self,
+        layer: Layer,
+        group: usize,
+        (a, b): (Point, Point),
+        pen: (Ink, f64),
+    ) {
         self.stroke(layer, group, outline::open(&[a, b]), pen, Vec::new());
     }
 
     /// A momentum arrow, cut at the field.
-    pub(super) fn arrow(&mut self, layer: Layer, group: usize, tip: Point, arrow: &Arrow, ink: Ink) {
+    pub(super) fn arrow(
+        &mut self,
+        layer: Layer,
+        group: usize,
+        tip: Point,
+        arrow: &Arrow,
+        ink: Ink,
+    ) {
         let field = self.window.field;
         for body in &arrow.body {
-            self.fill(layer, group, outline::closed(&clip::polygon(body, field)), ink);
+            self.fill(
+                layer,
+                group,
+                outline::closed(&clip::polygon(body, field)),
+                ink,
+            );
         }
-        self.fill(layer, group, outline::closed(&clip::polygon(&arrow.paper, field)), PAPER);
+        self.fill(
+            layer,
+            group,
+            outline::closed(&clip::polygon(&arrow.paper, field)),
+            PAPER,
+        );
         if let Some((radius, paper)) = arrow.dot
             && clip::holds(field, tip)
         {
@@ -327,7 +294,13 @@ impl<'a> Canvas<'a> {
         let em = self.style.em;
         let at = Point::new(rect.x0 - em * label.ink.x0, rect.y1 + em * label.ink.y0);
         self.places.add_label(rect);
-        self.drawn.push((Layer::Text, Mark { group, shape: Shape::Label { label, at, em, ink } }));
+        self.drawn.push((
+            Layer::Text,
+            Mark {
+                group,
+                shape: Shape::Label { label, at, em, ink },
+            },
+        ));
     }
 
     /// Asks for a place for a remark along the field's lower edge, else its upper one.
@@ -341,11 +314,22 @@ impl<'a> Canvas<'a> {
             for (y, cost) in [(field.y1 - gap - size.y, 0.0), (field.y0 + gap, 1.0)] {
                 let rect = Rect::from_origin_size((x, y), (size.x, size.y));
                 let cost = (cost + part) * self.style.em;
-                candidates.push(Candidate { rect, cost, leader: None });
+                candidates.push(Candidate {
+                    rect,
+                    cost,
+                    leader: None,
+                });
             }
         }
         let seek = Seek::Places(candidates);
-        self.wish(Wish { rank: Rank::Word, group, blame: None, label, ink: INK, seek });
+        self.wish(Wish {
+            rank: Rank::Word,
+            group,
+            blame: None,
+            label,
+            ink: INK,
+            seek,
+        });
     }
 
     /// The best place around a point: rings of growing distance, on each the directions away from the strokes through
@@ -357,13 +341,19 @@ impl<'a> Canvas<'a> {
         let ways: Vec<(Vec2, f64)> = (0..WAYS)
             .map(|w| {
                 let angle = turn(w);
-                let away = strokes.iter().map(|d| apart(angle, *d)).fold(HALF_PI, f64::min);
+                let away = strokes
+                    .iter()
+                    .map(|d| apart(angle, *d))
+                    .fold(HALF_PI, f64::min);
                 let order = (HALF_PI - away) / HALF_PI + TIE * apart(angle, PREFERRED);
-                (Vec2::new(cos(angle), -sin(angle)), order * ORDER_WORTH * self.style.em)
+                (
+                    Vec2::new(cos(angle), -sin(angle)),
+                    order * ORDER_WORTH * self.style.em,
+                )
             })
             .collect();
         let off = self.style.event + self.style.clear_ink / 2.0;
-        let rings = ((farthest - nearest) / step).round() as usize;
+        let rings = super::whole::count((farthest - nearest) / step + 0.5);
         let mut best: Option<(f64, Rect)> = None;
         for ring in 0..=rings {
             let far = step * ring as f64;

@@ -6,7 +6,7 @@ use kurbo::{Point, Rect, Vec2};
 
 use super::arrow::{Form, arrow};
 use super::axes::{Axes, Axis, wish};
-use super::beside::{Sides, Spot, beside, spots};
+use super::beside::{Side, Spot, beside, spots};
 use super::canvas::{Canvas, Layer, Rank};
 use super::clip;
 use super::curve::{Branch, Hyperbola};
@@ -15,40 +15,16 @@ use super::job::{Job, letter};
 use super::names::number;
 use super::place::Candidate;
 use super::spacetime::{primed, primes_of};
+use super::style::{CLARET, CURVE_TOLERANCE, GUIDE, INK, OCHRE, TEAL};
+use super::vectors::{Sum, Vector, of_collision, of_particles};
 use super::words::kind;
-use super::style::{CLARET, CURVE_TOLERANCE, GUIDE, INK, OCHRE, OWNERS, TEAL};
-use crate::dynamics::{Momentum, Total};
-use crate::fault::{Fault, Kind, ObjectId};
+use crate::fault::{Fault, Kind};
 use crate::label::Label;
 use crate::marks::Ink;
 use crate::num::hypot;
 use crate::quantity::{Dimension, significant};
 use crate::scene::{Arrows, Panel};
 use crate::solve::{Solved, Viewing};
-
-/// One momentum arrow in the plane: x is px, y is E.
-#[derive(Clone, Debug)]
-struct Vector {
-    object: ObjectId,
-    form: Form,
-    ink: Ink,
-    tail: Point,
-    tip: Point,
-    transverse_mass: f64,
-    has_across: bool,
-}
-
-/// The sum of all vectors before (or of all).
-#[derive(Clone, Debug)]
-struct Sum {
-    object: ObjectId,
-    tip: Point,
-    /// Its vertex: the transverse mass of the sum.
-    mass: f64,
-    has_across: bool,
-    /// Its arrow is drawn: it is none of the others.
-    has_arrow: bool,
-}
 
 /// An energy-momentum panel's contents.
 #[derive(Clone, Debug)]
@@ -72,37 +48,66 @@ impl Energy {
     pub(super) fn of(job: &mut Job<'_>, index: usize, panel: &Panel, from: &Viewing) -> Self {
         let field = format!("panels.{index}");
         let collision = collision(job, &field, panel);
-        let usual = if collision.is_some() { Arrows::TipToTail } else { Arrows::FromOrigin };
+        let usual = if collision.is_some() {
+            Arrows::TipToTail
+        } else {
+            Arrows::FromOrigin
+        };
         let arrows = panel.arrows.unwrap_or(usual);
         let (vectors, sum) = match &collision {
             Some(name) => of_collision(job, name, from, arrows),
             None => of_particles(job, &field, panel, from, arrows),
         };
-        let is_projection = vectors.iter().any(|v| v.has_across) || sum.as_ref().is_some_and(|s| s.has_across);
+        let is_projection =
+            vectors.iter().any(|v| v.has_across) || sum.as_ref().is_some_and(|s| s.has_across);
         if is_projection {
             job.finding(
                 &field,
-                format!("panel {} shows E and px alone: momentum across is drawn in projection", letter(index)),
+                format!(
+                    "panel {} shows E and px alone: momentum across is drawn in projection",
+                    letter(index)
+                ),
                 "say so in the caption",
             );
         }
         let energy = job.solved.units.energy.clone();
         let momentum = energy.for_dimension(Dimension::Momentum);
         let range = &panel.range;
-        let y = job.range(range.energy.as_ref(), &energy, &format!("{field}.range.energy"));
+        let y = job.range(
+            range.energy.as_ref(),
+            &energy,
+            &format!("{field}.range.energy"),
+        );
         let x = job.range(range.px.as_ref(), &momentum, &format!("{field}.range.px"));
         let mut contents = Rect::ZERO;
-        for p in vectors.iter().flat_map(|v| [v.tail, v.tip]).chain(sum.iter().map(|s| s.tip)) {
+        for p in vectors
+            .iter()
+            .flat_map(|v| [v.tail, v.tip])
+            .chain(sum.iter().map(|s| s.tip))
+        {
             contents = contents.union_pt(p);
         }
         let primes = primes_of(job, from);
-        let symbol = if is_projection { format!("{}_x c", primed("p", primes)) } else { format!("{}c", primed("p", primes)) };
-        let axis = |symbol: String| Axis { symbol, unit: energy.latex(), factor: 1.0 };
+        let symbol = if is_projection {
+            format!("{}_x c", primed("p", primes))
+        } else {
+            format!("{}c", primed("p", primes))
+        };
+        let axis = |symbol: String| Axis {
+            symbol,
+            unit: energy.latex(),
+            factor: 1.0,
+        };
         Self {
             arrows,
             has_words: collision.is_some(),
             has_shells: panel.hyperbolas != Some(false),
-            axes: Axes { x: axis(symbol), y: axis(primed("E", primes)), has_arcs: false, has_halves: true },
+            axes: Axes {
+                x: axis(symbol),
+                y: axis(primed("E", primes)),
+                has_arcs: false,
+                has_halves: true,
+            },
             wanted: Wanted { x, y, contents },
             vectors,
             sum,
@@ -118,7 +123,11 @@ impl Energy {
     /// What it shows, in words.
     pub(super) fn words(&self) -> Vec<String> {
         let of = |form: Form| -> Vec<&str> {
-            self.vectors.iter().filter(|v| v.form == form).map(|v| &*v.object.name).collect()
+            self.vectors
+                .iter()
+                .filter(|v| v.form == form)
+                .map(|v| &*v.object.name)
+                .collect()
         };
         let (before, after) = (of(Form::Before), of(Form::After));
         if self.has_words {
@@ -150,7 +159,7 @@ impl Energy {
             self.sides(job, canvas);
         }
         if self.is_projection {
-            job.remark(canvas, "E and px: a projection");
+            job.remark(canvas, "projection on E and px");
         }
     }
 
@@ -165,15 +174,23 @@ impl Energy {
         };
         let drawn = arrow(tail, tip, vector.form, 0.0, canvas.style);
         canvas.arrow(layer, group, tip, &drawn, vector.ink);
-        let label = job.solved.particles.get(&vector.object.name).and_then(|p| p.label.as_deref());
+        let label = job
+            .solved
+            .particles
+            .get(&vector.object.name)
+            .and_then(|p| p.label.as_deref());
         let label = job.names.of(&vector.object, label);
         let candidates = match clip::segment(tail, tip, window.field) {
             Some(ends) => self.name_places(canvas, &label, ends, vector.form, self.name_parts()),
             None => Vec::new(),
         };
         let candidates = if candidates.is_empty() && clip::holds(window.field, tip) {
-            let spot = Spot { foot: tip, along: Vec2::new(0.0, 1.0), order: 0.0 };
-            beside(canvas, &label, &[spot], Sides::RightFirst, canvas.style.dot)
+            let spot = Spot {
+                foot: tip,
+                along: Vec2::new(0.0, 1.0),
+                order: 0.0,
+            };
+            beside(canvas, &label, &[spot], Side::Right, canvas.style.dot)
         } else {
             candidates
         };
@@ -182,7 +199,10 @@ impl Energy {
                 Fault::new(
                     vector.object.clone(),
                     "",
-                    format!("its arrow lies outside the range of a panel of {}", job.plate),
+                    format!(
+                        "its arrow lies outside the range of a panel of {}",
+                        job.plate
+                    ),
                     "widen the range, or take the particle off the panel's list",
                 )
                 .finding(),
@@ -190,7 +210,13 @@ impl Energy {
             return;
         }
         let blame = Some(vector.object.clone());
-        wish(canvas, Rank::Name, (group, blame), (label, vector.ink), candidates);
+        wish(
+            canvas,
+            Rank::Name,
+            (group, blame),
+            (label, vector.ink),
+            candidates,
+        );
     }
 
     /// Where along its arrow a name is looked for: in a fan near the tip, where its arrows are apart.
@@ -221,10 +247,14 @@ impl Energy {
                 let (foot, tip) = (window.mm(Point::ORIGIN), window.mm(sum.tip));
                 let middle = a.midpoint(b);
                 let turn = (tip - foot).cross(middle - foot);
-                if turn > 0.0 || (turn == 0.0 && form != Form::Before) { Sides::RightFirst } else { Sides::LeftFirst }
+                if turn > 0.0 || (turn == 0.0 && form != Form::Before) {
+                    Side::Right
+                } else {
+                    Side::Left
+                }
             }
-            _ if b.x < a.x => Sides::LeftFirst,
-            _ => Sides::RightFirst,
+            _ if b.x < a.x => Side::Left,
+            _ => Side::Right,
         };
         beside(canvas, label, &spots((a, b), parts), sides, half)
     }
@@ -234,27 +264,43 @@ impl Energy {
         let group = canvas.group(&format!("total of {}", sum.object));
         let (foot, tip) = (window.mm(Point::ORIGIN), window.mm(sum.tip));
         if sum.has_arrow {
-            let back = if self.is_crowded(canvas, tip, tip - foot) { canvas.style.head_back } else { 0.0 };
+            let back = if self.is_crowded(canvas, tip, tip - foot) {
+                canvas.style.head_back
+            } else {
+                0.0
+            };
             let drawn = arrow(foot, tip, Form::Total, back, canvas.style);
             canvas.arrow(Layer::Total, group, tip, &drawn, INK);
             if let Some(ends) = clip::segment(foot, tip, window.field) {
                 let label = job.names.word("total");
                 let half = canvas.style.stroke.total / 2.0;
                 let places = spots(ends, &[0.7, 0.62, 0.78, 0.54, 0.46, 0.38, 0.3, 0.84]);
-                let candidates = beside(canvas, &label, &places, Sides::RightFirst, half);
+                let candidates = beside(canvas, &label, &places, Side::Right, half);
                 wish(canvas, Rank::Word, (group, None), (label, INK), candidates);
             }
         }
         if self.has_shells && sum.mass > 0.0 {
             let pen = (INK, canvas.style.stroke.axis);
             shell(canvas, group, sum.mass, pen);
-            let symbol = if sum.has_across { r"M_{\mathrm{T}}c^2" } else { "Mc^2" };
+            let symbol = if sum.has_across {
+                r"M_{\mathrm{T}}c^2"
+            } else {
+                "Mc^2"
+            };
             let unit = job.solved.units.energy.latex();
             let value = number(&significant(sum.mass, MASS_DIGITS));
-            let label = job.names.math(&format!(r"{symbol}\,{{=}}\,{value}\,{unit}"));
+            let label = job
+                .names
+                .math(&format!(r"{symbol}\,{{=}}\,{value}\,{unit}"));
             let places = along_shell(canvas, sum.mass, sum.tip.x);
-            let candidates = beside(canvas, &label, &places, Sides::BelowFirst, pen.1 / 2.0);
-            wish(canvas, Rank::Curve, (group, Some(sum.object.clone())), (label, INK), candidates);
+            let candidates = beside(canvas, &label, &places, Side::Below, pen.1 / 2.0);
+            wish(
+                canvas,
+                Rank::Curve,
+                (group, Some(sum.object.clone())),
+                (label, INK),
+                candidates,
+            );
         }
     }
 
@@ -279,34 +325,55 @@ impl Energy {
         for vector in self.vectors.iter().filter(|v| v.tail == Point::ORIGIN) {
             let mass = vector.transverse_mass;
             let is_known = seen.iter().any(|m| (m - mass).abs() <= SAME_MASS * mass)
-                || self.sum.as_ref().is_some_and(|sum| (sum.mass - mass).abs() <= SAME_MASS * mass);
+                || self
+                    .sum
+                    .as_ref()
+                    .is_some_and(|sum| (sum.mass - mass).abs() <= SAME_MASS * mass);
             if mass <= 0.0 || is_known {
                 continue;
             }
             seen.push(mass);
             let group = canvas.group(&format!("shell of {}", vector.object));
             shell(canvas, group, mass, (GUIDE, canvas.style.stroke.fine));
+            if mass * canvas.window.scale() < canvas.style.name[0] {
+                // Its vertex is lost in the light lines: a name would name those.
+                continue;
+            }
             let label = job.names.math(&shell_label(job.solved, vector));
             let places = along_shell(canvas, mass, 0.0);
-            let candidates = beside(canvas, &label, &places, Sides::AboveFirst, 0.0);
+            let candidates = beside(canvas, &label, &places, Side::Above, 0.0);
             let blame = (!canvas.style.is_large()).then(|| vector.object.clone());
-            wish(canvas, Rank::Curve, (group, blame), (label, INK), candidates);
+            wish(
+                canvas,
+                Rank::Curve,
+                (group, blame),
+                (label, INK),
+                candidates,
+            );
         }
     }
 
     /// `before` and `after` beside their last arrows.
     fn sides(&self, job: &mut Job<'_>, canvas: &mut Canvas<'_>) {
-        for (form, text, ink) in [(Form::Before, "before", CLARET), (Form::After, "after", TEAL)] {
+        for (form, text, ink) in [
+            (Form::Before, "before", CLARET),
+            (Form::After, "after", TEAL),
+        ] {
             let own: Vec<&Vector> = self.vectors.iter().filter(|v| v.form == form).collect();
             let group = canvas.group(text);
             let label = job.names.word(text);
             let mut candidates = Vec::new();
             for (i, vector) in own.iter().rev().enumerate() {
                 let ends = (canvas.window.mm(vector.tail), canvas.window.mm(vector.tip));
-                let Some(ends) = clip::segment(ends.0, ends.1, canvas.window.field) else { continue };
+                let Some(ends) = clip::segment(ends.0, ends.1, canvas.window.field) else {
+                    continue;
+                };
                 let places = self.name_places(canvas, &label, ends, form, &WORD_PARTS);
                 let later = i as f64 * canvas.style.em;
-                candidates.extend(places.into_iter().map(|c| Candidate { cost: c.cost + later, ..c }));
+                candidates.extend(places.into_iter().map(|c| Candidate {
+                    cost: c.cost + later,
+                    ..c
+                }));
             }
             wish(canvas, Rank::Word, (group, None), (label, ink), candidates);
         }
@@ -332,117 +399,12 @@ fn collision(job: &mut Job<'_>, field: &str, panel: &Panel) -> Option<Arc<str>> 
         }
         return found;
     }
-    let only = if solved.collisions.len() == 1 { solved.collisions.keys().next() } else { None };
+    let only = if solved.collisions.len() == 1 {
+        solved.collisions.keys().next()
+    } else {
+        None
+    };
     only.filter(|_| panel.particles.is_none()).cloned()
-}
-
-fn of_collision(job: &mut Job<'_>, name: &Arc<str>, from: &Viewing, arrows: Arrows) -> (Vec<Vector>, Option<Sum>) {
-    let Some(collision) = job.solved.collisions.get(name) else { return (Vec::new(), None) };
-    let before = boosted(job, &collision.before, from);
-    let after = boosted(job, &collision.after, from);
-    let total = Total::of(&before.iter().map(|p| p.1).collect::<Vec<_>>());
-    let tip = Point::new(total.px, total.energy);
-    let mut vectors = Vec::new();
-    for (form, ink, parts) in [(Form::Before, CLARET, &before), (Form::After, TEAL, &after)] {
-        let whole = form == Form::Before || collision.balanced();
-        chain(&mut vectors, parts, (form, |_| ink), arrows, whole.then_some(tip));
-    }
-    let object = ObjectId { kind: Kind::Collision, name: name.clone() };
-    let has_arrow = before.len() != 1 && (after.len() != 1 || arrows == Arrows::FromOrigin && !collision.balanced());
-    let sum = (!before.is_empty()).then(|| sum_of(object, &total, has_arrow));
-    (vectors, sum)
-}
-
-fn of_particles(
-    job: &mut Job<'_>,
-    field: &str,
-    panel: &Panel,
-    from: &Viewing,
-    arrows: Arrows,
-) -> (Vec<Vector>, Option<Sum>) {
-    let list = if panel.collision.is_some() { Some(&[][..]) } else { panel.particles.as_deref() };
-    let known = job.solved.particles.keys().cloned().collect();
-    let names = job.chosen(list, Kind::Particle, &format!("{field}.particles"), known);
-    let parts = boosted(job, &names, from);
-    let total = Total::of(&parts.iter().map(|p| p.1).collect::<Vec<_>>());
-    let tip = Point::new(total.px, total.energy);
-    let mut vectors = Vec::new();
-    let owner = |i: usize| OWNERS[i % OWNERS.len()];
-    chain(&mut vectors, &parts, (Form::Before, owner), arrows, Some(tip));
-    let has_sum = arrows == Arrows::TipToTail && parts.len() > 1;
-    let sum = has_sum.then(|| sum_of(job.plate.clone(), &total, true));
-    (vectors, sum)
-}
-
-fn sum_of(object: ObjectId, total: &Total, has_arrow: bool) -> Sum {
-    Sum {
-        object,
-        tip: Point::new(total.px, total.energy),
-        mass: hypot(total.invariant_mass, total.py),
-        has_across: total.py.abs() > ACROSS * total.momentum_scale.max(total.energy),
-        has_arrow,
-    }
-}
-
-/// Momentum across that is more than rounding, relative to the whole.
-const ACROSS: f64 = 1e-12;
-
-/// Particles as a frame has them; those that leave the range are left out.
-fn boosted(job: &mut Job<'_>, names: &[Arc<str>], from: &Viewing) -> Vec<(ObjectId, Momentum)> {
-    let mut found = Vec::new();
-    for name in names {
-        let Some(particle) = job.solved.particles.get(name) else { continue };
-        let id = ObjectId { kind: Kind::Particle, name: name.clone() };
-        match particle.momentum.boosted(from.boost) {
-            Ok(momentum) => found.push((id, momentum)),
-            Err(wrong) => job.names.fault(
-                Fault::new(id, "", format!("it cannot be drawn from this frame: {wrong}"), "choose a slower frame")
-                    .finding(),
-            ),
-        }
-    }
-    found
-}
-
-/// Arrows of some particles, all from the origin or each from the tip of the one before. Chained, those of `before`
-/// go by rising slope and those of `after` by falling slope, so that the closed figure is convex and no two of its
-/// sides cross; the last tip is put on the common one.
-fn chain(
-    vectors: &mut Vec<Vector>,
-    parts: &[(ObjectId, Momentum)],
-    (form, ink): (Form, impl Fn(usize) -> Ink),
-    arrows: Arrows,
-    whole: Option<Point>,
-) {
-    let mut order: Vec<usize> = (0..parts.len()).collect();
-    if arrows == Arrows::TipToTail {
-        order.sort_by(|&i, &j| {
-            let slopes = parts[i].1.beta_x().total_cmp(&parts[j].1.beta_x());
-            if form == Form::After { slopes.reverse() } else { slopes }
-        });
-    }
-    let mut at = Point::ORIGIN;
-    for (i, &k) in order.iter().enumerate() {
-        let (object, momentum) = &parts[k];
-        let step = Vec2::new(momentum.px(), momentum.energy());
-        let (tail, tip) = match arrows {
-            Arrows::FromOrigin => (Point::ORIGIN, step.to_point()),
-            Arrows::TipToTail => {
-                let last = i + 1 == order.len();
-                (at, whole.filter(|_| last).unwrap_or(at + step))
-            }
-        };
-        at = tip;
-        vectors.push(Vector {
-            object: object.clone(),
-            form,
-            ink: ink(k),
-            tail,
-            tip,
-            transverse_mass: momentum.transverse_mass(),
-            has_across: momentum.py().abs() > ACROSS * momentum.energy(),
-        });
-    }
 }
 
 /// The light lines from the origin, and the word beside the right-hand one.
@@ -453,12 +415,17 @@ fn light(job: &mut Job<'_>, canvas: &mut Canvas<'_>) {
     let label = job.names.word("light");
     let mut candidates = Vec::new();
     for (way, order) in [(Vec2::new(1.0, 1.0), 0.0), (Vec2::new(-1.0, 1.0), 1.0)] {
-        let Some((a, b)) = clip::ray(Point::ORIGIN, way, window.plane) else { continue };
+        let Some((a, b)) = clip::ray(Point::ORIGIN, way, window.plane) else {
+            continue;
+        };
         let ends = (window.mm(a), window.mm(b));
         canvas.line(Layer::Light, group, ends, pen);
         let places = spots(ends, &[0.86, 0.8, 0.74, 0.68, 0.92, 0.6, 0.5, 0.4]);
-        let beside = beside(canvas, &label, &places, Sides::BelowFirst, 0.0);
-        candidates.extend(beside.into_iter().map(|c| Candidate { cost: c.cost + order * canvas.style.em, ..c }));
+        let beside = beside(canvas, &label, &places, Side::Below, 0.0);
+        candidates.extend(beside.into_iter().map(|c| Candidate {
+            cost: c.cost + order * canvas.style.em,
+            ..c
+        }));
     }
     wish(canvas, Rank::Word, (group, None), (label, INK), candidates);
 }
@@ -466,7 +433,11 @@ fn light(job: &mut Job<'_>, canvas: &mut Canvas<'_>) {
 /// Draws a mass shell.
 fn shell(canvas: &mut Canvas<'_>, group: usize, mass: f64, pen: (Ink, f64)) {
     let window = canvas.window;
-    let curve = Hyperbola { centre: Point::ORIGIN, size: mass, branch: Branch::Up };
+    let curve = Hyperbola {
+        centre: Point::ORIGIN,
+        size: mass,
+        branch: Branch::Up,
+    };
     for part in curve.inside(window.plane) {
         let path = window.path(&curve.path(part, CURVE_TOLERANCE / window.scale()));
         canvas.stroke(Layer::Curve, group, path, pen, Vec::new());
@@ -478,7 +449,7 @@ fn along_shell(canvas: &Canvas<'_>, mass: f64, px: f64) -> Vec<Spot> {
     let window = canvas.window;
     let plane = window.plane;
     let step = canvas.style.name_step / window.scale();
-    let count = ((plane.width() / step).floor() as usize).min(MOST_SPOTS);
+    let count = super::whole::count(plane.width() / step).min(MOST_SPOTS);
     let mut found = Vec::new();
     for i in 0..=count {
         let p = plane.width().mul_add(i as f64 / count as f64, plane.x0);
@@ -487,7 +458,11 @@ fn along_shell(canvas: &Canvas<'_>, mass: f64, px: f64) -> Vec<Spot> {
         if clip::holds(plane, here) {
             let along = Vec2::new(1.0, -p / energy);
             let order = (p - px).abs() * window.scale() / canvas.style.em * SHELL_ORDER;
-            found.push(Spot { foot: window.mm(here), along, order });
+            found.push(Spot {
+                foot: window.mm(here),
+                along,
+                order,
+            });
         }
     }
     found
@@ -504,7 +479,11 @@ fn shell_label(solved: &Solved, vector: &Vector) -> String {
     let label = solved.particles.get(name).and_then(|p| p.label.clone());
     let simple = label.map(|l| without_scripts(&l)).filter(|l| !l.is_empty());
     let index = simple.unwrap_or_else(|| crate::label::plain(name).source);
-    if vector.has_across { format!(r"m_{{\mathrm{{T}},{index}}}") } else { format!("m_{{{index}}}") }
+    if vector.has_across {
+        format!(r"m_{{\mathrm{{T}},{index}}}")
+    } else {
+        format!("m_{{{index}}}")
+    }
 }
 
 /// LaTeX math up to its first script: scripts of scripts would be too small to read.

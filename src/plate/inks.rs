@@ -32,9 +32,16 @@ impl Inks {
             if !shown(name) || is_light(line) {
                 continue;
             }
-            let ink = if is_at_rest(line) { INK } else { inks.next_owner() };
+            let ink = if is_at_rest(line) {
+                INK
+            } else {
+                inks.next_owner()
+            };
             for leg in line.world.legs() {
-                if let Leg::Free { rapidity, across: _ } = leg
+                if let Leg::Free {
+                    rapidity,
+                    across: _,
+                } = leg
                     && inks.known(rapidity.value()).is_none()
                 {
                     inks.rapidities.push((rapidity.value(), ink));
@@ -53,14 +60,22 @@ impl Inks {
     }
 
     fn known(&self, rapidity: f64) -> Option<Ink> {
-        self.rapidities.iter().find(|r| (r.0 - rapidity).abs() <= SAME).map(|r| r.1)
+        self.rapidities
+            .iter()
+            .find(|r| (r.0 - rapidity).abs() <= SAME)
+            .map(|r| r.1)
     }
 
     /// A line's ink and dash.
     pub(super) fn line(&self, name: &str, style: &Style) -> (Ink, Option<[f64; 2]>) {
         let (ink, count) = self.lines.get(name).copied().unwrap_or((INK, 0));
         let dashes = style.line_dashes;
-        (ink, count.checked_sub(1).map(|i| dashes[i.min(dashes.len() - 1)]))
+        (
+            ink,
+            count
+                .checked_sub(1)
+                .map(|i| dashes[i.min(dashes.len() - 1)]),
+        )
     }
 
     /// The ink of a frame at some rapidity relative to the base.
@@ -92,12 +107,18 @@ impl Inks {
 
 /// True for a light pulse.
 pub(super) fn is_light(line: &SolvedLine) -> bool {
-    line.world.legs().iter().any(|leg| matches!(leg, Leg::Light(_)))
+    line.world
+        .legs()
+        .iter()
+        .any(|leg| matches!(leg, Leg::Light(_)))
 }
 
 fn is_at_rest(line: &SolvedLine) -> bool {
     line.world.legs().iter().all(|leg| match leg {
-        Leg::Free { rapidity, across: _ } => rapidity.value() == 0.0,
+        Leg::Free {
+            rapidity,
+            across: _,
+        } => rapidity.value() == 0.0,
         Leg::Light(_) => false,
     })
 }

@@ -4,10 +4,11 @@ use std::sync::Arc;
 
 use kurbo::Point;
 
-use super::canvas::{Canvas, Groups, Rank};
+use super::canvas::{Canvas, Rank};
 use super::inks::Inks;
 use super::names::Names;
 use super::style::Style;
+use super::window::Groups;
 use crate::fault::{Fault, Kind, ObjectId, nearest};
 use crate::geometry::{Boost, Displacement, Leg, Rapidity};
 use crate::quantity::{Dimension, Typed, Unit, read};
@@ -41,17 +42,27 @@ const FARTHEST: f64 = 1e100;
 impl Job<'_> {
     /// A fault of the plate.
     pub(super) fn fault(&mut self, field: &str, what: impl Into<String>, mend: impl Into<String>) {
-        self.names.fault(Fault::new(self.plate.clone(), field, what, mend));
+        self.names
+            .fault(Fault::new(self.plate.clone(), field, what, mend));
     }
 
     /// A finding of the plate.
-    pub(super) fn finding(&mut self, field: &str, what: impl Into<String>, mend: impl Into<String>) {
-        self.names.fault(Fault::new(self.plate.clone(), field, what, mend).finding());
+    pub(super) fn finding(
+        &mut self,
+        field: &str,
+        what: impl Into<String>,
+        mend: impl Into<String>,
+    ) {
+        self.names
+            .fault(Fault::new(self.plate.clone(), field, what, mend).finding());
     }
 
     /// True where an object is left out for a fault of its own or of what it hangs on.
     pub(super) fn is_left_out(&self, kind: Kind, name: &str) -> bool {
-        self.solved.left_out.iter().any(|id| id.kind == kind && *id.name == *name)
+        self.solved
+            .left_out
+            .iter()
+            .any(|id| id.kind == kind && *id.name == *name)
     }
 
     /// The names of a panel's list that are sound, or all of them. A name that nothing has is a fault.
@@ -79,27 +90,47 @@ impl Job<'_> {
     pub(super) fn unknown(&mut self, word: &str, name: &str, field: &str, known: &[Arc<str>]) {
         let mend = match nearest(name, known.iter().map(|k| &**k)) {
             Some(near) => format!("did you mean \"{near}\"?"),
-            None => format!("name {} that the scene has, or take it off the list", with_article(word)),
+            None => format!(
+                "name {} that the scene has, or take it off the list",
+                with_article(word)
+            ),
         };
         self.fault(field, format!("there is no {word} named \"{name}\""), mend);
     }
 
     /// A range as typed, in a unit; a bad one is a fault and is fitted instead.
-    pub(super) fn range(&mut self, range: Option<&(Typed, Typed)>, unit: &Unit, field: &str) -> Option<(f64, f64)> {
+    pub(super) fn range(
+        &mut self,
+        range: Option<&(Typed, Typed)>,
+        unit: &Unit,
+        field: &str,
+    ) -> Option<(f64, f64)> {
         let (low, high) = range?;
         let low = self.number(low, unit, &format!("{field}.0"))?;
         let high = self.number(high, unit, &format!("{field}.1"))?;
         let wide = high - low;
         if !(wide.is_finite() && low.abs().max(high.abs()) < FARTHEST) {
-            self.fault(field, "the range is too large to draw", "give smaller bounds");
+            self.fault(
+                field,
+                "the range is too large to draw",
+                "give smaller bounds",
+            );
             return None;
         }
         if wide <= 0.0 {
-            self.fault(field, "the range does not rise", "give the lower bound first, then a larger upper one");
+            self.fault(
+                field,
+                "the range does not rise",
+                "give the lower bound first, then a larger upper one",
+            );
             return None;
         }
         if wide < low.abs().max(high.abs()) * NARROWEST {
-            self.fault(field, "the bounds differ by too little to be drawn", "give bounds farther apart");
+            self.fault(
+                field,
+                "the bounds differ by too little to be drawn",
+                "give bounds farther apart",
+            );
             return None;
         }
         Some((low, high))
@@ -122,33 +153,61 @@ impl Job<'_> {
         let solved = self.solved;
         if *name == *solved.base {
             let view = solved.base_view();
-            return Some(Observer { object: ObjectId::new(Kind::Frame, name), view, is_base: true });
+            return Some(Observer {
+                object: ObjectId::new(Kind::Frame, name),
+                view,
+                is_base: true,
+            });
         }
         if let Some(view) = solved.viewing(&crate::scene::When::Frame(name.to_owned())) {
-            return Some(Observer { object: ObjectId::new(Kind::Frame, name), view, is_base: false });
+            return Some(Observer {
+                object: ObjectId::new(Kind::Frame, name),
+                view,
+                is_base: false,
+            });
         }
         if let Some(line) = solved.lines.get(name) {
             let object = ObjectId::new(Kind::Line, name);
             let zero = line.world.at_clock(0.0).ok();
             let leg = zero.map(|origin| (origin, line.world.leg_at(origin)));
-            let Some((origin, Leg::Free { rapidity, across: _ })) = leg else {
-                self.fault(field, format!("line {name} is light, which has no axes"), "name a frame or a clock's line");
+            let Some((
+                origin,
+                Leg::Free {
+                    rapidity,
+                    across: _,
+                },
+            )) = leg
+            else {
+                self.fault(
+                    field,
+                    format!("line {name} is light, which has no axes"),
+                    "name a frame or a clock's line",
+                );
                 return None;
             };
-            let view = Viewing { origin, origin_exact: None, name: None, boost: Boost::along_x(rapidity) };
-            return Some(Observer { object, view, is_base: false });
+            let view = Viewing {
+                origin,
+                origin_exact: None,
+                name: None,
+                boost: Boost::along_x(rapidity),
+            };
+            return Some(Observer {
+                object,
+                view,
+                is_base: false,
+            });
         }
         if !self.is_left_out(Kind::Frame, name) && !self.is_left_out(Kind::Line, name) {
-            let known: Vec<Arc<str>> =
-                solved.frames.keys().chain(solved.lines.keys()).chain([&solved.base]).cloned().collect();
+            let known: Vec<Arc<str>> = solved
+                .frames
+                .keys()
+                .chain(solved.lines.keys())
+                .chain([&solved.base])
+                .cloned()
+                .collect();
             self.unknown("frame or line", name, field, &known);
         }
         None
-    }
-
-    /// A base-frame displacement from the base's origin as a point of a viewing frame's plane: x right, t up.
-    pub(super) fn seen(&self, at: Displacement, from: &Viewing) -> Option<Point> {
-        drawable(from.boost.apply(at - from.origin).ok()?)
     }
 
     /// Findings for labels that found no place.
@@ -161,9 +220,9 @@ impl Job<'_> {
                     format!("an axis' title has no free place on panel {letter}"),
                     "make the panel wider, or show less",
                 ),
-                (Rank::Curve, Some(object)) if object.kind == Kind::Plate => self.finding(
+                (_, Some(object)) if object.kind == Kind::Plate => self.finding(
                     &format!("panels.{index}"),
-                    format!("the words of a curve or a line of simultaneity have no free place on panel {letter}"),
+                    format!("the words of an axis, a curve or a line of simultaneity have no free place on panel {letter}"),
                     "make the panel wider, or show less",
                 ),
                 (_, Some(object)) => self.names.fault(
@@ -192,13 +251,25 @@ impl Job<'_> {
 const NARROWEST: f64 = 1e-9;
 
 fn with_article(word: &str) -> String {
-    let article = if word.starts_with(['a', 'e', 'i', 'o', 'u']) { "an" } else { "a" };
+    let article = if word.starts_with(['a', 'e', 'i', 'o', 'u']) {
+        "an"
+    } else {
+        "a"
+    };
     format!("{article} {word}")
 }
 
 /// The letter of a panel, counted from 0.
 pub(super) fn letter(index: usize) -> char {
-    u8::try_from(index).ok().filter(|i| *i < 26).map_or('z', |i| char::from(b'a' + i))
+    u8::try_from(index)
+        .ok()
+        .filter(|i| *i < 26)
+        .map_or('z', |i| char::from(b'a' + i))
+}
+
+/// A base-frame displacement from the base's origin as a point of a viewing frame's plane: x right, t up.
+pub(super) fn seen(at: Displacement, from: &Viewing) -> Option<Point> {
+    drawable(from.boost.apply(at - from.origin).ok()?)
 }
 
 /// A displacement as a point of the plane, where it is not too far to draw.

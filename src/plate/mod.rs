@@ -19,11 +19,14 @@ mod tall;
 mod ticks;
 mod tilted;
 mod track;
+mod vectors;
+mod whole;
+mod window;
 mod words;
 
 use kurbo::{Affine, Point, Rect, Size};
 
-use self::canvas::{Canvas, Groups, Rank, Seek, Window, Wish};
+use self::canvas::{Canvas, Rank, Seek, Wish};
 use self::energy::Energy;
 use self::fit::Wanted;
 use self::inks::Inks;
@@ -32,6 +35,7 @@ use self::names::Names;
 use self::place::Candidate;
 use self::spacetime::Spacetime;
 use self::style::{COLUMN, INK, LARGEST, SMALLEST_FIELD, Style, TEXT_RANGE, USUAL_TEXT};
+use self::window::{Groups, Window};
 use crate::fault::{Fault, Kind, ObjectId};
 use crate::marks::{Mark, Sheet};
 use crate::quantity::Typed;
@@ -98,7 +102,11 @@ impl Contents {
         match self {
             Self::Spacetime(panel) => panel.wanted,
             Self::Energy(panel) => panel.wanted,
-            Self::Blank => Wanted { x: None, y: None, contents: Rect::ZERO },
+            Self::Blank => Wanted {
+                x: None,
+                y: None,
+                contents: Rect::ZERO,
+            },
         }
     }
 }
@@ -151,40 +159,65 @@ pub fn lay_out(solved: &Solved, name: &str, plate: &Plate, change: &Override) ->
         groups: job.groups.list,
         marks,
     };
-    Laid { sheet, panels, faults: job.names.faults }
+    Laid {
+        sheet,
+        panels,
+        faults: job.names.faults,
+    }
 }
 
 /// The plate drawn where a scene has none: one that shows everything.
 pub fn everything(solved: &Solved) -> Plate {
     let has_particles = !solved.particles.is_empty();
-    let has_spacetime = !(solved.events.is_empty() && solved.lines.is_empty()) || !has_particles;
-    let views = [(View::Spacetime, has_spacetime), (View::EnergyMomentum, has_particles)];
+    let has_spacetime = !(solved.events.is_empty() && solved.lines.is_empty() && has_particles);
+    let views = [
+        (View::Spacetime, has_spacetime),
+        (View::EnergyMomentum, has_particles),
+    ];
     let panels = views
         .into_iter()
         .filter(|(_, shown)| *shown)
-        .map(|(view, _)| Panel { view, ..Panel::default() })
+        .map(|(view, _)| Panel {
+            view,
+            ..Panel::default()
+        })
         .collect();
     let title = Some(solved.title.clone()).filter(|title| !title.is_empty());
-    Plate { title, panels, ..Plate::default() }
+    Plate {
+        title,
+        panels,
+        ..Plate::default()
+    }
 }
 
 fn inks(solved: &Solved, plate: &Plate) -> Inks {
     Inks::of(solved, |name| {
         plate.panels.iter().any(|panel| match panel.view {
-            View::Spacetime => panel.lines.as_ref().is_none_or(|list| list.iter().any(|n| n == name)),
+            View::Spacetime => panel
+                .lines
+                .as_ref()
+                .is_none_or(|list| list.iter().any(|n| n == name)),
             View::EnergyMomentum => false,
         })
     })
 }
 
 fn text_size(job: &mut Job<'_>, plate: &Plate) -> f64 {
-    let Some(typed) = &plate.text else { return USUAL_TEXT };
-    let Some(size) = job.number(typed, &paper("pt"), "text") else { return USUAL_TEXT };
+    let Some(typed) = &plate.text else {
+        return USUAL_TEXT;
+    };
+    let Some(size) = job.number(typed, &paper("pt"), "text") else {
+        return USUAL_TEXT;
+    };
     let (least, most) = TEXT_RANGE;
     if (least..=most).contains(&size) {
         return size;
     }
-    job.fault("text", "the lettering has no size that can be printed", format!("choose {least} to {most} pt"));
+    job.fault(
+        "text",
+        "the lettering has no size that can be printed",
+        format!("choose {least} to {most} pt"),
+    );
     USUAL_TEXT
 }
 
@@ -195,7 +228,9 @@ fn slot_width(job: &mut Job<'_>, plate: &Plate, count: usize) -> f64 {
     let margins = job.style.margins[0] + job.style.margins[1];
     let least = count * (SMALLEST_FIELD + margins) + gutters;
     let width = length(job, plate.width.as_ref(), "width", least);
-    width.map_or(COLUMN.max(SMALLEST_FIELD + margins), |width| (width - gutters) / count)
+    width.map_or(COLUMN.max(SMALLEST_FIELD + margins), |width| {
+        (width - gutters) / count
+    })
 }
 
 /// The sheet's height, where it is given, mm.
@@ -209,24 +244,48 @@ fn length(job: &mut Job<'_>, typed: Option<&Typed>, field: &str, least: f64) -> 
     if value >= least && value <= LARGEST {
         return Some(value);
     }
-    let wrong = if value > LARGEST { "over 5 m" } else { "too little for its panels and lettering" };
+    let wrong = if value > LARGEST {
+        "over 5 m"
+    } else {
+        "too little for its panels and lettering"
+    };
     let least = least.ceil();
-    job.fault(field, format!("the plate's {field} is {wrong}"), format!("choose {least} mm to 5000 mm"));
+    job.fault(
+        field,
+        format!("the plate's {field} is {wrong}"),
+        format!("choose {least} mm to 5000 mm"),
+    );
     None
 }
 
 fn prepare(job: &mut Job<'_>, index: usize, panel: &Panel, change: &Override) -> Prepared {
-    let when = change.viewing.get(index).and_then(Option::as_ref).unwrap_or(&panel.when);
+    let when = change
+        .viewing
+        .get(index)
+        .and_then(Option::as_ref)
+        .unwrap_or(&panel.when);
     let Some(viewing) = viewing(job, index, when) else {
         let viewing = job.solved.base_view();
-        return Prepared { index, view: panel.view, viewing, contents: Contents::Blank };
+        return Prepared {
+            index,
+            view: panel.view,
+            viewing,
+            contents: Contents::Blank,
+        };
     };
     let contents = match panel.view {
         View::Spacetime => Spacetime::of(job, index, panel, &viewing)
-            .map_or(Contents::Blank, |panel| Contents::Spacetime(Box::new(panel))),
+            .map_or(Contents::Blank, |panel| {
+                Contents::Spacetime(Box::new(panel))
+            }),
         View::EnergyMomentum => Contents::Energy(Box::new(Energy::of(job, index, panel, &viewing))),
     };
-    Prepared { index, view: panel.view, viewing, contents }
+    Prepared {
+        index,
+        view: panel.view,
+        viewing,
+        contents,
+    }
 }
 
 fn viewing(job: &mut Job<'_>, index: usize, when: &When) -> Option<Viewing> {
@@ -239,7 +298,12 @@ fn viewing(job: &mut Job<'_>, index: usize, when: &When) -> Option<Viewing> {
         When::Frame(name) => {
             if !job.is_left_out(Kind::Frame, name) {
                 let solved = job.solved;
-                let known: Vec<_> = solved.frames.keys().chain([&solved.base]).cloned().collect();
+                let known: Vec<_> = solved
+                    .frames
+                    .keys()
+                    .chain([&solved.base])
+                    .cloned()
+                    .collect();
                 job.unknown("frame", name, &format!("panels.{index}.frame"), &known);
             }
         }
@@ -280,6 +344,17 @@ fn panel_letter(job: &mut Job<'_>, canvas: &mut Canvas<'_>, letter: char) {
     let outer = canvas.window.outer;
     let corner = Point::new(outer.x0, outer.y0 + canvas.style.panel_letter);
     let rect = Rect::from_origin_size(corner, Size::new(size.x, size.y));
-    let seek = Seek::Places(vec![Candidate { rect, cost: 0.0, leader: None }]);
-    canvas.wish(Wish { rank: Rank::Title, group, blame: None, label, ink: INK, seek });
+    let seek = Seek::Places(vec![Candidate {
+        rect,
+        cost: 0.0,
+        leader: None,
+    }]);
+    canvas.wish(Wish {
+        rank: Rank::Title,
+        group,
+        blame: None,
+        label,
+        ink: INK,
+        seek,
+    });
 }

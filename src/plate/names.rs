@@ -1,6 +1,7 @@
 //! Labels of objects and of the panel's own words, set once a sheet; labels that do not set become faults.
 
 use std::collections::BTreeMap;
+use std::fmt::Write as _;
 use std::sync::Arc;
 
 use crate::fault::{Fault, ObjectId};
@@ -18,7 +19,9 @@ pub(super) struct Names {
 impl Names {
     /// An object's label, or its name in upright text. One that does not set is a fault and stands as it was written.
     pub(super) fn of(&mut self, object: &ObjectId, label: Option<&str>) -> Arc<Label> {
-        let Some(source) = label else { return self.word(&object.name) };
+        let Some(source) = label else {
+            return self.word(&object.name);
+        };
         if let Some(label) = self.set.get(source) {
             return label.clone();
         }
@@ -45,7 +48,10 @@ impl Names {
 
     /// Upright text.
     pub(super) fn word(&mut self, text: &str) -> Arc<Label> {
-        self.words.entry(text.to_owned()).or_insert_with(|| Arc::new(plain(text))).clone()
+        self.words
+            .entry(text.to_owned())
+            .or_insert_with(|| Arc::new(plain(text)))
+            .clone()
     }
 
     /// Keeps a fault, once.
@@ -65,8 +71,12 @@ impl Names {
 /// A number as LaTeX math: digits in threes from five on, powers of ten written out. `text` is plain ASCII, `1.5e-7`
 /// at most.
 pub(super) fn number(text: &str) -> String {
-    let (mantissa, exponent) = text.split_once('e').map_or((text, None), |(m, e)| (m, Some(e)));
-    let (whole, rest) = mantissa.split_once('.').map_or((mantissa, None), |(w, r)| (w, Some(r)));
+    let (mantissa, exponent) = text
+        .split_once('e')
+        .map_or((text, None), |(m, e)| (m, Some(e)));
+    let (whole, rest) = mantissa
+        .split_once('.')
+        .map_or((mantissa, None), |(w, r)| (w, Some(r)));
     let mut out = String::new();
     let (sign, digits) = whole.strip_prefix('-').map_or(("", whole), |d| ("-", d));
     out.push_str(sign);
@@ -76,7 +86,7 @@ pub(super) fn number(text: &str) -> String {
         out.push_str(&threes(rest, 0));
     }
     if let Some(exponent) = exponent {
-        out.push_str(&format!(r"\times 10^{{{exponent}}}"));
+        let _ = write!(out, r"\times 10^{{{exponent}}}");
     }
     out
 }

@@ -81,8 +81,10 @@ pub(super) fn stretched([on, off]: [f64; 2], length: f64) -> Vec<f64> {
 pub(super) fn dashes(points: &[Point], pattern: [f64; 2]) -> Vec<Vec<Point>> {
     let length: f64 = points.windows(2).map(|w| (w[1] - w[0]).hypot()).sum();
     let pattern = stretched(pattern, length);
-    let [on, off] = pattern[..] else { return vec![points.to_vec()] };
-    let count = ((length + off) / (on + off)).round() as usize;
+    let [on, off] = pattern[..] else {
+        return vec![points.to_vec()];
+    };
+    let count = super::whole::count((length + off) / (on + off) + 0.5);
     (0..count)
         .map(|i| {
             let start = i as f64 * (on + off);
@@ -131,7 +133,11 @@ mod tests {
 
     #[test]
     fn dashes_start_and_end_the_stroke() {
-        let points = [Point::new(0.0, 0.0), Point::new(10.0, 0.0), Point::new(10.0, 9.3)];
+        let points = [
+            Point::new(0.0, 0.0),
+            Point::new(10.0, 0.0),
+            Point::new(10.0, 9.3),
+        ];
         let parts = dashes(&points, [2.0, 1.0]);
         assert_eq!(parts[0][0], points[0]);
         let end = *parts.last().unwrap().last().unwrap();
@@ -141,9 +147,21 @@ mod tests {
     #[test]
     fn a_thick_corner_is_mitred() {
         // A right angle: the outer corner stands at half the width beyond, both ways.
-        let points = [Point::new(0.0, 0.0), Point::new(4.0, 0.0), Point::new(4.0, 4.0)];
+        let points = [
+            Point::new(0.0, 0.0),
+            Point::new(4.0, 0.0),
+            Point::new(4.0, 4.0),
+        ];
         let outline = both_sides(&points, 0.5);
-        assert!(outline.iter().any(|p| (*p - Point::new(4.5, -0.5)).hypot() < 1e-12));
-        assert!(outline.iter().any(|p| (*p - Point::new(3.5, 0.5)).hypot() < 1e-12));
+        assert!(
+            outline
+                .iter()
+                .any(|p| (*p - Point::new(4.5, -0.5)).hypot() < 1e-12)
+        );
+        assert!(
+            outline
+                .iter()
+                .any(|p| (*p - Point::new(3.5, 0.5)).hypot() < 1e-12)
+        );
     }
 }

@@ -5,6 +5,7 @@
 use kurbo::{Point, Rect, Vec2};
 
 use super::style::{HAIR, Style};
+use super::whole;
 
 /// A straight piece of ink with its half width, mm.
 #[derive(Clone, Copy, Debug, PartialEq)]
@@ -33,8 +34,8 @@ pub(super) struct Places {
     bounds: Rect,
     columns: usize,
     rows: usize,
-    ink: Vec<Vec<u32>>,
-    text: Vec<Vec<u32>>,
+    ink: Vec<Vec<usize>>,
+    text: Vec<Vec<usize>>,
     pieces: Vec<Piece>,
     labels: Vec<Rect>,
     clear_ink: f64,
@@ -57,7 +58,7 @@ const THIN_BETWEEN: f64 = 0.8;
 impl Places {
     /// None taken, inside a panel.
     pub(super) fn new(panel: Rect, style: &Style) -> Self {
-        let count = |side: f64| ((side / CELL).ceil() as usize).clamp(1, MOST_CELLS);
+        let count = |side: f64| whole::count((side / CELL).ceil()).clamp(1, MOST_CELLS);
         let (columns, rows) = (count(panel.width()), count(panel.height()));
         Self {
             bounds: panel,
@@ -76,12 +77,12 @@ impl Places {
 
     fn column(&self, x: f64) -> usize {
         let part = (x - self.bounds.x0) / self.bounds.width() * self.columns as f64;
-        (part.max(0.0) as usize).min(self.columns - 1)
+        whole::count(part).min(self.columns - 1)
     }
 
     fn row(&self, y: f64) -> usize {
         let part = (y - self.bounds.y0) / self.bounds.height() * self.rows as f64;
-        (part.max(0.0) as usize).min(self.rows - 1)
+        whole::count(part).min(self.rows - 1)
     }
 
     /// Takes up a straight piece of ink.
@@ -89,8 +90,13 @@ impl Places {
         if !(a.is_finite() && b.is_finite()) {
             return;
         }
-        let index = self.pieces.len() as u32;
-        self.pieces.push(Piece { a, b, half, is_heavy });
+        let index = self.pieces.len();
+        self.pieces.push(Piece {
+            a,
+            b,
+            half,
+            is_heavy,
+        });
         let height = self.bounds.height() / self.rows as f64;
         let (low, high) = (a.y.min(b.y) - half, a.y.max(b.y) + half);
         for row in self.row(low)..=self.row(high) {
@@ -104,7 +110,7 @@ impl Places {
 
     /// Takes up a label.
     pub(super) fn add_label(&mut self, rect: Rect) {
-        let index = self.labels.len() as u32;
+        let index = self.labels.len();
         self.labels.push(rect);
         for row in self.row(rect.y0)..=self.row(rect.y1) {
             for column in self.column(rect.x0)..=self.column(rect.x1) {
@@ -120,7 +126,7 @@ impl Places {
         for row in self.row(near.y0)..=self.row(near.y1) {
             for column in self.column(near.x0)..=self.column(near.x1) {
                 for &i in &self.ink[row * self.columns + column] {
-                    let piece = &self.pieces[i as usize];
+                    let piece = &self.pieces[i];
                     if beyond(piece, rect, least) {
                         continue;
                     }
@@ -136,22 +142,29 @@ impl Places {
 
     /// What it costs that ink lies between a label and what it names; `None` where that is heavy.
     fn parting(&self, leader: Option<Point>, rect: Rect) -> Option<f64> {
-        let Some(start) = leader else { return Some(0.0) };
-        let end = Point::new(start.x.clamp(rect.x0, rect.x1), start.y.clamp(rect.y0, rect.y1));
+        let Some(start) = leader else {
+            return Some(0.0);
+        };
+        let end = Point::new(
+            start.x.clamp(rect.x0, rect.x1),
+            start.y.clamp(rect.y0, rect.y1),
+        );
         let (y0, y1) = (start.y.min(end.y), start.y.max(end.y));
         let (x0, x1) = (start.x.min(end.x), start.x.max(end.x));
         let mut cost = 0.0;
-        for row in self.row(y0)..=self.row(y1) {
-            for column in self.column(x0)..=self.column(x1) {
-                for &i in &self.ink[row * self.columns + column] {
-                    let piece = &self.pieces[i as usize];
-                    if cross(start, end, piece.a, piece.b) {
-                        if piece.is_heavy {
-                            return None;
-                        }
-                        cost = self.thin_between;
-                    }
+        let columns = self.column(x0)..=self.column(x1);
+        let cells = (self.row(y0)..=self.row(y1))
+            .flat_map(|row| columns.clone().map(move |column| (row, column)));
+        for (row, column) in cells {
+            for &i in &self.ink[row * self.columns + column] {
+                let piece = &self.pieces[i];
+                if !cross(start, end, piece.a, piece.b) {
+                    continue;
                 }
+                if piece.is_heavy {
+                    return None;
+                }
+                cost = self.thin_between;
             }
         }
         Some(cost)
@@ -163,7 +176,7 @@ impl Places {
             (self.column(near.x0)..=self.column(near.x1)).any(|column| {
                 self.text[row * self.columns + column]
                     .iter()
-                    .any(|&i| gap(self.labels[i as usize], rect) < self.clear_label - HAIR)
+                    .any(|&i| gap(self.labels[i], rect) < self.clear_label - HAIR)
             })
         })
     }
@@ -173,7 +186,12 @@ impl Places {
         let cell = &self.ink[self.row(p.y) * self.columns + self.column(p.x)];
         let mut found = Vec::new();
         for &i in cell {
-            let Piece { a, b, half, is_heavy: _ } = self.pieces[i as usize];
+            let Piece {
+                a,
+                b,
+                half,
+                is_heavy: _,
+            } = self.pieces[i];
             if to_segment(p, a, b) > near + half {
                 continue;
             }
@@ -214,7 +232,9 @@ impl Places {
             if clear < -HAIR {
                 continue;
             }
-            let Some(parting) = self.parting(leader, rect) else { continue };
+            let Some(parting) = self.parting(leader, rect) else {
+                continue;
+            };
             let score = cost + parting - clear;
             if best.is_none_or(|(least, _)| score < least) {
                 best = Some((score, rect));
@@ -276,7 +296,11 @@ fn distance(piece: &Piece, r: Rect) -> f64 {
 fn to_segment(p: Point, a: Point, b: Point) -> f64 {
     let d = b - a;
     let length = d.hypot2();
-    let s = if length > 0.0 { ((p - a).dot(d) / length).clamp(0.0, 1.0) } else { 0.0 };
+    let s = if length > 0.0 {
+        ((p - a).dot(d) / length).clamp(0.0, 1.0)
+    } else {
+        0.0
+    };
     (p - (a + d * s)).hypot()
 }
 
@@ -311,7 +335,10 @@ pub(super) fn box_at(p: Point, way: Vec2, size: Vec2, distance: f64) -> Rect {
         up
     } else {
         let along = a.mul_add(x, b * y);
-        along + (along * along - (a * a + b * b - distance * distance)).max(0.0).sqrt()
+        along
+            + (along * along - (a * a + b * b - distance * distance))
+                .max(0.0)
+                .sqrt()
     };
     Rect::from_center_size(p + way * reach, (size.x, size.y))
 }
@@ -329,7 +356,12 @@ mod tests {
 
     impl Places {
         fn is_free(&self, rect: Rect) -> bool {
-            self.best(&[Candidate { rect, cost: 0.0, leader: None }]).is_some()
+            self.best(&[Candidate {
+                rect,
+                cost: 0.0,
+                leader: None,
+            }])
+            .is_some()
         }
     }
 
@@ -361,8 +393,11 @@ mod tests {
         let mut places = places();
         let near = Rect::new(10.0, 10.0, 14.0, 12.0);
         let next = Rect::new(10.0, 20.0, 14.0, 22.0);
-        let candidates =
-            [(near, 0.0), (next, 1.0)].map(|(rect, cost)| Candidate { rect, cost, leader: None });
+        let candidates = [(near, 0.0), (next, 1.0)].map(|(rect, cost)| Candidate {
+            rect,
+            cost,
+            leader: None,
+        });
         let rect = |places: &Places| places.best(&candidates).map(|(_, rect)| rect);
         assert_eq!(rect(&places), Some(near));
         places.add_label(near);
@@ -375,7 +410,11 @@ mod tests {
     fn heavy_ink_parts_a_label_from_what_it_names() {
         let mut places = places();
         let rect = Rect::new(10.0, 20.0, 14.0, 22.0);
-        let across = [Candidate { rect, cost: 0.0, leader: Some(Point::new(12.0, 25.0)) }];
+        let across = [Candidate {
+            rect,
+            cost: 0.0,
+            leader: Some(Point::new(12.0, 25.0)),
+        }];
         places.add_ink(Point::new(0.0, 24.0), Point::new(80.0, 24.0), 0.1, false);
         assert_eq!(places.best(&across).map(|(_, r)| r), Some(rect));
         places.add_ink(Point::new(0.0, 24.0), Point::new(80.0, 24.0), 0.2, true);

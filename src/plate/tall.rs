@@ -5,9 +5,9 @@ use kurbo::{Rect, Size};
 
 use super::Prepared;
 use super::axes::Axes;
-use super::canvas::Window;
 use super::job::Job;
 use super::style::{SMALLEST_FIELD, Style};
+use super::window::Window;
 
 /// The common measures of a plate's panels, mm.
 #[derive(Clone, Copy, Debug, PartialEq)]
@@ -29,10 +29,15 @@ impl Tall {
                 .map(|panel| panel.contents.wanted())
                 .filter(|wanted| wanted.is_given() == given)
                 .map(|wanted| wanted.height(width, style))
-                .fold(None, |most: Option<f64>, h| Some(most.map_or(h, |m| m.max(h))))
+                .fold(None, |most: Option<f64>, h| {
+                    Some(most.map_or(h, |m| m.max(h)))
+                })
         };
         let wish = wished(true).or_else(|| wished(false)).unwrap_or(width);
-        let mut tall = Self { field: height.map_or(wish, |h| h - top - bottom), bottom };
+        let mut tall = Self {
+            field: height.map_or(wish, |h| h - top - bottom),
+            bottom,
+        };
         for panel in panels {
             tall.bottom = tall.bottom.max(tall.room_below(style, width, panel));
         }
@@ -49,7 +54,10 @@ impl Tall {
 
     /// Room that the level axis' numbers need below the field.
     fn room_below(&self, style: &Style, width: f64, panel: &Prepared) -> f64 {
-        let (plane, size, _) = panel.contents.wanted().fit(Size::new(width, self.field), style);
+        let (plane, size, _) = panel
+            .contents
+            .wanted()
+            .fit(Size::new(width, self.field), style);
         let above = (0.0_f64.clamp(plane.y0, plane.y1) - plane.y0) * size.width / plane.width();
         style.number_room - above
     }
@@ -59,15 +67,25 @@ impl Tall {
         let style = job.style.clone();
         let [usual, right, top, _] = style.margins;
         let place = |left: f64| {
-            let room = Size::new((outer.width() - left - right).max(SMALLEST_FIELD), self.field);
+            let room = Size::new(
+                (outer.width() - left - right).max(SMALLEST_FIELD),
+                self.field,
+            );
             let (plane, size, widened) = panel.contents.wanted().fit(room, &style);
             let x0 = outer.x0 + left + (room.width - size.width) / 2.0;
             let y1 = outer.y0 + top + self.field;
             let field = Rect::new(x0, y1 - size.height, x0 + size.width, y1);
-            (Window { outer, field, plane }, widened)
+            (
+                Window {
+                    outer,
+                    field,
+                    plane,
+                },
+                widened,
+            )
         };
         let (first, _) = place(usual);
-        let left = (self.room_left(job, &first, panel) - (first.field.x0 - outer.x0 - usual)).max(usual);
+        let left = (room_left(job, &first, panel) - (first.field.x0 - outer.x0 - usual)).max(usual);
         let (window, widened) = place(left);
         if widened {
             job.finding(
@@ -78,22 +96,28 @@ impl Tall {
         }
         window
     }
+}
 
-    /// From the panel's edge to the field, so that the widest number has room left of the upright axis.
-    fn room_left(&self, job: &mut Job<'_>, window: &Window, panel: &Prepared) -> f64 {
-        let Some(axes) = panel.axes() else { return 0.0 };
-        let plane = window.plane;
-        let into = (0.0_f64.clamp(plane.x0, plane.x1) - plane.x0) * window.scale();
-        let style = &job.style;
-        let ticks = Axes::ticks_in(axes, window, style).y;
-        let em = style.em;
-        let widest = ticks
-            .ticks
-            .iter()
-            .map(|tick| job.names.math(&super::names::number(&ticks.text(tick.count))).ink.width() * em)
-            .fold(0.0, f64::max);
-        style.centred_number + widest + 2.0 * style.clear_edge - into
-    }
+/// From the panel's edge to the field, so that the widest number has room left of the upright axis.
+fn room_left(job: &mut Job<'_>, window: &Window, panel: &Prepared) -> f64 {
+    let Some(axes) = panel.axes() else { return 0.0 };
+    let plane = window.plane;
+    let into = (0.0_f64.clamp(plane.x0, plane.x1) - plane.x0) * window.scale();
+    let style = &job.style;
+    let ticks = Axes::ticks_in(axes, window, style).y;
+    let em = style.em;
+    let widest = ticks
+        .marks
+        .iter()
+        .map(|tick| {
+            job.names
+                .math(&super::names::number(&ticks.text(tick.count)))
+                .ink
+                .width()
+                * em
+        })
+        .fold(0.0, f64::max);
+    style.centred_number + widest + 2.0 * style.clear_edge - into
 }
 
 impl Prepared {

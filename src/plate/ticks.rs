@@ -1,5 +1,6 @@
 //! Ticks: steps of 1, 2, 5 times a power of ten, equal decimals on an axis, no number at 0.
 
+use super::whole::integer;
 use crate::quantity::{Decimals, fixed};
 
 /// The distance between ticks: `mantissa` (1, 2 or 5) times ten to `exponent`.
@@ -24,7 +25,7 @@ pub(super) struct Ticks {
     /// The step.
     pub(super) step: Step,
     /// Inside the axis, ascending.
-    pub(super) ticks: Vec<Tick>,
+    pub(super) marks: Vec<Tick>,
     /// Numbers are in units of ten to this power.
     pub(super) power: i32,
 }
@@ -43,7 +44,12 @@ impl Step {
             return None;
         }
         let exponent = leading_power(least);
-        let choices = [(1, exponent), (2, exponent), (5, exponent), (1, exponent + 1)];
+        let choices = [
+            (1, exponent),
+            (2, exponent),
+            (5, exponent),
+            (1, exponent + 1),
+        ];
         choices
             .into_iter()
             .map(|(mantissa, exponent)| Self { mantissa, exponent })
@@ -75,15 +81,21 @@ impl Step {
         if first.abs() > FARTHEST || last.abs() > FARTHEST {
             return (1, 0);
         }
-        let (first, last) = (first as i64, last as i64);
-        if last - first > MOST { (1, 0) } else { (first, last) }
+        let (first, last) = (integer(first), integer(last));
+        if last - first > MOST {
+            (1, 0)
+        } else {
+            (first, last)
+        }
     }
 }
 
 /// The power of ten of the leading digit of a finite number above 0.
 fn leading_power(value: f64) -> i32 {
     let text = format!("{value:e}");
-    text.split_once('e').and_then(|(_, e)| e.parse().ok()).unwrap_or(0)
+    text.split_once('e')
+        .and_then(|(_, e)| e.parse().ok())
+        .unwrap_or(0)
 }
 
 /// `digits` times ten to `exponent`, correctly rounded.
@@ -94,18 +106,28 @@ fn decimal(digits: i64, exponent: i32) -> f64 {
 impl Ticks {
     /// Those strictly inside an axis that runs from `low` to `high`, at least `apart` from each other.
     pub(super) fn between(low: f64, high: f64, apart: f64) -> Self {
-        let step = Step::at_least(apart).unwrap_or(Step { mantissa: 1, exponent: 0 });
+        let step = Step::at_least(apart).unwrap_or(Step {
+            mantissa: 1,
+            exponent: 0,
+        });
         let (first, last) = step.counts(low, high);
-        let ticks: Vec<Tick> = (first..=last)
-            .map(|count| Tick { count, value: step.times(count) })
+        let marks: Vec<Tick> = (first..=last)
+            .map(|count| Tick {
+                count,
+                value: step.times(count),
+            })
             .filter(|tick| low < tick.value && tick.value < high)
             .collect();
-        let largest = ticks.iter().map(|t| t.value.abs()).fold(0.0, f64::max);
-        let leading = if largest > 0.0 { leading_power(largest) } else { 0 };
+        let largest = marks.iter().map(|t| t.value.abs()).fold(0.0, f64::max);
+        let leading = if largest > 0.0 {
+            leading_power(largest)
+        } else {
+            0
+        };
         let large = leading > MOST_DIGITS;
         let small = step.exponent < -MOST_DIGITS + 1 && leading < 0;
         let power = if large || small { leading } else { 0 };
-        Self { step, ticks, power }
+        Self { step, marks, power }
     }
 
     /// A tick's number, plain ASCII.
@@ -122,7 +144,7 @@ mod tests {
 
     fn texts(low: f64, high: f64, apart: f64) -> Vec<String> {
         let ticks = Ticks::between(low, high, apart);
-        ticks.ticks.iter().map(|t| ticks.text(t.count)).collect()
+        ticks.marks.iter().map(|t| ticks.text(t.count)).collect()
     }
 
     #[test]
@@ -147,7 +169,7 @@ mod tests {
 
     #[test]
     fn an_axis_that_cannot_be_told_apart_has_no_ticks() {
-        assert!(Ticks::between(1e20, 1e20 + 1e5, 1.0).ticks.is_empty());
-        assert!(Ticks::between(0.0, 1.0, f64::NAN).ticks.len() < 2);
+        assert!(Ticks::between(1e20, 1e20 + 1e5, 1.0).marks.is_empty());
+        assert!(Ticks::between(0.0, 1.0, f64::NAN).marks.len() < 2);
     }
 }

@@ -3,7 +3,7 @@
 use kurbo::{Point, Rect, Vec2};
 
 use super::axes::{AxisTicks, headed, wish};
-use super::beside::{Sides, Spot, beside, spots};
+use super::beside::{Side, Spot, beside, spots};
 use super::canvas::{Canvas, Layer, Rank};
 use super::clip;
 use super::curve::{Branch, Hyperbola};
@@ -13,6 +13,7 @@ use super::outline;
 use super::place::{Candidate, box_beside};
 use super::style::{CURVE_TOLERANCE, GUIDE};
 use super::ticks::Ticks;
+use super::whole::integer;
 use crate::fault::ObjectId;
 use crate::marks::Ink;
 use crate::num::{cosh, sinh, tanh};
@@ -98,8 +99,16 @@ impl Tilted {
             (Which::Time, &ticks.y, factors[0], &self.symbols[0]),
             (Which::Space, &ticks.x, factors[1], &self.symbols[1]),
         ] {
-            let Some((from, tip)) = self.ends(canvas, which) else { continue };
-            headed(canvas, Layer::TiltedAxis, group, (from, tip), (self.ink, canvas.style.stroke.axis));
+            let Some((from, tip)) = self.ends(canvas, which) else {
+                continue;
+            };
+            headed(
+                canvas,
+                Layer::TiltedAxis,
+                group,
+                (from, tip),
+                (self.ink, canvas.style.stroke.axis),
+            );
             self.symbol(job, canvas, which, (from, tip), symbol);
             for count in self.counts(canvas, which, ticks, factor) {
                 let size = ticks.step.times(count) / factor;
@@ -111,7 +120,13 @@ impl Tilted {
                 } else {
                     self.tick_places(canvas, which, p, label_size)
                 };
-                wish(canvas, Rank::Number, (group, None), (label, self.ink), candidates);
+                wish(
+                    canvas,
+                    Rank::Number,
+                    (group, None),
+                    (label, self.ink),
+                    candidates,
+                );
             }
         }
     }
@@ -144,23 +159,38 @@ impl Tilted {
     fn counts(&self, canvas: &Canvas<'_>, which: Which, ticks: &Ticks, factor: f64) -> Vec<i64> {
         let plane = canvas.window.plane;
         let unit = which.unit(self.rapidity) * (ticks.step.times(1) / factor);
-        let Some((low, high)) = clip::span(self.origin, unit, (f64::NEG_INFINITY, f64::INFINITY), plane) else {
+        let Some((low, high)) =
+            clip::span(self.origin, unit, (f64::NEG_INFINITY, f64::INFINITY), plane)
+        else {
             return Vec::new();
         };
-        let low = if clip::holds(plane, self.origin) { 0.0 } else { low };
+        let low = if clip::holds(plane, self.origin) {
+            0.0
+        } else {
+            low
+        };
         if low.abs().max(high.abs()) > 1e9 {
             return Vec::new();
         }
-        let (first, last) = (low.floor() as i64 + 1, high.ceil() as i64 - 1);
-        (first..=last.min(first + MOST_TICKS)).filter(|count| *count != 0).collect()
+        let (first, last) = (integer(low.floor()) + 1, integer(high.ceil()) - 1);
+        (first..=last.min(first + MOST_TICKS))
+            .filter(|count| *count != 0)
+            .collect()
     }
 
     /// Draws a tick parallel to the partner axis; gives back its middle, mm.
     fn tick(&self, canvas: &mut Canvas<'_>, which: Which, size: f64, group: usize) -> Point {
         let style = canvas.style;
-        let p = canvas.window.mm(self.origin + which.unit(self.rapidity) * size);
+        let p = canvas
+            .window
+            .mm(self.origin + which.unit(self.rapidity) * size);
         let half = self.tick_way(which) * (style.tick * self.stretch(canvas) / 2.0);
-        canvas.line(Layer::TiltedAxis, group, (p - half, p + half), (self.ink, style.stroke.axis));
+        canvas.line(
+            Layer::TiltedAxis,
+            group,
+            (p - half, p + half),
+            (self.ink, style.stroke.axis),
+        );
         p
     }
 
@@ -175,17 +205,31 @@ impl Tilted {
         Vec2::new(way.x, -way.y).normalize()
     }
 
-    fn arc_places(&self, canvas: &Canvas<'_>, which: Which, size: f64, label: Vec2) -> Vec<Candidate> {
+    fn arc_places(
+        &self,
+        canvas: &Canvas<'_>,
+        which: Which,
+        size: f64,
+        label: Vec2,
+    ) -> Vec<Candidate> {
         let window = canvas.window;
         let style = canvas.style;
-        let arc = Hyperbola { centre: self.origin, size, branch: which.branch() };
+        let arc = Hyperbola {
+            centre: self.origin,
+            size,
+            branch: which.branch(),
+        };
         let outward = if self.rapidity < 0.0 { -1.0 } else { 1.0 };
         let mut found = Vec::new();
         for (i, part) in [1.0, 1.12, 1.25, 0.9].into_iter().enumerate() {
             let far = outward * part * style.arc_number / window.scale();
             let middle = window.mm(arc.at(arc.away(self.rapidity, far)));
             let rect = Rect::from_center_size(middle, (label.x, label.y));
-            found.push(Candidate { rect, cost: NUMBER_ORDER * i as f64 * style.em, leader: None });
+            found.push(Candidate {
+                rect,
+                cost: NUMBER_ORDER * i as f64 * style.em,
+                leader: None,
+            });
         }
         // Inside the overhang the number stands on one side of its arc.
         for (i, part) in INNER_PARTS.into_iter().enumerate() {
@@ -197,17 +241,34 @@ impl Tilted {
             for side in [normal, -normal] {
                 let rect = box_beside(foot, side, label, style.clear_ink + style.stroke.fine);
                 let cost = NUMBER_ORDER * (found.len() + i) as f64 * style.em;
-                found.push(Candidate { rect, cost, leader: None });
+                found.push(Candidate {
+                    rect,
+                    cost,
+                    leader: None,
+                });
             }
         }
         let last = found.len() as f64 * NUMBER_ORDER * style.em;
         let p = window.mm(self.origin + which.unit(self.rapidity) * size);
-        found.extend(self.tick_places(canvas, which, p, label).into_iter().map(|c| Candidate { cost: c.cost + last, ..c }));
+        found.extend(
+            self.tick_places(canvas, which, p, label)
+                .into_iter()
+                .map(|c| Candidate {
+                    cost: c.cost + last,
+                    ..c
+                }),
+        );
         found
     }
 
     /// Beside a tick: right of a time axis or below a space axis first.
-    fn tick_places(&self, canvas: &Canvas<'_>, which: Which, p: Point, label: Vec2) -> Vec<Candidate> {
+    fn tick_places(
+        &self,
+        canvas: &Canvas<'_>,
+        which: Which,
+        p: Point,
+        label: Vec2,
+    ) -> Vec<Candidate> {
         let style = canvas.style;
         let way = self.tick_way(which);
         let outward = match which {
@@ -219,33 +280,67 @@ impl Tilted {
         let along = Vec2::new(along.x, -along.y).normalize();
         let half = style.tick * self.stretch(canvas) / 2.0;
         let mut found = Vec::new();
-        for (i, (side, slide)) in
-            [(1.0, 0.0), (-1.0, 0.0), (1.0, -0.5), (1.0, 0.5), (-1.0, -0.5), (-1.0, 0.5)].into_iter().enumerate()
+        for (i, (side, slide)) in [
+            (1.0, 0.0),
+            (-1.0, 0.0),
+            (1.0, -0.5),
+            (1.0, 0.5),
+            (-1.0, -0.5),
+            (-1.0, 0.5),
+        ]
+        .into_iter()
+        .enumerate()
         {
             let foot = p + along * (slide * style.em);
-            let rect = box_beside(foot, outward * side, label, half + style.clear_ink + style.stroke.axis);
-            found.push(Candidate { rect, cost: NUMBER_ORDER * i as f64 * style.em, leader: None });
+            let rect = box_beside(
+                foot,
+                outward * side,
+                label,
+                half + style.clear_ink + style.stroke.axis,
+            );
+            found.push(Candidate {
+                rect,
+                cost: NUMBER_ORDER * i as f64 * style.em,
+                leader: None,
+            });
         }
         found
     }
 
     /// Its symbol: left of a time head, above a space head.
-    fn symbol(&self, job: &mut Job<'_>, canvas: &mut Canvas<'_>, which: Which, ends: (Point, Point), symbol: &str) {
+    fn symbol(
+        &self,
+        job: &mut Job<'_>,
+        canvas: &mut Canvas<'_>,
+        which: Which,
+        ends: (Point, Point),
+        symbol: &str,
+    ) {
         let label = job.names.math(symbol);
         let style = canvas.style;
         let (from, tip) = ends;
         let size = canvas.size(&label);
         let beside_head = match which {
             Which::Time => Rect::from_origin_size(
-                (tip.x - style.symbol_at[0] - size.x, tip.y - style.symbol_at[1]),
+                (
+                    tip.x - style.symbol_at[0] - size.x,
+                    tip.y - style.symbol_at[1],
+                ),
                 (size.x, size.y),
             ),
             Which::Space => Rect::from_origin_size(
-                (tip.x + style.symbol_at[1] - size.x, tip.y - style.symbol_at[0] - size.y),
+                (
+                    tip.x + style.symbol_at[1] - size.x,
+                    tip.y - style.symbol_at[0] - size.y,
+                ),
                 (size.x, size.y),
             ),
         };
-        let mut candidates = vec![Candidate { rect: beside_head, cost: 0.0, leader: None }];
+        let mut candidates = vec![Candidate {
+            rect: beside_head,
+            cost: 0.0,
+            leader: None,
+        }];
         let way = (tip - from).normalize();
         let feet: Vec<Spot> = (0..SYMBOL_SPOTS)
             .map(|i| Spot {
@@ -255,12 +350,24 @@ impl Tilted {
             })
             .collect();
         let sides = match which {
-            Which::Time => Sides::LeftFirst,
-            Which::Space => Sides::AboveFirst,
+            Which::Time => Side::Left,
+            Which::Space => Side::Above,
         };
         candidates.extend(beside(canvas, &label, &feet, sides, 0.0));
         let group = canvas.group(&self.object.to_string());
-        wish(canvas, Rank::Symbol, (group, Some(self.object.clone())), (label, self.ink), candidates);
+        let is_base = self.object.name == job.solved.base;
+        let blame = if is_base {
+            job.plate.clone()
+        } else {
+            self.object.clone()
+        };
+        wish(
+            canvas,
+            Rank::Symbol,
+            (group, Some(blame)),
+            (label, self.ink),
+            candidates,
+        );
     }
 }
 
@@ -270,23 +377,40 @@ const NUMBER_ORDER: f64 = 0.25;
 const INNER_PARTS: [f64; 3] = [0.5, 0.75, 1.0];
 /// Where along a line of simultaneity its name is looked for.
 const CUT_PARTS: [f64; 18] = [
-    0.88, 0.84, 0.8, 0.92, 0.76, 0.72, 0.68, 0.64, 0.6, 0.56, 0.5, 0.44, 0.38, 0.32, 0.26, 0.2, 0.14, 0.1,
+    0.88, 0.84, 0.8, 0.92, 0.76, 0.72, 0.68, 0.64, 0.6, 0.56, 0.5, 0.44, 0.38, 0.32, 0.26, 0.2,
+    0.14, 0.1,
 ];
 /// Places tried for a symbol along its axis.
 const SYMBOL_SPOTS: i32 = 5;
 
 /// Draws the calibration arcs between the base axes and the tilted ones, or whole hyperbolas where there are none.
-pub(super) fn arcs(canvas: &mut Canvas<'_>, frames: &[Tilted], ticks: &AxisTicks, factors: [f64; 2]) {
+pub(super) fn arcs(
+    canvas: &mut Canvas<'_>,
+    frames: &[Tilted],
+    ticks: &AxisTicks,
+    factors: [f64; 2],
+) {
     let group = canvas.group("calibration hyperbolas");
     let pen = (GUIDE, canvas.style.stroke.fine);
     let window = canvas.window;
-    let centred: Vec<&Tilted> = frames.iter().filter(|frame| frame.is_centred(canvas)).collect();
-    for (which, ticks, factor) in [(Which::Time, &ticks.y, factors[0]), (Which::Space, &ticks.x, factors[1])] {
+    let centred: Vec<&Tilted> = frames
+        .iter()
+        .filter(|frame| frame.is_centred(canvas))
+        .collect();
+    for (which, ticks, factor) in [
+        (Which::Time, &ticks.y, factors[0]),
+        (Which::Space, &ticks.x, factors[1]),
+    ] {
         let step = ticks.step.times(1) / factor;
-        let reach = [window.plane.x0, window.plane.x1, window.plane.y0, window.plane.y1]
-            .into_iter()
-            .fold(0.0, |m: f64, v| m.max(v.abs()));
-        let last = ((reach / step).floor() as i64).clamp(0, MOST_TICKS);
+        let reach = [
+            window.plane.x0,
+            window.plane.x1,
+            window.plane.y0,
+            window.plane.y1,
+        ]
+        .into_iter()
+        .fold(0.0, |m: f64, v| m.max(v.abs()));
+        let last = integer(reach / step).clamp(0, MOST_TICKS);
         for count in 1..=last {
             if canvas.style.is_large() && last > ARCS_IN_LARGE && count % 2 == 1 {
                 continue;
@@ -298,11 +422,17 @@ pub(super) fn arcs(canvas: &mut Canvas<'_>, frames: &[Tilted], ticks: &AxisTicks
                 (Which::Time | Which::Space, false) => &[which.branch()],
             };
             for &branch in branches {
-                let arc = Hyperbola { centre: Point::ORIGIN, size, branch };
+                let arc = Hyperbola {
+                    centre: Point::ORIGIN,
+                    size,
+                    branch,
+                };
                 let parts = if frames.is_empty() {
                     arc.inside(window.plane)
                 } else {
-                    let reached = centred.iter().filter(|f| clip::holds(window.plane, arc.at(f.rapidity)));
+                    let reached = centred
+                        .iter()
+                        .filter(|f| clip::holds(window.plane, arc.at(f.rapidity)));
                     let rapidities: Vec<f64> = reached.map(|f| f.rapidity).collect();
                     between(canvas, &arc, &rapidities)
                 };
@@ -350,17 +480,35 @@ impl Cut {
     /// Draws it dashed, named near its right end.
     pub(super) fn draw(&self, job: &mut Job<'_>, canvas: &mut Canvas<'_>) {
         let window = canvas.window;
-        let Some((a, b)) = clip::line(self.at, Which::Space.way(self.rapidity), window.plane) else { return };
+        let Some((a, b)) = clip::line(self.at, Which::Space.way(self.rapidity), window.plane)
+        else {
+            return;
+        };
         let (a, b) = (window.mm(a), window.mm(b));
-        let title = format!("simultaneity of {} in {}", self.event.name, self.observer.name);
+        let title = format!(
+            "simultaneity of {} in {}",
+            self.event.name, self.observer.name
+        );
         let group = canvas.group(&title);
         let style = canvas.style;
         let dash = outline::stretched(style.dash, (b - a).hypot());
         let pen = (self.ink, style.stroke.axis);
-        canvas.stroke(Layer::Simultaneity, group, outline::open(&[a, b]), pen, dash);
+        canvas.stroke(
+            Layer::Simultaneity,
+            group,
+            outline::open(&[a, b]),
+            pen,
+            dash,
+        );
         let label = job.names.math(&self.label);
         let places = spots((a, b), &CUT_PARTS);
-        let candidates = beside(canvas, &label, &places, Sides::BelowFirst, 0.0);
-        wish(canvas, Rank::Curve, (group, Some(job.plate.clone())), (label, self.ink), candidates);
+        let candidates = beside(canvas, &label, &places, Side::Below, 0.0);
+        wish(
+            canvas,
+            Rank::Curve,
+            (group, Some(job.plate.clone())),
+            (label, self.ink),
+            candidates,
+        );
     }
 }

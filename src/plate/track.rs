@@ -6,7 +6,7 @@ use kurbo::{BezPath, Point, Rect, Vec2};
 
 use super::arrow::head;
 use super::axes::wish;
-use super::beside::{Sides, Spot, beside};
+use super::beside::{self, Spot};
 use super::canvas::{Canvas, Layer, Rank};
 use super::clip;
 use super::inks::is_light;
@@ -14,7 +14,7 @@ use super::job::Job;
 use super::outline;
 use super::style::{INK, OCHRE};
 use crate::fault::{Kind, ObjectId};
-use crate::geometry::{Leg, Side};
+use crate::geometry::{Displacement, Leg, Side};
 use crate::marks::Ink;
 use crate::num::tanh;
 use crate::solve::{SolvedLine, Viewing};
@@ -38,40 +38,65 @@ pub(super) struct Track {
 
 impl Track {
     /// A solved line as a frame has it.
-    pub(super) fn of(job: &Job<'_>, name: &Arc<str>, line: &SolvedLine, from: &Viewing) -> Option<Self> {
+    pub(super) fn of(name: &Arc<str>, line: &SolvedLine, from: &Viewing) -> Option<Self> {
         let rapidity = from.boost.rapidity().value();
         let start = line.from.as_ref().map(|end| end.1);
         let end = line.until.as_ref().map(|end| end.1);
-        let low = start.map_or(f64::NEG_INFINITY, |d| d.t());
-        let high = end.map_or(f64::INFINITY, |d| d.t());
-        let corners = line.world.corners().iter().copied().filter(|c| low < c.t() && c.t() < high);
+        let low = start.map_or(f64::NEG_INFINITY, Displacement::t);
+        let high = end.map_or(f64::INFINITY, Displacement::t);
+        let corners = line
+            .world
+            .corners()
+            .iter()
+            .copied()
+            .filter(|c| low < c.t() && c.t() < high);
         let mut known: Vec<_> = start.into_iter().chain(corners).chain(end).collect();
         let is_marked = !known.is_empty();
         if !is_marked {
             known.push(line.world.at_time(0.0));
         }
-        let points = known.iter().map(|&d| job.seen(d, from)).collect::<Option<Vec<_>>>()?;
+        let points = known
+            .iter()
+            .map(|&d| super::job::seen(d, from))
+            .collect::<Option<Vec<_>>>()?;
         if points.len() > 1 && high < low {
             return None;
         }
         let way = |leg: Option<&Leg>| {
             Some(match *leg? {
-                Leg::Free { rapidity: own, across: _ } => Vec2::new(tanh(own.value() - rapidity), 1.0),
+                Leg::Free {
+                    rapidity: own,
+                    across: _,
+                } => Vec2::new(tanh(own.value() - rapidity), 1.0),
                 Leg::Light(Side::Plus) => Vec2::new(1.0, 1.0),
                 Leg::Light(Side::Minus) => Vec2::new(-1.0, 1.0),
             })
         };
         let legs = line.world.legs();
         Some(Self {
-            object: ObjectId { kind: Kind::Line, name: name.clone() },
+            object: ObjectId {
+                kind: Kind::Line,
+                name: name.clone(),
+            },
             label: line.label.clone(),
             is_light: is_light(line),
             points,
             is_marked,
-            before: if start.is_some() { None } else { way(legs.first()).map(|d| -d) },
-            after: if end.is_some() { None } else { way(legs.last()) },
+            before: if start.is_some() {
+                None
+            } else {
+                way(legs.first()).map(|d| -d)
+            },
+            after: if end.is_some() {
+                None
+            } else {
+                way(legs.last())
+            },
             has_across: legs.iter().any(|leg| match leg {
-                Leg::Free { rapidity: _, across } => *across != 0.0,
+                Leg::Free {
+                    rapidity: _,
+                    across,
+                } => *across != 0.0,
                 Leg::Light(_) => false,
             }),
         })
@@ -104,7 +129,10 @@ impl Track {
         let window = canvas.window;
         let by = wider / window.scale();
         let parts = self.inside(window.plane.inflate(by, by));
-        parts.iter().map(|part| part.iter().map(|&p| window.mm(p)).collect()).collect()
+        parts
+            .iter()
+            .map(|part| part.iter().map(|&p| window.mm(p)).collect())
+            .collect()
     }
 
     /// Draws a worldline. False for light, which is drawn once all other ink is down.
@@ -117,7 +145,8 @@ impl Track {
         let field = canvas.window.field;
         let mut path = BezPath::new();
         for part in self.on_paper(canvas, 2.0 * width) {
-            let pieces = dash.map_or_else(|| vec![part.clone()], |dash| outline::dashes(&part, dash));
+            let pieces =
+                dash.map_or_else(|| vec![part.clone()], |dash| outline::dashes(&part, dash));
             for piece in pieces {
                 path.extend(&outline::thick(&piece, width, Some(field)));
             }
@@ -139,14 +168,21 @@ impl Track {
             .filter_map(|part| Some((*part.first()?, *part.last()?)))
             .collect();
         for part in self.on_paper(canvas, 0.0) {
-            let (Some(&a), Some(&b)) = (part.first(), part.last()) else { continue };
+            let (Some(&a), Some(&b)) = (part.first(), part.last()) else {
+                continue;
+            };
             let unit = (b - a).normalize();
             if (b - a).hypot() > 2.0 * size.length {
-                let shapes = canvas.style.head_at.map(|part| head(a.lerp(b, part), unit, size));
+                let shapes = canvas
+                    .style
+                    .head_at
+                    .map(|part| head(a.lerp(b, part), unit, size));
                 let free = shapes.iter().position(|shape| {
                     let rect = around(shape);
                     canvas.clearance(rect) >= canvas.style.clear_ink
-                        && !crossing.iter().any(|&(p, q)| clip::segment(p, q, rect).is_some())
+                        && !crossing
+                            .iter()
+                            .any(|&(p, q)| clip::segment(p, q, rect).is_some())
                 });
                 let best = &shapes[free.unwrap_or(0)];
                 canvas.fill(Layer::Signal, group, outline::closed(best), OCHRE);
@@ -168,8 +204,14 @@ impl Track {
         let label = job.names.of(&self.object, self.label.as_deref());
         let first = style.name_below_end + canvas.size(&label).y / 2.0;
         let spots = down(part, first, style.name_step);
-        let candidates = beside(canvas, &label, &spots, Sides::RightFirst, half);
-        wish(canvas, Rank::Name, (group, Some(self.object.clone())), (label, ink), candidates);
+        let candidates = beside::beside(canvas, &label, &spots, beside::Side::Right, half);
+        wish(
+            canvas,
+            Rank::Name,
+            (group, Some(self.object.clone())),
+            (label, ink),
+            candidates,
+        );
     }
 }
 
@@ -194,7 +236,11 @@ fn down(part: &[Point], first: f64, step: f64) -> Vec<Spot> {
         let long = along.hypot();
         while next <= passed + long && spots.len() < MOST_SPOTS && next <= length {
             let foot = w[0] + along * ((next - passed) / long);
-            spots.push(Spot { foot, along, order: DOWN_ORDER * spots.len() as f64 });
+            spots.push(Spot {
+                foot,
+                along,
+                order: DOWN_ORDER * spots.len() as f64,
+            });
             next += step;
         }
         passed += long;
@@ -204,5 +250,7 @@ fn down(part: &[Point], first: f64, step: f64) -> Vec<Spot> {
 
 fn around(points: &[Point]) -> Rect {
     let first = points.first().copied().unwrap_or_default();
-    points.iter().fold(Rect::from_points(first, first), |r, &p| r.union_pt(p))
+    points
+        .iter()
+        .fold(Rect::from_points(first, first), |r, &p| r.union_pt(p))
 }

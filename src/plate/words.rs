@@ -13,7 +13,11 @@ pub(super) fn of(job: &Job<'_>, plate: &Plate, panels: &[Prepared]) -> String {
     let several = panels.len() > 1;
     let mut sentences = Vec::new();
     for panel in panels {
-        let lead = if several { format!("Panel {}: ", letter(panel.index)) } else { String::new() };
+        let lead = if several {
+            format!("Panel {}: ", letter(panel.index))
+        } else {
+            String::new()
+        };
         let (kind, shown) = match &panel.contents {
             Contents::Spacetime(contents) => ("spacetime diagram", contents.words()),
             Contents::Energy(contents) => ("energy-momentum diagram", contents.words()),
@@ -25,17 +29,27 @@ pub(super) fn of(job: &Job<'_>, plate: &Plate, panels: &[Prepared]) -> String {
             sentences.push(format!("It shows {}.", listed(&shown)));
         }
     }
-    let note = plate.title.as_ref().filter(|title| !title.is_empty()).map(|title| format!("{title}. "));
+    let note = plate
+        .title
+        .as_ref()
+        .filter(|title| !title.is_empty())
+        .map(|title| format!("{title}. "));
     format!("{}{}", note.unwrap_or_default(), sentences.join(" "))
 }
 
 fn frame_words(job: &Job<'_>, from: &Viewing) -> String {
     match &from.name {
         Some(name) if *name == job.solved.base => format!("in the frame {name}"),
-        Some(name) => format!("in the frame {name}, moving relative to {}", job.solved.base),
+        Some(name) => format!(
+            "in the frame {name}, moving relative to {}",
+            job.solved.base
+        ),
         None => {
             let rapidity = crate::quantity::significant(from.boost.rapidity().value(), 3);
-            format!("in a frame at rapidity {rapidity} relative to {}", job.solved.base)
+            format!(
+                "in a frame at rapidity {rapidity} relative to {}",
+                job.solved.base
+            )
         }
     }
 }
@@ -60,5 +74,7 @@ fn listed(parts: &[String]) -> String {
 
 fn capital(text: &str) -> String {
     let mut chars = text.chars();
-    chars.next().map_or_else(String::new, |first| first.to_uppercase().chain(chars).collect())
+    chars.next().map_or_else(String::new, |first| {
+        first.to_uppercase().chain(chars).collect()
+    })
 }
