@@ -504,7 +504,7 @@ fn what_is_wrong_with_a_plate_is_said() {
             r"(panels: [(view: Spacetime, range: (x: (-1, 1), t: (-1, 1)))])",
             "event late: it lies outside",
         ),
-        (r#"(width: "6 m", panels: [(view: Spacetime)])"#, "over 5 m"),
+        (r#"(width: "600 cm", panels: [(view: Spacetime)])"#, "over 5 m"),
         (
             r#"(width: "2 mm", panels: [(view: Spacetime)])"#,
             "too little",
