@@ -29,7 +29,7 @@ fn stages(c: &mut Criterion) {
         let mut group = c.benchmark_group(name);
         group.bench_function("read", |b| b.iter(|| scene::read(black_box(text))));
         group.bench_function("solve", |b| {
-            b.iter(|| solve::solve(black_box(&opened.scene), &[]))
+            b.iter(|| solve::solve(black_box(&opened.scene), &[]));
         });
         group.bench_function("lay out", |b| {
             b.iter(|| task::lay_out(black_box(&opened), None, &Override::default()));
@@ -45,7 +45,7 @@ fn stages(c: &mut Criterion) {
                 ..Options::default()
             };
             group.bench_function(word, |b| {
-                b.iter(|| write(black_box(&laid.sheet), format, &options))
+                b.iter(|| write(black_box(&laid.sheet), format, &options));
             });
         }
         group.finish();

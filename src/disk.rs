@@ -95,7 +95,7 @@ fn not_text(path: &Path, error: &std::string::FromUtf8Error) -> DiskFault {
         return DiskFault::new(path, "is UTF-16 text, not UTF-8", "save it as UTF-8");
     }
     let at = error.utf8_error().valid_up_to();
-    let line = 1 + bytes[..at].iter().filter(|&&b| b == b'\n').count();
+    let line = bytes[..at].split(|&b| b == b'\n').count();
     let byte = bytes.get(at).copied().unwrap_or(0);
     let what = format!(
         "is not UTF-8 text: byte {} (in line {line}) is {byte:#04x}",

@@ -185,19 +185,26 @@ pub fn nearest<'a>(name: &str, candidates: impl IntoIterator<Item = &'a str>) ->
         .map(|(_, c)| c)
 }
 
+/// How many characters are put in, left out, changed or swapped with their neighbour (optimal string alignment).
 fn edit_distance(a: &str, b: &str) -> usize {
     let b: Vec<char> = b.chars().collect();
-    let mut row: Vec<usize> = (0..=b.len()).collect();
+    let mut rows: [Vec<usize>; 2] = [vec![0; b.len() + 1], (0..=b.len()).collect()];
+    let mut last = None;
     for (i, ca) in a.chars().enumerate() {
-        let mut diagonal = row[0];
-        row[0] = i + 1;
+        let [before, above] = &rows;
+        let mut row = vec![i + 1];
         for (j, &cb) in b.iter().enumerate() {
-            let next = (diagonal + usize::from(ca != cb))
-                .min(row[j] + 1)
-                .min(row[j + 1] + 1);
-            diagonal = row[j + 1];
-            row[j + 1] = next;
+            let mut steps = (above[j] + usize::from(ca != cb))
+                .min(above[j + 1] + 1)
+                .min(row[j] + 1);
+            if j > 0 && last == Some(cb) && b[j - 1] == ca {
+                steps = steps.min(before[j - 1] + 1);
+            }
+            row.push(steps);
         }
+        last = Some(ca);
+        rows.swap(0, 1);
+        rows[1] = row;
     }
-    row[b.len()]
+    rows[1][b.len()]
 }

@@ -41,8 +41,8 @@ pub(super) struct Action {
     pub(super) command: fn() -> Command,
 }
 
-const fn ctrl(key: Key) -> Option<KeyboardShortcut> {
-    Some(KeyboardShortcut::new(Modifiers::COMMAND, key))
+const fn ctrl(key: Key) -> KeyboardShortcut {
+    KeyboardShortcut::new(Modifiers::COMMAND, key)
 }
 
 fn always(_: &Context<'_>) -> bool {
@@ -61,34 +61,85 @@ fn is_moved(context: &Context<'_>) -> bool {
     context.view.camera != Camera::Fit
 }
 
-const fn action(menu: Menu, words: &'static str, keys: Option<KeyboardShortcut>, command: fn() -> Command) -> Action {
-    Action { menu, words, keys, divided: false, enabled: always, command }
+const fn action(
+    menu: Menu,
+    words: &'static str,
+    keys: Option<KeyboardShortcut>,
+    command: fn() -> Command,
+) -> Action {
+    Action {
+        menu,
+        words,
+        keys,
+        divided: false,
+        enabled: always,
+        command,
+    }
 }
 
 /// Every action.
 pub(super) const ACTIONS: &[Action] = &[
-    action(Menu::File, "Open…", ctrl(Key::O), || Command::Choose),
-    Action { enabled: has_scene, ..action(Menu::File, "Close scene", ctrl(Key::W), || Command::Close) },
-    Action { divided: true, ..action(Menu::File, "Quit", ctrl(Key::Q), || Command::Quit) },
-    Action { enabled: is_moved, ..action(Menu::View, "Fit plate", ctrl(Key::Num0), || Command::Fit) },
-    action(Menu::View, "True size", ctrl(Key::Num1), || Command::TrueSize),
-    action(Menu::View, "Zoom in", ctrl(Key::Plus), || Command::ZoomBy(1.25)),
-    action(Menu::View, "Zoom out", ctrl(Key::Minus), || Command::ZoomBy(0.8)),
+    action(Menu::File, "Open…", Some(ctrl(Key::O)), || {
+        Command::Choose
+    }),
+    Action {
+        enabled: has_scene,
+        ..action(Menu::File, "Close scene", Some(ctrl(Key::W)), || {
+            Command::Close
+        })
+    },
     Action {
         divided: true,
-        ..action(Menu::View, "Light", None, || Command::Theme(ThemePreference::Light))
+        ..action(Menu::File, "Quit", Some(ctrl(Key::Q)), || Command::Quit)
     },
-    action(Menu::View, "Dark", None, || Command::Theme(ThemePreference::Dark)),
-    action(Menu::View, "As the system", None, || Command::Theme(ThemePreference::System)),
-    Action { enabled: is_off_base, ..action(Menu::Frame, "Go to base", None, || Command::Frame(When::Base)) },
+    Action {
+        enabled: is_moved,
+        ..action(Menu::View, "Fit plate", Some(ctrl(Key::Num0)), || {
+            Command::Fit
+        })
+    },
+    action(Menu::View, "True size", Some(ctrl(Key::Num1)), || {
+        Command::TrueSize
+    }),
+    action(Menu::View, "Zoom in", Some(ctrl(Key::Plus)), || {
+        Command::ZoomBy(1.25)
+    }),
+    action(Menu::View, "Zoom out", Some(ctrl(Key::Minus)), || {
+        Command::ZoomBy(0.8)
+    }),
+    Action {
+        divided: true,
+        ..action(Menu::View, "Light", None, || {
+            Command::Theme(ThemePreference::Light)
+        })
+    },
+    action(Menu::View, "Dark", None, || {
+        Command::Theme(ThemePreference::Dark)
+    }),
+    action(Menu::View, "As the system", None, || {
+        Command::Theme(ThemePreference::System)
+    }),
+    Action {
+        enabled: is_off_base,
+        ..action(Menu::Frame, "Go to base", None, || {
+            Command::Frame(When::Base)
+        })
+    },
     action(
         Menu::Help,
         "Shortcuts",
         Some(KeyboardShortcut::new(Modifiers::NONE, Key::Questionmark)),
         || Command::Help(Help::Shortcuts),
     ),
-    action(Menu::Help, "Words used here", None, || Command::Help(Help::Words)),
-    Action { divided: true, ..action(Menu::Help, "About Conewright", None, || Command::Help(Help::About)) },
+    action(Menu::Help, "Words used here", None, || {
+        Command::Help(Help::Words)
+    }),
+    Action {
+        divided: true,
+        ..action(Menu::Help, "About Conewright", None, || {
+            Command::Help(Help::About)
+        })
+    },
 ];
 
 /// The commands whose keys were pressed. Keys without Ctrl are left to a field that is being typed in.
@@ -123,7 +174,12 @@ mod tests {
         for (i, a) in ACTIONS.iter().enumerate() {
             for b in &ACTIONS[i + 1..] {
                 assert_ne!(a.words, b.words);
-                assert!(a.keys.is_none() || a.keys != b.keys, "{} {}", a.words, b.words);
+                assert!(
+                    a.keys.is_none() || a.keys != b.keys,
+                    "{} {}",
+                    a.words,
+                    b.words
+                );
             }
         }
     }

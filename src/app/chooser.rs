@@ -2,11 +2,11 @@
 
 use std::path::{Path, PathBuf};
 
-use egui::{Id, Key, Modal, ScrollArea, TextEdit, Ui};
+use egui::{Id, Key, ScrollArea, TextEdit, Ui};
 
 use super::command::{Command, Wishes};
 use super::theme::Type;
-use super::widgets::colours;
+use super::widgets::{self, colours};
 
 /// At most this many entries of a folder are listed.
 const LISTED: usize = 2000;
@@ -32,9 +32,13 @@ struct Entry {
 impl Chooser {
     /// Lists a folder.
     pub(super) fn at(folder: &Path) -> Self {
+        let folder = &std::path::absolute(folder).unwrap_or_else(|_| folder.to_owned());
         let (entries, fault) = match list(folder) {
             Ok(entries) => (entries, None),
-            Err(fault) => (Vec::new(), Some(format!("{} cannot be listed: {fault}", folder.display()))),
+            Err(fault) => (
+                Vec::new(),
+                Some(format!("{} cannot be listed: {fault}", folder.display())),
+            ),
         };
         Self {
             path: format!("{}{}", folder.display(), std::path::MAIN_SEPARATOR),
@@ -53,7 +57,9 @@ fn list(folder: &Path) -> std::io::Result<Vec<Entry>> {
         let entry = entry?;
         let name = entry.file_name().to_string_lossy().into_owned();
         let is_file = !entry.path().is_dir();
-        let is_scene = Path::new(&name).extension().is_some_and(|e| e.eq_ignore_ascii_case("ron"));
+        let is_scene = Path::new(&name)
+            .extension()
+            .is_some_and(|e| e.eq_ignore_ascii_case("ron"));
         if !name.starts_with('.') && (!is_file || is_scene) {
             entries.push(Entry { is_file, name });
         }
@@ -64,7 +70,7 @@ fn list(folder: &Path) -> std::io::Result<Vec<Entry>> {
 
 /// Shows the chooser over the desk.
 pub(super) fn chooser(ui: &Ui, state: &mut Chooser, refused: Option<&str>, wishes: &mut Wishes) {
-    let modal = Modal::new(Id::unique("chooser")).show(ui.ctx(), |ui| {
+    let modal = widgets::modal(ui, "chooser").show(ui.ctx(), |ui| {
         ui.set_width(560.0);
         ui.heading("Open a scene");
         ui.add_space(8.0);
@@ -72,7 +78,11 @@ pub(super) fn chooser(ui: &Ui, state: &mut Chooser, refused: Option<&str>, wishe
         let fault = state.fault.as_deref().or(refused);
         if let Some(fault) = fault {
             let c = colours(ui);
-            ui.label(egui::RichText::new(fault).font(Type::Caption.font()).color(c.fault));
+            ui.label(
+                egui::RichText::new(fault)
+                    .font(Type::Caption.font())
+                    .color(c.fault),
+            );
         }
         ui.add_space(8.0);
         folder(ui, state, wishes);
@@ -103,28 +113,44 @@ fn field(ui: &mut Ui, state: &mut Chooser, wishes: &mut Wishes) {
 /// A folder is gone to, anything else is opened.
 fn chosen(path: &str) -> Command {
     let path = PathBuf::from(path.trim());
-    if path.is_dir() { Command::Browse(path) } else { Command::Open(path) }
+    if path.is_dir() {
+        Command::Browse(path)
+    } else {
+        Command::Open(path)
+    }
 }
 
 fn folder(ui: &mut Ui, state: &Chooser, wishes: &mut Wishes) {
-    ScrollArea::vertical().max_height(300.0).min_scrolled_height(120.0).auto_shrink([false, true]).show(ui, |ui| {
-        ui.spacing_mut().item_spacing.y = 2.0;
-        if let Some(parent) = state.folder.parent()
-            && ui.selectable_label(false, "Folder above").clicked()
-        {
-            wishes.push(Command::Browse(parent.to_owned()));
-        }
-        for entry in &state.entries {
-            let path = state.folder.join(&entry.name);
-            let words = if entry.is_file { entry.name.clone() } else { format!("{}/", entry.name) };
-            if ui.selectable_label(false, words).clicked() {
-                wishes.push(if entry.is_file { Command::Open(path) } else { Command::Browse(path) });
+    ScrollArea::vertical()
+        .max_height(300.0)
+        .min_scrolled_height(120.0)
+        .auto_shrink([false, true])
+        .show(ui, |ui| {
+            ui.spacing_mut().item_spacing.y = 2.0;
+            if let Some(parent) = state.folder.parent()
+                && ui.selectable_label(false, "Folder above").clicked()
+            {
+                wishes.push(Command::Browse(parent.to_owned()));
             }
-        }
-        if state.entries.is_empty() && state.fault.is_none() {
-            ui.weak("No scenes (.ron) and no folders here.");
-        }
-    });
+            for entry in &state.entries {
+                let path = state.folder.join(&entry.name);
+                let words = if entry.is_file {
+                    entry.name.clone()
+                } else {
+                    format!("{}/", entry.name)
+                };
+                if ui.selectable_label(false, words).clicked() {
+                    wishes.push(if entry.is_file {
+                        Command::Open(path)
+                    } else {
+                        Command::Browse(path)
+                    });
+                }
+            }
+            if state.entries.is_empty() && state.fault.is_none() {
+                ui.weak("No scenes (.ron) and no folders here.");
+            }
+        });
 }
 
 fn buttons(ui: &mut Ui, state: &Chooser, wishes: &mut Wishes) {

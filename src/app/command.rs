@@ -34,7 +34,10 @@ pub(super) enum Command {
     LedgerHeight(f32),
     Fit,
     /// Zoom to a scale in points per mm, about a place given from the middle of the sheet's region.
-    Zoom { scale: f32, about: Vec2 },
+    Zoom {
+        scale: f32,
+        about: Vec2,
+    },
     Pan(Vec2),
     TrueSize,
     ZoomBy(f32),

@@ -46,7 +46,8 @@ struct Regions {
 impl Regions {
     fn new(whole: Rect, rail: f32, ledger: Option<f32>) -> Self {
         let (left, right) = (whole.left(), whole.right());
-        let strip = |top: f32, bottom: f32| Rect::from_min_max(pos2(left, top), pos2(right, bottom));
+        let strip =
+            |top: f32, bottom: f32| Rect::from_min_max(pos2(left, top), pos2(right, bottom));
         let menu = strip(whole.top(), whole.top() + MENU);
         let rail = strip(menu.bottom(), menu.bottom() + rail);
         let status = strip(whole.bottom() - STATUS, whole.bottom());
@@ -54,7 +55,10 @@ impl Regions {
         let most = (whole.height() / 2.0)
             .min(status.top() - rail.bottom() - SHEET.y)
             .max(120.0);
-        let height = ledger.unwrap_or_else(|| usual.min(256.0)).clamp(120.0, most).round();
+        let height = ledger
+            .unwrap_or_else(|| usual.min(256.0))
+            .clamp(120.0, most)
+            .round();
         let split = left + LIST;
         let top = status.top() - height;
         Self {
@@ -104,7 +108,13 @@ impl Desk {
         let mut regions = Regions::new(whole, height, self.view.ledger_height);
         // The rail's handle is read before anything is painted: what it drives follows within this frame.
         let mut strip = widgets::region(ui, "Rail", regions.rail);
-        rail::sense(&mut strip, regions.rail, &self.shown, &self.view, &mut wishes);
+        rail::sense(
+            &mut strip,
+            regions.rail,
+            &self.shown,
+            &self.view,
+            &mut wishes,
+        );
         self.carry_out(ui, &mut wishes);
         let height = rail::height(ui, whole.width(), &self.shown, &self.view);
         if height != regions.rail.height() {
@@ -131,8 +141,12 @@ impl Desk {
     /// Keys, dropped files and what moves by itself.
     fn before(&mut self, ui: &Ui) -> Wishes {
         let over = self.view.chooser.is_some() || self.view.help.is_some();
-        let mut wishes = if over { Wishes::new() } else { action::pressed(ui.ctx(), &self.context()) };
-        let dropped = ui.input(|i| i.raw.dropped_files.first().and_then(|f| Some(f.path().to_owned())));
+        let mut wishes = if over {
+            Wishes::new()
+        } else {
+            action::pressed(ui.ctx(), &self.context())
+        };
+        let dropped = ui.input(|i| i.raw.dropped_files.first().map(|f| f.path().to_owned()));
         wishes.extend(dropped.map(Command::Open));
         let now = ui.input(|i| i.time);
         if let Some(when) = self.view.rail.gliding(now) {
@@ -150,24 +164,54 @@ impl Desk {
             shown: &self.shown,
         };
         let mut part = |name: &str, rect: Rect| widgets::region(ui, name, rect);
-        menu::bar(&mut part("Menus", regions.menu), regions.menu, &context, wishes);
-        rail::paint(&mut part("Viewing frame", regions.rail), regions.rail, &context, wishes);
+        menu::bar(
+            &mut part("Menus", regions.menu),
+            regions.menu,
+            &context,
+            wishes,
+        );
+        rail::paint(
+            &mut part("Viewing frame", regions.rail),
+            regions.rail,
+            &context,
+            wishes,
+        );
         let row = if low { 22.0 } else { 24.0 };
-        list::list(&mut part("List", regions.list), regions.list, row, &context, wishes);
+        list::list(
+            &mut part("List", regions.list),
+            regions.list,
+            row,
+            &context,
+            wishes,
+        );
         let mut sheet = part("Sheet", regions.sheet);
         if self.document.is_empty() && self.document.path.is_none() {
             empty::page(&mut sheet, regions.sheet, wishes);
         } else {
-            canvas::canvas(&mut sheet, regions.sheet, &context, &mut self.picture, wishes);
+            canvas::canvas(
+                &mut sheet,
+                regions.sheet,
+                &context,
+                &mut self.picture,
+                wishes,
+            );
         }
         let row = if low { 21.0 } else { 23.0 };
-        table::ledger(&mut part("Ledger", regions.ledger), regions.ledger, row, &context, wishes);
+        table::ledger(
+            &mut part("Ledger", regions.ledger),
+            regions.ledger,
+            row,
+            &context,
+            wishes,
+        );
         edge(ui, regions.ledger, wishes);
         let pointer = pointer(ui, regions.sheet, &context);
         let mut line = widgets::region(ui, "Status", regions.status);
         status::status(&mut line, regions.status, pointer, &context, wishes);
         let over = ui.input(|i| i.pointer.hover_pos()).is_some_and(|p| {
-            [regions.list, regions.sheet, regions.ledger].iter().any(|r| r.contains(p))
+            [regions.list, regions.sheet, regions.ledger]
+                .iter()
+                .any(|r| r.contains(p))
         });
         if !over && self.view.hovered.is_some() {
             wishes.push(Command::Hover(None));
@@ -203,7 +247,10 @@ impl Desk {
             Command::Open(path) => self.open(&path),
             Command::Close => {
                 let revision = self.document.revision + 1;
-                self.document = Document { revision, ..Document::empty() };
+                self.document = Document {
+                    revision,
+                    ..Document::empty()
+                };
                 self.view.fresh();
             }
             Command::Quit => ui.ctx().send_viewport_cmd(ViewportCommand::Close),
@@ -233,13 +280,21 @@ impl Desk {
             Command::TrueSize => self.zoom(ui, MM_TRUE, Vec2::ZERO),
             Command::Pan(by) => {
                 let (scale, offset) = self.camera(ui);
-                self.view.camera = Camera::At { scale, offset: offset + by };
+                self.view.camera = Camera::At {
+                    scale,
+                    offset: offset + by,
+                };
             }
         }
     }
 
     fn choose(&mut self) {
-        let beside = self.document.path.as_deref().and_then(Path::parent).map(Path::to_owned);
+        let beside = self
+            .document
+            .path
+            .as_deref()
+            .and_then(Path::parent)
+            .map(Path::to_owned);
         let folder = beside
             .filter(|p| p.is_dir())
             .or_else(|| std::env::current_dir().ok())
@@ -303,13 +358,18 @@ fn first_table(document: &Document) -> TableKind {
 
 /// The pointer over the sheet, and how the paper lies there.
 fn pointer(ui: &Ui, sheet: Rect, context: &Context<'_>) -> Option<(egui::Pos2, Lie)> {
-    let at = ui.input(|i| i.pointer.hover_pos()).filter(|p| sheet.contains(*p))?;
+    let at = ui
+        .input(|i| i.pointer.hover_pos())
+        .filter(|p| sheet.contains(*p))?;
     Some((at, canvas::lie(sheet, context, ui.pixels_per_point())))
 }
 
 /// The ledger's top edge, dragged.
 fn edge(ui: &mut Ui, ledger: Rect, wishes: &mut Wishes) {
-    let grip = Rect::from_min_max(ledger.left_top() - vec2(0.0, 3.0), pos2(ledger.right(), ledger.top() + 4.0));
+    let grip = Rect::from_min_max(
+        ledger.left_top() - vec2(0.0, 3.0),
+        pos2(ledger.right(), ledger.top() + 4.0),
+    );
     let child = ui.new_child(UiBuilder::new().max_rect(grip).id_salt("ledger edge"));
     let response = child
         .interact(grip, child.scope_id().with("edge"), Sense::drag())
@@ -321,6 +381,8 @@ fn edge(ui: &mut Ui, ledger: Rect, wishes: &mut Wishes) {
     }
     if response.hovered() || response.dragged() {
         let line = Rect::from_min_size(ledger.left_top(), vec2(ledger.width(), 2.0));
-        child.painter().rect_filled(line, 0, widgets::colours(&child).accent);
+        child
+            .painter()
+            .rect_filled(line, 0, widgets::colours(&child).accent);
     }
 }

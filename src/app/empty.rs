@@ -17,22 +17,66 @@ pub(super) fn page(ui: &mut Ui, rect: Rect, wishes: &mut Wishes) {
     widgets::ground(ui, c.ground);
     let left = (rect.center().x - WIDTH / 2.0).round();
     let top = (rect.center().y - 90.0).round();
-    text::put(ui.painter(), pos2(left, top), Align::LEFT, "An empty scene", Type::Title, c.text);
+    text::put(
+        ui.painter(),
+        pos2(left, top),
+        Align::LEFT,
+        "An empty scene",
+        Type::Title,
+        c.text,
+    );
     let words = "Begin with whatever you know best. The rest can be derived from it, in any frame.";
-    text::wrapped(ui.painter(), pos2(left, top + 24.0), 300.0, words, Type::Body, c.text);
+    text::wrapped(
+        ui.painter(),
+        pos2(left, top + 24.0),
+        300.0,
+        words,
+        Type::Body,
+        c.text,
+    );
     let row = Rect::from_min_size(pos2(left, top + 84.0), vec2(WIDTH, 48.0));
     let response = widgets::press(ui, row, "Open a scene", true);
     widgets::frame(ui, row, widgets::state_fill(&response, c), c.edge, 1.0);
-    icon::paint(ui.painter(), Icon::Open, pos2(row.left() + 24.0, row.center().y), 20.0, c.text);
+    icon::paint(
+        ui.painter(),
+        Icon::Open,
+        pos2(row.left() + 24.0, row.center().y),
+        20.0,
+        c.text,
+    );
     let x = row.left() + 46.0;
-    text::put(ui.painter(), pos2(x, row.top() + 16.0), Align::LEFT, "Open a scene", Type::BodyStrong, c.text);
+    text::put(
+        ui.painter(),
+        pos2(x, row.top() + 16.0),
+        Align::LEFT,
+        "Open a scene",
+        Type::BodyStrong,
+        c.text,
+    );
     let hint = "or drop a scene file on this window";
-    text::put(ui.painter(), pos2(x, row.top() + 33.0), Align::LEFT, hint, Type::Caption, c.quiet);
-    let keys = ACTIONS.iter().find(|a| (a.command)() == Command::Choose).and_then(|a| a.keys);
+    text::put(
+        ui.painter(),
+        pos2(x, row.top() + 33.0),
+        Align::LEFT,
+        hint,
+        Type::Caption,
+        c.quiet,
+    );
+    let keys = ACTIONS
+        .iter()
+        .find(|a| (a.command)() == Command::Choose)
+        .and_then(|a| a.keys);
     if let Some(keys) = keys {
         let words = ui.ctx().format_shortcut(&keys);
         let at = pos2(row.right() - 14.0, row.top() + 16.0);
-        text::put(ui.painter(), at, Align::RIGHT, &words, Type::Caption, c.quiet);
+        text::put(
+            ui.painter(),
+            at,
+            Align::RIGHT,
+            &words,
+            Type::Caption,
+            c.quiet,
+        );
     }
     widgets::focus_ring(ui, &response, row);
     if response.clicked() {

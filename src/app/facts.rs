@@ -6,9 +6,10 @@ use crate::quantity::{grouped, significant};
 
 fn number(value: f64) -> String {
     let text = significant(value, 6);
-    let text = match text.contains('.') && !text.contains('e') {
-        true => text.trim_end_matches('0').trim_end_matches('.'),
-        false => &text,
+    let text = if text.contains('.') && !text.contains('e') {
+        text.trim_end_matches('0').trim_end_matches('.')
+    } else {
+        &text
     };
     grouped(text)
 }
@@ -23,16 +24,24 @@ pub(super) fn coordinates(object: &ObjectId, context: &Context<'_>) -> Option<St
             let (t, x) = (number(e.t), number(e.x));
             format!("t {t} {}, x {x} {}", units.time, units.length)
         }),
-        Kind::Line => ledger.lines.iter().find(|l| l.name == name).map(|l| match l.beta {
-            Some(beta) => format!("β {}", number(beta)),
-            None => "bends".to_owned(),
-        }),
+        Kind::Line => ledger
+            .lines
+            .iter()
+            .find(|l| l.name == name)
+            .map(|l| match l.beta {
+                Some(beta) => format!("β {}", number(beta)),
+                None => "bends".to_owned(),
+            }),
         Kind::Particle => ledger.particles.iter().find(|p| p.name == name).map(|p| {
             let (e, px) = (number(p.energy), number(p.momentum[0]));
             format!("E {e} {0}, px {px} {0}/c", units.energy)
         }),
         Kind::Collision => ledger.collisions.iter().find(|c| c.name == name).map(|c| {
-            let balance = if c.balanced { "balances" } else { "does not balance" };
+            let balance = if c.balanced {
+                "balances"
+            } else {
+                "does not balance"
+            };
             format!("{balance}, root s {} {}", number(c.root_s), units.energy)
         }),
         Kind::Frame | Kind::Plate | Kind::Scene | Kind::Species => None,
@@ -47,7 +56,11 @@ pub(super) fn aside(object: &ObjectId, context: &Context<'_>) -> String {
         Kind::Event => scene.events.get(name).map(|o| event(&o.form)),
         Kind::Line => scene.lines.get(name).map(|o| line(name, &o.form, context)),
         Kind::Particle => scene.particles.get(name).map(|o| {
-            o.form.species.as_deref().unwrap_or_default().replace('-', "\u{2212}")
+            o.form
+                .species
+                .as_deref()
+                .unwrap_or_default()
+                .replace('-', "\u{2212}")
         }),
         Kind::Collision => scene
             .collisions
@@ -95,8 +108,14 @@ fn line(name: &str, line: &crate::scene::Line, context: &Context<'_>) -> String 
             Velocity::BehindLight(v) => format!("1 \u{2212} β {}", typed(v)),
         },
         Line::Broken { through, .. } => format!("through {}", through.len()),
-        Line::Light { toward: Toward::Plus, .. } => "light, +x".to_owned(),
-        Line::Light { toward: Toward::Minus, .. } => "light, \u{2212}x".to_owned(),
+        Line::Light {
+            toward: Toward::Plus,
+            ..
+        } => "light, +x".to_owned(),
+        Line::Light {
+            toward: Toward::Minus,
+            ..
+        } => "light, \u{2212}x".to_owned(),
         Line::Follows { particle, .. } => format!("of {particle}"),
     }
 }

@@ -1,12 +1,15 @@
 //! Pages of help, over the desk.
 
-use egui::{Grid, Id, Modal, RichText, ScrollArea, Ui};
+use egui::{Align, Layout, RichText, ScrollArea, Ui, vec2};
 
 use super::action::ACTIONS;
 use super::command::{Command, Wishes};
 use super::theme::Type;
 use super::view::Help;
-use super::widgets::colours;
+use super::widgets::{self, colours};
+
+/// Width of the words at the left.
+const COLUMN: f32 = 230.0;
 
 /// Keys that belong to a place rather than to the whole desk.
 const PLACES: &[(&str, &str)] = &[
@@ -21,20 +24,44 @@ const PLACES: &[(&str, &str)] = &[
 
 /// What the desk's words mean.
 const WORDS: &[(&str, &str)] = &[
-    ("base frame", "The frame in which a scene's plain coordinates are given."),
-    ("viewing frame", "The frame a panel is drawn in, given by its rapidity relative to the base frame."),
-    ("rapidity", "artanh of v/c along x. Rapidities along one line add; equal lengths on the rail are equal relative rapidities."),
-    ("β, γ, k", "Speed over c, the Lorentz factor, and the Doppler factor e to the rapidity."),
-    ("line", "A worldline: of a clock, an observer, a particle, a light pulse."),
-    ("collision", "An event with particles before and particles after. A decay is one."),
-    ("conserved", "The same before and after, in one frame: two upright strokes between the sums."),
+    (
+        "base frame",
+        "The frame in which a scene's plain coordinates are given.",
+    ),
+    (
+        "viewing frame",
+        "The frame a panel is drawn in, given by its rapidity relative to the base frame.",
+    ),
+    (
+        "rapidity",
+        "artanh of v/c along x. Rapidities along one line add; equal lengths on the rail are equal relative rapidities.",
+    ),
+    (
+        "β, γ, k",
+        "Speed over c, the Lorentz factor, and the Doppler factor e to the rapidity.",
+    ),
+    (
+        "line",
+        "A worldline: of a clock, an observer, a particle, a light pulse.",
+    ),
+    (
+        "collision",
+        "An event with particles before and particles after. A decay is one.",
+    ),
+    (
+        "conserved",
+        "The same before and after, in one frame: two upright strokes between the sums.",
+    ),
     ("invariant", "The same for every observer."),
-    ("finding", "What is to be mended or known, with the object it is about."),
+    (
+        "finding",
+        "What is to be mended or known, with the object it is about.",
+    ),
 ];
 
 /// Shows a page.
 pub(super) fn page(ui: &Ui, page: Help, wishes: &mut Wishes) {
-    let modal = Modal::new(Id::unique("help")).show(ui.ctx(), |ui| {
+    let modal = widgets::modal(ui, "help").show(ui.ctx(), |ui| {
         ui.set_width(560.0);
         match page {
             Help::Shortcuts => shortcuts(ui),
@@ -51,17 +78,20 @@ pub(super) fn page(ui: &Ui, page: Help, wishes: &mut Wishes) {
     }
 }
 
-fn rows<'a>(ui: &mut Ui, name: &str, rows: impl Iterator<Item = (&'a str, String)>) {
+/// Words at the left, what they stand for at the right.
+fn rows<'a>(ui: &mut Ui, rows: impl Iterator<Item = (&'a str, String)>) {
     let quiet = colours(ui).quiet;
     ScrollArea::vertical().max_height(420.0).show(ui, |ui| {
-        Grid::new(name).num_columns(2).spacing([24.0, 6.0]).show(ui, |ui| {
-            for (first, second) in rows {
-                ui.label(first);
-                ui.set_max_width(360.0);
+        for (first, second) in rows {
+            ui.horizontal_top(|ui| {
+                let size = vec2(COLUMN, 18.0);
+                ui.allocate_ui_with_layout(size, Layout::left_to_right(Align::Min), |ui| {
+                    ui.set_min_width(COLUMN);
+                    ui.label(first);
+                });
                 ui.add(egui::Label::new(RichText::new(second).color(quiet)).wrap());
-                ui.end_row();
-            }
-        });
+            });
+        }
     });
 }
 
@@ -69,15 +99,24 @@ fn shortcuts(ui: &mut Ui) {
     ui.heading("Shortcuts");
     ui.add_space(8.0);
     let ctx = ui.ctx().clone();
-    let actions = ACTIONS.iter().filter_map(|a| Some((a.words, ctx.format_shortcut(&a.keys?))));
-    let places = PLACES.iter().map(|(what, keys)| (*what, (*keys).to_owned()));
-    rows(ui, "shortcuts", actions.chain(places));
+    let actions = ACTIONS
+        .iter()
+        .filter_map(|a| Some((a.words, ctx.format_shortcut(&a.keys?))));
+    let places = PLACES
+        .iter()
+        .map(|(what, keys)| (*what, (*keys).to_owned()));
+    rows(ui, actions.chain(places));
 }
 
 fn words(ui: &mut Ui) {
     ui.heading("Words used here");
     ui.add_space(8.0);
-    rows(ui, "words", WORDS.iter().map(|(word, meaning)| (*word, (*meaning).to_owned())));
+    rows(
+        ui,
+        WORDS
+            .iter()
+            .map(|(word, meaning)| (*word, (*meaning).to_owned())),
+    );
 }
 
 fn about(ui: &mut Ui) {

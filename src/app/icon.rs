@@ -1,5 +1,10 @@
 //! The desk's icons: strokes on a grid of 20.
 
+#![expect(
+    clippy::cast_possible_truncation,
+    reason = "the screen is in f32 points"
+)]
+
 use egui::{Color32, Painter, Pos2, Rect, Shape, Stroke, pos2, vec2};
 use kurbo::{BezPath, PathEl};
 
@@ -57,7 +62,13 @@ impl Icon {
         }
     }
 
-    fn fills(self, painter: &Painter, place: impl Fn(f64, f64) -> Pos2, scale: f32, colour: Color32) {
+    fn fills(
+        self,
+        painter: &Painter,
+        place: impl Fn(f64, f64) -> Pos2,
+        scale: f32,
+        colour: Color32,
+    ) {
         match self {
             Self::Event => {
                 painter.circle_filled(place(10.0, 10.0), 2.6 * scale, colour);
@@ -87,7 +98,12 @@ impl Icon {
 pub(super) fn paint(painter: &Painter, icon: Icon, centre: Pos2, side: f32, colour: Color32) {
     let rect = Rect::from_center_size(centre, vec2(side, side));
     let scale = side / 20.0;
-    let place = |x: f64, y: f64| pos2(rect.left() + x as f32 * scale, rect.top() + y as f32 * scale);
+    let place = |x: f64, y: f64| {
+        pos2(
+            rect.left() + x as f32 * scale,
+            rect.top() + y as f32 * scale,
+        )
+    };
     let stroke = Stroke::new(1.5 * scale.max(0.8), colour);
     for line in flattened(icon.strokes()) {
         let points: Vec<Pos2> = line.iter().map(|p| place(p.x, p.y)).collect();
@@ -129,13 +145,27 @@ mod tests {
     #[test]
     fn every_icon_draws_within_its_grid() {
         for icon in [
-            Icon::Event, Icon::Line, Icon::Particle, Icon::Collision, Icon::Frame, Icon::Plate,
-            Icon::Fault, Icon::Sound, Icon::Open, Icon::Closed, Icon::Down, Icon::Plus, Icon::Minus,
+            Icon::Event,
+            Icon::Line,
+            Icon::Particle,
+            Icon::Collision,
+            Icon::Frame,
+            Icon::Plate,
+            Icon::Fault,
+            Icon::Sound,
+            Icon::Open,
+            Icon::Closed,
+            Icon::Down,
+            Icon::Plus,
+            Icon::Minus,
         ] {
             let lines = flattened(icon.strokes());
             assert!(!lines.is_empty(), "{icon:?}");
             for p in lines.iter().flatten() {
-                assert!((0.0..=20.0).contains(&p.x) && (0.0..=20.0).contains(&p.y), "{icon:?}");
+                assert!(
+                    (0.0..=20.0).contains(&p.x) && (0.0..=20.0).contains(&p.y),
+                    "{icon:?}"
+                );
             }
         }
     }

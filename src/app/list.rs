@@ -1,41 +1,43 @@
 //! The list of objects, and what is to be mended in them.
 
-use egui::{Align, Rect, Role, ScrollArea, Sense, Ui, UiBuilder, WidgetInfo, pos2, vec2};
+use egui::{Align, Rect, Role, ScrollArea, Sense, Ui, WidgetInfo, pos2, vec2};
 
 use super::command::{Command, Wishes};
 use super::context::Context;
 use super::facts;
+use super::findings;
 use super::icon::{self, Icon};
 use super::text;
-use super::theme::{MARGIN_SMALL, Type};
+use super::theme::Type;
 use super::widgets::{self, colours};
-use crate::fault::{Fault, Kind, ObjectId, Weight};
-
-/// Findings take at least this much height.
-const FINDINGS: f32 = 84.0;
-/// This many findings are listed; the rest is counted.
-const LISTED: usize = 4;
+use crate::fault::{Kind, ObjectId, Weight};
 
 /// Paints list and findings.
 pub(super) fn list(ui: &mut Ui, rect: Rect, row: f32, context: &Context<'_>, wishes: &mut Wishes) {
     let c = colours(ui);
     widgets::ground(ui, c.panel);
-    let foot = findings_height(ui, rect, context).max(FINDINGS).min(rect.height() / 2.0);
+    let foot = findings::height(ui, rect, context);
     let split = (rect.bottom() - foot).round();
     let above = Rect::from_min_max(rect.min, pos2(rect.right(), split));
     let below = Rect::from_min_max(pos2(rect.left(), split), rect.max);
     let mut upper = widgets::region(ui, "Objects", above.shrink2(vec2(0.0, 4.0)));
-    ScrollArea::vertical().auto_shrink(false).show(&mut upper, |ui| {
-        ui.spacing_mut().item_spacing.y = 0.0;
-        ui.add_space(4.0);
-        for (kind, names) in kinds(context) {
-            section(ui, row, kind, &names, context, wishes);
-        }
-    });
+    ScrollArea::vertical()
+        .auto_shrink(false)
+        .show(&mut upper, |ui| {
+            ui.spacing_mut().item_spacing.y = 0.0;
+            ui.add_space(4.0);
+            for (kind, names) in kinds(context) {
+                section(ui, row, kind, &names, context, wishes);
+            }
+        });
     let mut lower = widgets::region(ui, "Findings", below);
-    findings(&mut lower, below, context, wishes);
+    findings::findings(&mut lower, below, context, wishes);
     widgets::hairline(ui, below.left_top(), below.right_top());
-    widgets::hairline(ui, rect.right_top() - vec2(1.0, 0.0), rect.right_bottom() - vec2(1.0, 0.0));
+    widgets::hairline(
+        ui,
+        rect.right_top() - vec2(1.0, 0.0),
+        rect.right_bottom() - vec2(1.0, 0.0),
+    );
 }
 
 /// Kinds with the names of theirs, those the scene uses most first.
@@ -44,12 +46,31 @@ fn kinds(context: &Context<'_>) -> Vec<(Kind, Vec<String>)> {
     let mut frames = vec![scene.base.clone()];
     frames.extend(scene.frames.keys().map(ToString::to_string));
     let mut kinds = vec![
-        (Kind::Event, scene.events.keys().map(ToString::to_string).collect()),
-        (Kind::Line, scene.lines.keys().map(ToString::to_string).collect()),
-        (Kind::Particle, scene.particles.keys().map(ToString::to_string).collect()),
-        (Kind::Collision, scene.collisions.keys().map(ToString::to_string).collect()),
+        (
+            Kind::Event,
+            scene.events.keys().map(ToString::to_string).collect(),
+        ),
+        (
+            Kind::Line,
+            scene.lines.keys().map(ToString::to_string).collect(),
+        ),
+        (
+            Kind::Particle,
+            scene.particles.keys().map(ToString::to_string).collect(),
+        ),
+        (
+            Kind::Collision,
+            scene.collisions.keys().map(ToString::to_string).collect(),
+        ),
         (Kind::Frame, frames),
-        (Kind::Plate, scene.plates.keys().map(ToString::to_string).collect::<Vec<_>>()),
+        (
+            Kind::Plate,
+            scene
+                .plates
+                .keys()
+                .map(ToString::to_string)
+                .collect::<Vec<_>>(),
+        ),
     ];
     let unread = context.document.opened.solved.left_out.iter();
     for object in unread {
@@ -61,7 +82,12 @@ fn kinds(context: &Context<'_>) -> Vec<(Kind, Vec<String>)> {
         }
     }
     // What the scene is about comes first; empty kinds last.
-    let count = |kind: Kind| kinds.iter().find(|(k, _)| *k == kind).map_or(0, |(_, n)| n.len());
+    let count = |kind: Kind| {
+        kinds
+            .iter()
+            .find(|(k, _)| *k == kind)
+            .map_or(0, |(_, n)| n.len())
+    };
     let momenta = count(Kind::Particle) + count(Kind::Collision);
     let momenta_first = momenta > count(Kind::Event) + count(Kind::Line);
     let rank = move |kind: Kind| match kind {
@@ -86,22 +112,53 @@ fn heading(kind: Kind) -> &'static str {
     }
 }
 
-fn section(ui: &mut Ui, row: f32, kind: Kind, names: &[String], context: &Context<'_>, wishes: &mut Wishes) {
+fn section(
+    ui: &mut Ui,
+    row: f32,
+    kind: Kind,
+    names: &[String],
+    context: &Context<'_>,
+    wishes: &mut Wishes,
+) {
     let c = colours(ui);
     let folded = context.view.folded.contains(&kind);
-    let (rect, response) = ui.allocate_exact_size(vec2(ui.available_width(), row + 4.0), Sense::click());
+    let (rect, response) =
+        ui.allocate_exact_size(vec2(ui.available_width(), row + 4.0), Sense::click());
     let words = heading(kind);
-    response.widget_info(|| WidgetInfo::selected(Role::Button, true, !folded, format!("{words} in the list")));
+    response.widget_info(|| {
+        WidgetInfo::selected(Role::Button, true, !folded, format!("{words} in the list"))
+    });
     let y = rect.center().y + 1.0;
     if response.hovered() {
-        ui.painter().rect_filled(rect.shrink2(vec2(4.0, 2.0)), 4, c.hover);
+        ui.painter()
+            .rect_filled(rect.shrink2(vec2(4.0, 2.0)), 4, c.hover);
     }
     let turn = if folded { Icon::Closed } else { Icon::Down };
-    icon::paint(ui.painter(), turn, pos2(rect.left() + 16.0, y), 12.0, c.quiet);
+    icon::paint(
+        ui.painter(),
+        turn,
+        pos2(rect.left() + 16.0, y),
+        12.0,
+        c.quiet,
+    );
     let at = pos2(rect.left() + 26.0, y);
-    text::put(ui.painter(), at, Align::LEFT, words, Type::CaptionStrong, c.quiet);
+    text::put(
+        ui.painter(),
+        at,
+        Align::LEFT,
+        words,
+        Type::CaptionStrong,
+        c.quiet,
+    );
     let count = pos2(rect.right() - 14.0, y);
-    text::put(ui.painter(), count, Align::RIGHT, &names.len().to_string(), Type::Caption, c.quiet);
+    text::put(
+        ui.painter(),
+        count,
+        Align::RIGHT,
+        &names.len().to_string(),
+        Type::Caption,
+        c.quiet,
+    );
     widgets::focus_ring(ui, &response, rect.shrink(3.0));
     if response.clicked() {
         wishes.push(Command::Fold(kind));
@@ -112,7 +169,14 @@ fn section(ui: &mut Ui, row: f32, kind: Kind, names: &[String], context: &Contex
     if names.is_empty() {
         let (rect, _) = ui.allocate_exact_size(vec2(ui.available_width(), row), Sense::hover());
         let at = pos2(rect.left() + 26.0, rect.center().y);
-        text::put(ui.painter(), at, Align::LEFT, "none", Type::Caption, c.quiet);
+        text::put(
+            ui.painter(),
+            at,
+            Align::LEFT,
+            "none",
+            Type::Caption,
+            c.quiet,
+        );
     }
     for run in runs(names) {
         match run {
@@ -143,7 +207,9 @@ fn stem(name: &str) -> &str {
 
 fn runs(names: &[String]) -> Vec<Run<'_>> {
     let mut runs = Vec::new();
-    for group in names.chunk_by(|a, b| stem(a) == stem(b) && stem(a).len() < a.len() && stem(b).len() < b.len()) {
+    for group in names
+        .chunk_by(|a, b| stem(a) == stem(b) && stem(a).len() < a.len() && stem(b).len() < b.len())
+    {
         match group {
             [first, ..] if group.len() >= NUMBERED => runs.push(Run::Numbered(stem(first), group)),
             _ => runs.extend(group.iter().map(|n| Run::One(n))),
@@ -163,12 +229,15 @@ fn numbered(
 ) -> bool {
     let c = colours(ui);
     let open = context.view.unfolded.contains(stem);
-    let (rect, response) = ui.allocate_exact_size(vec2(ui.available_width(), height), Sense::click());
+    let (rect, response) =
+        ui.allocate_exact_size(vec2(ui.available_width(), height), Sense::click());
     let last = names.last().map_or("", |n| &n[stem.name.len()..]);
     let words = format!("{} to {last}", names.first().map_or("", String::as_str));
     response.widget_info(|| WidgetInfo::selected(Role::Button, true, open, &words));
     let holds = |object: &Option<ObjectId>| {
-        object.as_ref().is_some_and(|o| o.kind == stem.kind && names.iter().any(|n| **n == *o.name))
+        object
+            .as_ref()
+            .is_some_and(|o| o.kind == stem.kind && names.iter().any(|n| **n == *o.name))
     };
     let row = Rect::from_min_max(rect.min + vec2(4.0, 0.0), rect.max - vec2(4.0, 0.0));
     if !open && holds(&context.view.selected) {
@@ -178,11 +247,30 @@ fn numbered(
     }
     let y = rect.center().y;
     let turn = if open { Icon::Down } else { Icon::Closed };
-    icon::paint(ui.painter(), turn, pos2(rect.left() + 16.0, y), 12.0, c.quiet);
-    icon::paint(ui.painter(), Icon::of(stem.kind), pos2(rect.left() + 34.0, y), 16.0, c.text);
+    icon::paint(
+        ui.painter(),
+        turn,
+        pos2(rect.left() + 16.0, y),
+        12.0,
+        c.quiet,
+    );
+    icon::paint(
+        ui.painter(),
+        Icon::of(stem.kind),
+        pos2(rect.left() + 34.0, y),
+        16.0,
+        c.text,
+    );
     let room = rect.right() - 14.0 - rect.left() - 48.0;
     let words = text::cut_end(ui.painter(), &words, Type::Body, room);
-    text::put(ui.painter(), pos2(rect.left() + 48.0, y), Align::LEFT, &words, Type::Body, c.text);
+    text::put(
+        ui.painter(),
+        pos2(rect.left() + 48.0, y),
+        Align::LEFT,
+        &words,
+        Type::Body,
+        c.text,
+    );
     widgets::focus_ring(ui, &response, row);
     if response.clicked() {
         wishes.push(Command::Unfold(stem.clone()));
@@ -192,9 +280,17 @@ fn numbered(
 
 fn item(ui: &mut Ui, height: f32, object: &ObjectId, context: &Context<'_>, wishes: &mut Wishes) {
     let c = colours(ui);
-    let (rect, response) = ui.allocate_exact_size(vec2(ui.available_width(), height), Sense::click());
+    let (rect, response) =
+        ui.allocate_exact_size(vec2(ui.available_width(), height), Sense::click());
     let selected = context.view.selected.as_ref() == Some(object);
-    response.widget_info(|| WidgetInfo::selected(Role::ListItem, true, selected, format!("{object} in the list")));
+    response.widget_info(|| {
+        WidgetInfo::selected(
+            Role::ListItem,
+            true,
+            selected,
+            format!("{object} in the list"),
+        )
+    });
     widgets::mark_selected(ui, response.id, selected);
     let row = Rect::from_min_max(rect.min + vec2(4.0, 0.0), rect.max - vec2(4.0, 0.0));
     if selected {
@@ -203,9 +299,18 @@ fn item(ui: &mut Ui, height: f32, object: &ObjectId, context: &Context<'_>, wish
         ui.painter().rect_filled(row, 4, c.hover);
     }
     let y = rect.center().y;
-    let at_fault = context.shown.faults_of(object).any(|f| f.weight == Weight::Fault);
+    let at_fault = context
+        .shown
+        .faults_of(object)
+        .any(|f| f.weight == Weight::Fault);
     let ink = if at_fault { c.fault } else { c.text };
-    icon::paint(ui.painter(), Icon::of(object.kind), pos2(rect.left() + 34.0, y), 16.0, ink);
+    icon::paint(
+        ui.painter(),
+        Icon::of(object.kind),
+        pos2(rect.left() + 34.0, y),
+        16.0,
+        ink,
+    );
     let set = Type::body(selected);
     let end = rect.right() - 14.0;
     let left = rect.left() + 48.0;
@@ -222,7 +327,14 @@ fn item(ui: &mut Ui, height: f32, object: &ObjectId, context: &Context<'_>, wish
         text::put(&painter, pos2(left, y), Align::LEFT, &name, set, ink);
         if room > 24.0 {
             let fact = text::cut_end(&painter, &fact, Type::Caption, room);
-            text::put(&painter, pos2(end, y), Align::RIGHT, &fact, Type::Caption, c.quiet);
+            text::put(
+                &painter,
+                pos2(end, y),
+                Align::RIGHT,
+                &fact,
+                Type::Caption,
+                c.quiet,
+            );
         }
     }
     widgets::focus_ring(ui, &response, row);
@@ -231,116 +343,5 @@ fn item(ui: &mut Ui, height: f32, object: &ObjectId, context: &Context<'_>, wish
     }
     if response.hovered() && context.view.hovered.as_ref() != Some(object) {
         wishes.push(Command::Hover(Some(object.clone())));
-    }
-}
-
-/// The sentence of a fault and what would mend it.
-fn sentence(fault: &Fault) -> String {
-    let what = capital(&fault.what);
-    if fault.mend.is_empty() {
-        format!("{what}.")
-    } else {
-        format!("{what}. Mend: {}.", fault.mend)
-    }
-}
-
-pub(super) fn capital(words: &str) -> String {
-    let mut letters = words.chars();
-    letters
-        .next()
-        .map_or_else(String::new, |first| first.to_uppercase().chain(letters).collect())
-}
-
-const INDENT: f32 = 34.0;
-
-fn text_height(ui: &Ui, words: &str, room: f32) -> f32 {
-    let galley = ui.painter().layout(words.to_owned(), Type::Caption.font(), egui::Color32::PLACEHOLDER, room);
-    galley.size().y
-}
-
-fn findings_height(ui: &Ui, rect: Rect, context: &Context<'_>) -> f32 {
-    let room = rect.width() - INDENT - MARGIN_SMALL;
-    let listed: f32 = context
-        .shown
-        .faults
-        .iter()
-        .take(LISTED)
-        .map(|f| text_height(ui, &sentence(f), room) + 24.0)
-        .sum();
-    listed + 36.0
-}
-
-fn findings(ui: &mut Ui, rect: Rect, context: &Context<'_>, wishes: &mut Wishes) {
-    let c = colours(ui);
-    let faults = &context.shown.faults;
-    let y = rect.top() + 18.0;
-    let left = rect.left() + 14.0;
-    text::put(ui.painter(), pos2(left, y), Align::LEFT, "Findings", Type::BodyStrong, c.text);
-    let count = pos2(rect.right() - 14.0, y);
-    text::put(ui.painter(), count, Align::RIGHT, &faults.len().to_string(), Type::Caption, c.quiet);
-    let inner = Rect::from_min_max(pos2(rect.left(), y + 14.0), rect.max - vec2(0.0, 4.0));
-    let mut child = ui.new_child(UiBuilder::new().max_rect(inner).id_salt("found"));
-    child.shrink_clip_rect(inner);
-    if faults.is_empty() {
-        sound(&child, inner, context);
-        return;
-    }
-    ScrollArea::vertical().auto_shrink(false).show(&mut child, |ui| {
-        ui.spacing_mut().item_spacing.y = 2.0;
-        for (i, fault) in faults.iter().enumerate() {
-            finding(ui, i, fault, wishes);
-        }
-    });
-}
-
-fn sound(ui: &Ui, rect: Rect, context: &Context<'_>) {
-    let c = colours(ui);
-    let y = rect.top() + 8.0;
-    icon::paint(ui.painter(), Icon::Sound, pos2(rect.left() + 20.0, y), 15.0, c.accent);
-    let at = pos2(rect.left() + INDENT, y);
-    text::put(ui.painter(), at, Align::LEFT, "Nothing to mend", Type::Caption, c.text);
-    let words = if context.document.is_empty() {
-        "Faults will be listed here."
-    } else {
-        match context.shown.ledger.as_ref().map_or(0, |l| l.collisions.len()) {
-            0 => "no collisions to balance",
-            1 => "the collision balances",
-            _ => "all collisions balance",
-        }
-    };
-    let at = pos2(rect.left() + INDENT, y + 18.0);
-    text::put(ui.painter(), at, Align::LEFT, words, Type::Caption, c.quiet);
-}
-
-fn finding(ui: &mut Ui, index: usize, fault: &Fault, wishes: &mut Wishes) {
-    let c = colours(ui);
-    let room = ui.available_width() - INDENT - MARGIN_SMALL;
-    let words = sentence(fault);
-    let height = text_height(ui, &words, room) + 22.0;
-    let (rect, _) = ui.allocate_exact_size(vec2(ui.available_width(), height), Sense::hover());
-    let response = ui.interact(rect, ui.scope_id().with(("finding", index)), Sense::click());
-    let name = format!("finding: {}: {words}", fault.object);
-    response.widget_info(|| WidgetInfo::labeled(Role::Button, true, &name));
-    if response.hovered() {
-        ui.painter().rect_filled(rect.shrink2(vec2(4.0, 0.0)), 4, c.hover);
-    }
-    let ink = match fault.weight {
-        Weight::Fault => c.fault,
-        Weight::Finding => c.quiet,
-    };
-    let y = rect.top() + 10.0;
-    icon::paint(ui.painter(), Icon::Fault, pos2(rect.left() + 20.0, y), 15.0, ink);
-    let head = text::cut_end(ui.painter(), &fault.object.to_string(), Type::Caption, room);
-    text::put(ui.painter(), pos2(rect.left() + INDENT, y), Align::LEFT, &head, Type::Caption, ink);
-    let at = pos2(rect.left() + INDENT, rect.top() + 18.0);
-    text::wrapped(ui.painter(), at, room, &words, Type::Caption, c.quiet);
-    widgets::focus_ring(ui, &response, rect.shrink(3.0));
-    let place = fault.place.map(|p| format!("line {}, column {}", p.line, p.column));
-    let response = match place {
-        Some(place) => response.on_hover_text(place),
-        None => response,
-    };
-    if response.clicked() {
-        wishes.push(Command::Select(Some(fault.object.clone())));
     }
 }

@@ -19,24 +19,54 @@ pub(super) fn bar(ui: &mut Ui, rect: Rect, context: &Context<'_>, wishes: &mut W
         ui.spacing_mut().button_padding = vec2(9.0, 2.0);
         ui.spacing_mut().item_spacing.x = 2.0;
         let buttons = Menu::ALL.map(|menu| {
-            ui.menu_button(menu.word(), |ui| entries(ui, menu, context, wishes)).response.rect.right()
+            ui.menu_button(menu.word(), |ui| entries(ui, menu, context, wishes))
+                .response
+                .rect
+                .right()
         });
         buttons.into_iter().fold(0.0, f32::max)
     });
     scene_name(ui, rect, end.inner, context);
-    widgets::hairline(ui, rect.left_bottom() - vec2(0.0, 1.0), rect.right_bottom() - vec2(0.0, 1.0));
+    widgets::hairline(
+        ui,
+        rect.left_bottom() - vec2(0.0, 1.0),
+        rect.right_bottom() - vec2(0.0, 1.0),
+    );
 }
 
 fn scene_name(ui: &Ui, rect: Rect, from: f32, context: &Context<'_>) {
     let c = colours(ui);
     let y = rect.center().y;
     let right = rect.right() - MARGIN;
-    let words = if context.document.path.is_some() { "saved" } else { "nothing to save" };
-    let state = text::put(ui.painter(), pos2(right, y), Align::RIGHT, words, Type::Caption, c.quiet);
+    let words = if context.document.path.is_some() {
+        "saved"
+    } else {
+        "nothing to save"
+    };
+    let state = text::put(
+        ui.painter(),
+        pos2(right, y),
+        Align::RIGHT,
+        words,
+        Type::Caption,
+        c.quiet,
+    );
     let room = (state.left() - 12.0 - from - 24.0).max(0.0);
-    let name = text::cut_middle(ui.painter(), &context.document.name(), Type::BodyStrong, room);
+    let name = text::cut_middle(
+        ui.painter(),
+        &context.document.name(),
+        Type::BodyStrong,
+        room,
+    );
     let at = pos2(state.left() - 12.0, y);
-    text::put(ui.painter(), at, Align::RIGHT, &name, Type::BodyStrong, c.text);
+    text::put(
+        ui.painter(),
+        at,
+        Align::RIGHT,
+        &name,
+        Type::BodyStrong,
+        c.text,
+    );
 }
 
 fn entries(ui: &mut Ui, menu: Menu, context: &Context<'_>, wishes: &mut Wishes) {
@@ -71,12 +101,17 @@ fn entry(ui: &mut Ui, action: &Action, context: &Context<'_>, wishes: &mut Wishe
 /// Every frame the rail has a tick for.
 fn ticks(ui: &mut Ui, context: &Context<'_>, wishes: &mut Wishes) {
     ui.separator();
-    egui::ScrollArea::vertical().max_height(360.0).show(ui, |ui| {
-        for (words, when) in super::rail::destinations(context) {
-            let words = words.replace(super::rail::ACROSS, "across");
-            if ui.add(Button::selectable(false, format!("Go to {words}"))).clicked() {
-                wishes.push(Command::Frame(when));
+    egui::ScrollArea::vertical()
+        .max_height(360.0)
+        .show(ui, |ui| {
+            for (words, when) in super::rail::destinations(context) {
+                let words = words.replace(super::rail::ACROSS, "across");
+                if ui
+                    .add(Button::selectable(false, format!("Go to {words}")))
+                    .clicked()
+                {
+                    wishes.push(Command::Frame(when));
+                }
             }
-        }
-    });
+        });
 }

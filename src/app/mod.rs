@@ -13,6 +13,7 @@ mod desk;
 mod document;
 mod empty;
 mod facts;
+mod findings;
 mod help;
 mod icon;
 mod list;

@@ -29,10 +29,10 @@ pub enum Paint {
 pub enum RunFault {
     /// There is no display to open a window on.
     #[error(
-        "there is no display to open a window on ({0}); run this in a desktop session, or use `conewright draw`, \
-         `ledger` or `audit`, which need none"
+        "there is no display to open a window on; run this in a desktop session, or use `conewright draw`, `ledger` \
+         or `audit`, which need none"
     )]
-    NoDisplay(String),
+    NoDisplay,
     /// OpenGL was asked for and does not work.
     #[error("OpenGL does not work here ({0}); leave out `--paint gl`, or use `--paint software`")]
     NoGl(String),
@@ -49,7 +49,7 @@ pub enum RunFault {
 pub fn run(scene: Option<PathBuf>, paint: Paint) -> Result<(), RunFault> {
     let mut event_loop = EventLoop::<UserEvent>::with_user_event()
         .build()
-        .map_err(|e| RunFault::NoDisplay(e.to_string()))?;
+        .map_err(|_no_display| RunFault::NoDisplay)?;
     // The desk is handed over only once a window stands, so that a failed attempt leaves it to the next.
     let desk = Rc::new(RefCell::new(Some(Desk::new(scene))));
     if paint != Paint::Software {

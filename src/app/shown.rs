@@ -50,7 +50,11 @@ impl Shown {
             return;
         }
         let opened = &document.opened;
-        let name = opened.scene.plates.get_index(view.plate).map(|(name, _)| &**name);
+        let name = opened
+            .scene
+            .plates
+            .get_index(view.plate)
+            .map(|(name, _)| &**name);
         let change = Override {
             viewing: view.frames.clone(),
             only: None,
@@ -63,10 +67,14 @@ impl Shown {
         self.tables = self.ledger.as_ref().map(tables).unwrap_or_default();
         self.tables.iter_mut().for_each(tidy);
         self.things = opened.solved.rapidities();
-        self.faults = opened.faults.clone();
+        self.faults.clone_from(&opened.faults);
         if let Some(laid) = &self.laid {
             self.faults.extend(laid.faults.iter().cloned());
-            let ids = laid.sheet.groups.iter().map(|g| object_of(document, &g.title));
+            let ids = laid
+                .sheet
+                .groups
+                .iter()
+                .map(|g| object_of(document, &g.title));
             self.objects = ids.collect();
         }
         self.version += 1;
@@ -101,7 +109,12 @@ impl Shown {
 /// Leaves out what only repeats: momentum across where there is none, a collision's name beside its second sum.
 fn tidy(table: &mut Table) {
     let across = table.columns.iter().position(|c| c.head == "py");
-    let blank = |i: usize| table.rows.iter().all(|r| r.cells[i].value.is_none_or(|v| v == 0.0));
+    let blank = |i: usize| {
+        table
+            .rows
+            .iter()
+            .all(|r| r.cells[i].value.is_none_or(|v| v == 0.0))
+    };
     if let Some(i) = across.filter(|&i| blank(i)) {
         table.columns.remove(i);
         for row in &mut table.rows {
@@ -136,7 +149,9 @@ fn frame_of(document: &Document, view: &View) -> When {
 /// The object that a group's title names, as in `event turn`.
 fn object_of(document: &Document, title: &str) -> Option<ObjectId> {
     let (word, name) = title.split_once(' ')?;
-    let kind = crate::fault::Kind::ALL.into_iter().find(|k| k.word() == word)?;
+    let kind = crate::fault::Kind::ALL
+        .into_iter()
+        .find(|k| k.word() == word)?;
     let id = ObjectId::new(kind, name);
     exists(document, &id).then_some(id)
 }
@@ -147,7 +162,9 @@ fn exists(document: &Document, id: &ObjectId) -> bool {
     let scene = &document.opened.scene;
     let name = &*id.name;
     match id.kind {
-        Kind::Event => scene.events.contains_key(name) || document.opened.solved.events.contains_key(name),
+        Kind::Event => {
+            scene.events.contains_key(name) || document.opened.solved.events.contains_key(name)
+        }
         Kind::Line => scene.lines.contains_key(name),
         Kind::Particle => scene.particles.contains_key(name),
         Kind::Collision => scene.collisions.contains_key(name),

@@ -1,5 +1,11 @@
 //! The line at the bottom: what is under the pointer, where it is, and whether all balances.
 
+#![expect(
+    clippy::cast_possible_truncation,
+    clippy::cast_sign_loss,
+    reason = "the screen is in f32 points and whole pixels"
+)]
+
 use egui::{Align, Pos2, Rect, Ui, pos2, vec2};
 
 use super::canvas::Lie;
@@ -15,7 +21,13 @@ use crate::quantity::{Decimals, fixed, grouped, significant};
 use crate::scene::View as Kind;
 
 /// Paints the status line. `pointer` is where the pointer is on the screen, and how the paper lies.
-pub(super) fn status(ui: &mut Ui, rect: Rect, pointer: Option<(Pos2, Lie)>, context: &Context<'_>, wishes: &mut Wishes) {
+pub(super) fn status(
+    ui: &mut Ui,
+    rect: Rect,
+    pointer: Option<(Pos2, Lie)>,
+    context: &Context<'_>,
+    wishes: &mut Wishes,
+) {
     let c = colours(ui);
     widgets::ground(ui, c.panel);
     widgets::hairline(ui, rect.left_top(), rect.right_top());
@@ -28,13 +40,23 @@ pub(super) fn status(ui: &mut Ui, rect: Rect, pointer: Option<(Pos2, Lie)>, cont
     };
     let words = text::width(ui.painter(), &balance.words, Type::Body);
     let left = rect.right() - MARGIN - words;
-    let hit = Rect::from_min_max(pos2(left - 26.0, rect.top() + 2.0), rect.right_bottom() - vec2(8.0, 2.0));
+    let hit = Rect::from_min_max(
+        pos2(left - 26.0, rect.top() + 2.0),
+        rect.right_bottom() - vec2(8.0, 2.0),
+    );
     let response = widgets::press(ui, hit, &balance.words, balance.goes.is_some());
     if response.hovered() && balance.goes.is_some() {
         ui.painter().rect_filled(hit, 4, c.hover);
     }
     let at = pos2(left, y);
-    text::put(ui.painter(), at, Align::LEFT, &balance.words, Type::Body, words_ink);
+    text::put(
+        ui.painter(),
+        at,
+        Align::LEFT,
+        &balance.words,
+        Type::Body,
+        words_ink,
+    );
     let mut end = left - 8.0;
     if let Some(icon) = balance.icon {
         icon::paint(ui.painter(), icon, pos2(left - 14.0, y), 16.0, ink);
@@ -46,9 +68,23 @@ pub(super) fn status(ui: &mut Ui, rect: Rect, pointer: Option<(Pos2, Lie)>, cont
     let here = pointer.and_then(|(at, lie)| under(context, &lie, at));
     if let Some((frame, place)) = here {
         let wide = text::width(ui.painter(), &place, Type::Body);
-        text::put(ui.painter(), pos2(end - 16.0, y), Align::RIGHT, &place, Type::Body, c.text);
+        text::put(
+            ui.painter(),
+            pos2(end - 16.0, y),
+            Align::RIGHT,
+            &place,
+            Type::Body,
+            c.text,
+        );
         let before = pos2(end - 16.0 - wide - 6.0, y);
-        let label = text::put(ui.painter(), before, Align::RIGHT, &frame, Type::Caption, c.quiet);
+        let label = text::put(
+            ui.painter(),
+            before,
+            Align::RIGHT,
+            &frame,
+            Type::Caption,
+            c.quiet,
+        );
         divider(ui, rect, end - 4.0);
         end = label.left() - 8.0;
         divider(ui, rect, end - 4.0);
@@ -59,7 +95,11 @@ pub(super) fn status(ui: &mut Ui, rect: Rect, pointer: Option<(Pos2, Lie)>, cont
 }
 
 fn divider(ui: &Ui, rect: Rect, x: f32) {
-    widgets::hairline(ui, pos2(x.round(), rect.top() + 7.0), pos2(x.round(), rect.bottom() - 7.0));
+    widgets::hairline(
+        ui,
+        pos2(x.round(), rect.top() + 7.0),
+        pos2(x.round(), rect.bottom() - 7.0),
+    );
 }
 
 /// At the left: why a file did not open, else what is under the pointer or selected.
@@ -67,26 +107,66 @@ fn said(ui: &Ui, rect: Rect, y: f32, end: f32, context: &Context<'_>) {
     let c = colours(ui);
     let left = rect.left() + MARGIN;
     if let Some(refused) = &context.document.refused {
-        icon::paint(ui.painter(), Icon::Fault, pos2(left + 8.0, y), 16.0, c.fault);
+        icon::paint(
+            ui.painter(),
+            Icon::Fault,
+            pos2(left + 8.0, y),
+            16.0,
+            c.fault,
+        );
         let words = text::cut_end(ui.painter(), refused, Type::Body, end - left - 24.0);
-        text::put(ui.painter(), pos2(left + 24.0, y), Align::LEFT, &words, Type::Body, c.fault);
+        text::put(
+            ui.painter(),
+            pos2(left + 24.0, y),
+            Align::LEFT,
+            &words,
+            Type::Body,
+            c.fault,
+        );
         return;
     }
-    let object = context.view.hovered.as_ref().or(context.view.selected.as_ref());
+    let object = context
+        .view
+        .hovered
+        .as_ref()
+        .or(context.view.selected.as_ref());
     let (head, rest) = match object {
-        Some(object) => (object.to_string(), facts::coordinates(object, context).unwrap_or_default()),
-        None if context.document.is_empty() => (String::new(), "Open a scene, or drop its file on this window.".to_owned()),
-        None => (String::new(), "Click an object to select it, drag on bare paper to move the sheet.".to_owned()),
+        Some(object) => (
+            object.to_string(),
+            facts::coordinates(object, context).unwrap_or_default(),
+        ),
+        None if context.document.is_empty() => (
+            String::new(),
+            "Open a scene, or drop its file on this window.".to_owned(),
+        ),
+        None => (
+            String::new(),
+            "Click an object to select it, drag on bare paper to move the sheet.".to_owned(),
+        ),
     };
     let mut x = left;
     if !head.is_empty() {
         let head = text::cut_end(ui.painter(), &head, Type::BodyStrong, end - left);
-        let place = text::put(ui.painter(), pos2(x, y), Align::LEFT, &head, Type::BodyStrong, c.text);
+        let place = text::put(
+            ui.painter(),
+            pos2(x, y),
+            Align::LEFT,
+            &head,
+            Type::BodyStrong,
+            c.text,
+        );
         x = place.right() + 12.0;
     }
     if end - x > 40.0 {
         let rest = text::cut_end(ui.painter(), &rest, Type::Body, end - x);
-        text::put(ui.painter(), pos2(x, y), Align::LEFT, &rest, Type::Body, c.quiet);
+        text::put(
+            ui.painter(),
+            pos2(x, y),
+            Align::LEFT,
+            &rest,
+            Type::Body,
+            c.quiet,
+        );
     }
 }
 
@@ -108,22 +188,51 @@ fn balance(context: &Context<'_>) -> Balance {
             1 => format!("1 finding: {}", first.object),
             count => format!("{count} findings, first {}", first.object),
         };
-        let alarm = faults.iter().any(|f| f.weight == crate::fault::Weight::Fault);
-        return Balance { words, alarm, icon: Some(Icon::Fault), goes: Some(first.object.clone()) };
+        let alarm = faults
+            .iter()
+            .any(|f| f.weight == crate::fault::Weight::Fault);
+        return Balance {
+            words,
+            alarm,
+            icon: Some(Icon::Fault),
+            goes: Some(first.object.clone()),
+        };
     }
     let Some(ledger) = &context.shown.ledger else {
-        return Balance { words: String::new(), alarm: false, icon: None, goes: None };
+        return Balance {
+            words: String::new(),
+            alarm: false,
+            icon: None,
+            goes: None,
+        };
     };
     let off = ledger.collisions.iter().find(|c| !c.balanced);
     if let Some(collision) = off {
         let d = &collision.difference;
-        let parts = [("E", d.energy, ""), ("px", d.momentum[0], "/c"), ("py", d.momentum[1], "/c")];
-        let worst = parts.into_iter().max_by(|a, b| a.1.abs().total_cmp(&b.1.abs()));
+        let parts = [
+            ("E", d.energy, ""),
+            ("px", d.momentum[0], "/c"),
+            ("py", d.momentum[1], "/c"),
+        ];
+        let worst = parts
+            .into_iter()
+            .max_by(|a, b| a.1.abs().total_cmp(&b.1.abs()));
         let (name, by, per) = worst.unwrap_or(("E", 0.0, ""));
         let by = grouped(&significant(by.abs(), 3));
-        let words = format!("{} does not balance: {name} off by {by} {}{per}", collision.name, ledger.units.energy);
-        let goes = Some(ObjectId::new(crate::fault::Kind::Collision, &collision.name));
-        return Balance { words, alarm: true, icon: Some(Icon::Fault), goes };
+        let words = format!(
+            "{} does not balance: {name} off by {by} {}{per}",
+            collision.name, ledger.units.energy
+        );
+        let goes = Some(ObjectId::new(
+            crate::fault::Kind::Collision,
+            &collision.name,
+        ));
+        return Balance {
+            words,
+            alarm: true,
+            icon: Some(Icon::Fault),
+            goes,
+        };
     }
     let words = match ledger.collisions.len() {
         0 => "no collisions".to_owned(),
@@ -131,13 +240,22 @@ fn balance(context: &Context<'_>) -> Balance {
         count => format!("{count} collisions, all balanced"),
     };
     let icon = (!ledger.collisions.is_empty()).then_some(Icon::Sound);
-    Balance { words, alarm: false, icon, goes: None }
+    Balance {
+        words,
+        alarm: false,
+        icon,
+        goes: None,
+    }
 }
 
 /// Where the pointer is, in the frame of the panel under it.
 fn under(context: &Context<'_>, lie: &Lie, pointer: Pos2) -> Option<(String, String)> {
     let mm = lie.mm(pointer);
-    let panel = context.shown.panels().iter().find(|p| p.field.contains(mm))?;
+    let panel = context
+        .shown
+        .panels()
+        .iter()
+        .find(|p| p.field.contains(mm))?;
     let at = panel.from_plane.inverse() * mm;
     if !at.x.is_finite() || !at.y.is_finite() {
         return None;
@@ -154,11 +272,19 @@ fn under(context: &Context<'_>, lie: &Lie, pointer: Pos2) -> Option<(String, Str
         Kind::Spacetime => {
             let x = at.x * units.light_way;
             let (time, length) = (&units.time.symbol, &units.length.symbol);
-            format!("t{prime} {} {time}, x{prime} {} {length}", number(at.y), number(x))
+            format!(
+                "t{prime} {} {time}, x{prime} {} {length}",
+                number(at.y),
+                number(x)
+            )
         }
         Kind::EnergyMomentum => {
             let energy = &units.energy.symbol;
-            format!("E{prime} {} {energy}, px{prime} {} {energy}/c", number(at.y), number(at.x))
+            format!(
+                "E{prime} {} {energy}, px{prime} {} {energy}/c",
+                number(at.y),
+                number(at.x)
+            )
         }
     };
     Some((frame, place))

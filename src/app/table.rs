@@ -2,7 +2,10 @@
 
 mod columns;
 
-use egui::{Align, Pos2, Rect, Response, Role, ScrollArea, Sense, Stroke, Ui, UiBuilder, WidgetInfo, pos2, vec2};
+use egui::{
+    Align, Pos2, Rect, Response, Role, ScrollArea, Sense, Stroke, Ui, UiBuilder, WidgetInfo, pos2,
+    vec2,
+};
 
 use super::command::{Command, Wishes};
 use super::context::Context;
@@ -22,7 +25,13 @@ const HEAD: f32 = 22.0;
 const SIGNS: f32 = 900.0;
 
 /// Paints the ledger.
-pub(super) fn ledger(ui: &mut Ui, rect: Rect, row: f32, context: &Context<'_>, wishes: &mut Wishes) {
+pub(super) fn ledger(
+    ui: &mut Ui,
+    rect: Rect,
+    row: f32,
+    context: &Context<'_>,
+    wishes: &mut Wishes,
+) {
     let c = colours(ui);
     widgets::ground(ui, c.panel);
     widgets::hairline(ui, rect.left_top(), rect.right_top());
@@ -43,8 +52,12 @@ fn bar(ui: &mut Ui, rect: Rect, context: &Context<'_>, wishes: &mut Wishes) {
     let c = colours(ui);
     let top = rect.top() + 8.0;
     let items: Vec<(&str, bool)> = TableKind::ALL.iter().map(|k| (k.word(), true)).collect();
-    let chosen = TableKind::ALL.iter().position(|k| *k == context.view.table).unwrap_or(0);
-    let (pressed, end) = widgets::segment(ui, pos2(rect.left() + MARGIN_SMALL, top), &items, chosen);
+    let chosen = TableKind::ALL
+        .iter()
+        .position(|k| *k == context.view.table)
+        .unwrap_or(0);
+    let (pressed, end) =
+        widgets::segment(ui, pos2(rect.left() + MARGIN_SMALL, top), &items, chosen);
     if let Some(i) = pressed {
         wishes.push(Command::Table(TableKind::ALL[i]));
     }
@@ -54,7 +67,14 @@ fn bar(ui: &mut Ui, rect: Rect, context: &Context<'_>, wishes: &mut Wishes) {
     let y = top + 12.0;
     conserved(ui, pos2(end + 18.0, y), true);
     let at = pos2(end + 28.0, y);
-    text::put(ui.painter(), at, Align::LEFT, "conserved", Type::Body, c.quiet);
+    text::put(
+        ui.painter(),
+        at,
+        Align::LEFT,
+        "conserved",
+        Type::Body,
+        c.quiet,
+    );
 }
 
 /// Two upright strokes, equal down a column; a slanted one through them where it is not so.
@@ -77,13 +97,22 @@ fn none(ui: &Ui, rect: Rect, kind: TableKind, context: &Context<'_>) {
     let word = kind.word().to_lowercase();
     let y = rect.top() + 34.0;
     let first = format!("No {word} yet.");
-    text::put(ui.painter(), pos2(rect.left(), y), Align::LEFT, &first, Type::Body, c.text);
+    text::put(
+        ui.painter(),
+        pos2(rect.left(), y),
+        Align::LEFT,
+        &first,
+        Type::Body,
+        c.text,
+    );
     let second = match kind {
         TableKind::Events => {
             "Each event you place gets a row of numbers here, ready to quote or to copy as text, CSV or LaTeX."
         }
         TableKind::Intervals => "Two events give an interval, the same for every observer.",
-        TableKind::Collisions => "A collision's sums before and after stand here next to each other.",
+        TableKind::Collisions => {
+            "A collision's sums before and after stand here next to each other."
+        }
         TableKind::Particles => "Energy, momentum, mass and speed of each particle stand here.",
         TableKind::Lines => "Speed, rapidity and proper time of each line stand here.",
     };
@@ -92,32 +121,55 @@ fn none(ui: &Ui, rect: Rect, kind: TableKind, context: &Context<'_>) {
     } else {
         "The scene has no event that could be found."
     };
-    text::put(ui.painter(), pos2(rect.left(), y + 22.0), Align::LEFT, second, Type::Body, c.quiet);
+    text::put(
+        ui.painter(),
+        pos2(rect.left(), y + 22.0),
+        Align::LEFT,
+        second,
+        Type::Body,
+        c.quiet,
+    );
 }
 
-fn numbers(ui: &mut Ui, rect: Rect, height: f32, table: &Table, context: &Context<'_>, wishes: &mut Wishes) {
+fn numbers(
+    ui: &mut Ui,
+    rect: Rect,
+    height: f32,
+    table: &Table,
+    context: &Context<'_>,
+    wishes: &mut Wishes,
+) {
     let lost = lost(table, context);
     let columns = Columns::new(table, rect.width(), |words, strong| {
-        text::width(ui.painter(), words, if strong { Type::BodyStrong } else { Type::Body })
+        text::width(
+            ui.painter(),
+            words,
+            if strong { Type::BodyStrong } else { Type::Body },
+        )
     });
     heads(ui, rect, table, &columns, context);
-    let below = Rect::from_min_max(pos2(rect.left() - 8.0, rect.top() + 2.0 * HEAD), rect.max + vec2(8.0, 0.0));
+    let below = Rect::from_min_max(
+        pos2(rect.left() - 8.0, rect.top() + 2.0 * HEAD),
+        rect.max + vec2(8.0, 0.0),
+    );
     let mut child = ui.new_child(UiBuilder::new().max_rect(below).id_salt("rows"));
     child.shrink_clip_rect(below);
-    ScrollArea::both().auto_shrink(false).show(&mut child, |ui| {
-        ui.spacing_mut().item_spacing.y = 0.0;
-        for (i, row) in table.rows.iter().enumerate() {
-            let response = line(ui, height, row, &columns, context, wishes);
-            let place = response.rect;
-            if row.is_sum {
-                explain(&response, row, table);
+    ScrollArea::both()
+        .auto_shrink(false)
+        .show(&mut child, |ui| {
+            ui.spacing_mut().item_spacing.y = 0.0;
+            for (i, row) in table.rows.iter().enumerate() {
+                let response = line(ui, height, row, &columns, context, wishes);
+                let place = response.rect;
+                if row.is_sum {
+                    explain(&response, row, table);
+                }
+                signs(ui, table, i, place, &columns, context);
             }
-            signs(ui, table, i, place, &columns, context);
-        }
-        for object in &lost {
-            faulty(ui, height, object, context, wishes);
-        }
-    });
+            for object in &lost {
+                faulty(ui, height, object, context, wishes);
+            }
+        });
 }
 
 /// Objects of a table's kind that have no numbers.
@@ -137,16 +189,45 @@ fn lost(table: &Table, context: &Context<'_>) -> Vec<ObjectId> {
 fn heads(ui: &Ui, rect: Rect, table: &Table, columns: &Columns, context: &Context<'_>) {
     let c = colours(ui);
     let painter = ui.painter().with_clip_rect(rect.expand2(vec2(8.0, 6.0)));
-    let (from, to) = (rect.left() + columns.numbers_from(), rect.left() + columns.end());
+    let (from, to) = (
+        rect.left() + columns.numbers_from(),
+        rect.left() + columns.end(),
+    );
     let top = rect.top() + 1.0;
-    painter.rect_filled(Rect::from_min_max(pos2(from, top - 2.0), pos2(to, top)), 0, c.accent);
+    painter.rect_filled(
+        Rect::from_min_max(pos2(from, top - 2.0), pos2(to, top)),
+        0,
+        c.accent,
+    );
     let y = rect.top() + HEAD / 2.0 + 1.0;
     let name = context.frame_name();
-    let name = text::put(&painter, pos2(to, y), Align::RIGHT, &name, Type::BodyStrong, c.text);
-    let is_base = context.shown.ledger.as_ref().and_then(|l| l.frame.name.as_deref())
+    let name = text::put(
+        &painter,
+        pos2(to, y),
+        Align::RIGHT,
+        &name,
+        Type::BodyStrong,
+        c.text,
+    );
+    let is_base = context
+        .shown
+        .ledger
+        .as_ref()
+        .and_then(|l| l.frame.name.as_deref())
         == Some(&*context.document.opened.solved.base);
-    let part = if is_base { "base frame" } else { "viewing frame" };
-    text::put(&painter, pos2(name.left() - 8.0, y), Align::RIGHT, part, Type::Caption, c.quiet);
+    let part = if is_base {
+        "base frame"
+    } else {
+        "viewing frame"
+    };
+    text::put(
+        &painter,
+        pos2(name.left() - 8.0, y),
+        Align::RIGHT,
+        part,
+        Type::Caption,
+        c.quiet,
+    );
     let y = rect.top() + HEAD * 1.5;
     for (column, place) in table.columns.iter().zip(&columns.places) {
         let (align, x) = match place.align {
@@ -154,10 +235,20 @@ fn heads(ui: &Ui, rect: Rect, table: &Table, columns: &Columns, context: &Contex
             crate::ledger::Align::Right => (Align::RIGHT, place.right),
         };
         let words = head(column);
-        text::put(&painter, pos2(rect.left() + x, y), align, &words, Type::Caption, c.quiet);
+        text::put(
+            &painter,
+            pos2(rect.left() + x, y),
+            align,
+            &words,
+            Type::Caption,
+            c.quiet,
+        );
     }
     let rule = rect.top() + 2.0 * HEAD - 0.5;
-    painter.line_segment([pos2(rect.left(), rule), pos2(rect.right(), rule)], Stroke::new(1.0, c.rule));
+    painter.line_segment(
+        [pos2(rect.left(), rule), pos2(rect.right(), rule)],
+        Stroke::new(1.0, c.rule),
+    );
 }
 
 fn line(
@@ -183,22 +274,43 @@ fn line(
     let left = rect.left() + 8.0;
     if row.rule_above {
         let y = rect.top() - 0.5;
-        let ends = [pos2(left, y), pos2(left + columns.end().max(width - 16.0), y)];
+        let ends = [
+            pos2(left, y),
+            pos2(left + columns.end().max(width - 16.0), y),
+        ];
         ui.painter().line_segment(ends, Stroke::new(1.0, c.rule));
     }
     for (i, (cell, place)) in row.cells.iter().zip(&columns.places).enumerate() {
         let tag = i == 0 && columns.words > 1 && !row.is_sum;
         let strong = row.is_sum || (selected && i + 1 == columns.words);
-        let (set, ink) = if tag { (Type::Body, c.quiet) } else { (Type::body(strong), c.text) };
+        let (set, ink) = if tag {
+            (Type::Body, c.quiet)
+        } else {
+            (Type::body(strong), c.text)
+        };
         match place.align {
             crate::ledger::Align::Left => {
                 let cut = text::cut_end(ui.painter(), &cell.text, set, place.right - place.left);
                 let at = pos2(left + place.left, rect.center().y);
-                text::put(ui.painter(), at, Align::LEFT, &cell.text.replacen(&cell.text, &cut, 1), set, ink);
+                text::put(
+                    ui.painter(),
+                    at,
+                    Align::LEFT,
+                    &cell.text.replacen(&cell.text, &cut, 1),
+                    set,
+                    ink,
+                );
             }
             crate::ledger::Align::Right => {
                 let at = pos2(left + place.right, rect.center().y);
-                text::put(ui.painter(), at, Align::RIGHT, &grouped(&cell.text), set, ink);
+                text::put(
+                    ui.painter(),
+                    at,
+                    Align::RIGHT,
+                    &grouped(&cell.text),
+                    set,
+                    ink,
+                );
             }
         }
     }
@@ -220,7 +332,7 @@ fn explain(response: &Response, row: &Row, table: &Table) {
         .notes
         .iter()
         .filter_map(|note| note.strip_prefix(&head))
-        .map(super::list::capital)
+        .map(super::findings::capital)
         .collect();
     if !notes.is_empty() {
         response.clone().on_hover_text(notes.join("\n"));
@@ -228,7 +340,14 @@ fn explain(response: &Response, row: &Row, table: &Table) {
 }
 
 /// Between the two sums: what is the same before and after.
-fn signs(ui: &Ui, table: &Table, row: usize, place: Rect, columns: &Columns, context: &Context<'_>) {
+fn signs(
+    ui: &Ui,
+    table: &Table,
+    row: usize,
+    place: Rect,
+    columns: &Columns,
+    context: &Context<'_>,
+) {
     if table.name != "collisions" || row == 0 {
         return;
     }
@@ -251,14 +370,22 @@ fn signs(ui: &Ui, table: &Table, row: usize, place: Rect, columns: &Columns, con
             // The mass of the sum is kept when E, px and py are; the sum of the masses need not be.
             "mass of sum" => {
                 let equal = collision.balanced;
-                conserved(ui, pos2(place.left() + 8.0 + at.right + 9.0, place.top()), equal);
+                conserved(
+                    ui,
+                    pos2(place.left() + 8.0 + at.right + 9.0, place.top()),
+                    equal,
+                );
                 continue;
             }
             _ => continue,
         };
         if before.cells.get(i).is_some() {
             let equal = off.abs() <= collision.tolerance;
-            conserved(ui, pos2(place.left() + 8.0 + at.right + 9.0, place.top()), equal);
+            conserved(
+                ui,
+                pos2(place.left() + 8.0 + at.right + 9.0, place.top()),
+                equal,
+            );
         }
     }
 }
@@ -266,13 +393,18 @@ fn signs(ui: &Ui, table: &Table, row: usize, place: Rect, columns: &Columns, con
 /// A row without numbers: its name, and one sentence.
 fn faulty(ui: &mut Ui, height: f32, object: &ObjectId, context: &Context<'_>, wishes: &mut Wishes) {
     let c = colours(ui);
-    let (rect, response) = ui.allocate_exact_size(vec2(ui.available_width(), height), Sense::click());
-    let root = context.shown.faults_of(object).find(|f| f.weight == Weight::Fault);
+    let (rect, response) =
+        ui.allocate_exact_size(vec2(ui.available_width(), height), Sense::click());
+    let root = context
+        .shown
+        .faults_of(object)
+        .find(|f| f.weight == Weight::Fault);
     let words = match root {
-        Some(fault) => super::list::capital(&fault.what),
+        Some(fault) => super::findings::capital(&fault.what),
         None => "hangs on something that is to be mended first".to_owned(),
     };
-    response.widget_info(|| WidgetInfo::labeled(Role::Row, true, format!("{} {words}", object.name)));
+    response
+        .widget_info(|| WidgetInfo::labeled(Role::Row, true, format!("{} {words}", object.name)));
     if context.view.selected.as_ref() == Some(object) {
         widgets::selected_row(ui, rect);
     } else if response.hovered() {
@@ -281,11 +413,31 @@ fn faulty(ui: &mut Ui, height: f32, object: &ObjectId, context: &Context<'_>, wi
     let y = rect.center().y;
     let ink = if root.is_some() { c.fault } else { c.quiet };
     let at = pos2(rect.left() + 8.0, y);
-    let name = text::put(ui.painter(), at, Align::LEFT, &object.name, Type::BodyStrong, ink);
-    icon::paint(ui.painter(), Icon::Fault, pos2(name.right() + 18.0, y), 15.0, ink);
+    let name = text::put(
+        ui.painter(),
+        at,
+        Align::LEFT,
+        &object.name,
+        Type::BodyStrong,
+        ink,
+    );
+    icon::paint(
+        ui.painter(),
+        Icon::Fault,
+        pos2(name.right() + 18.0, y),
+        15.0,
+        ink,
+    );
     let room = rect.right() - name.right() - 44.0;
     let words = text::cut_end(ui.painter(), &words, Type::Body, room);
-    text::put(ui.painter(), pos2(name.right() + 34.0, y), Align::LEFT, &words, Type::Body, ink);
+    text::put(
+        ui.painter(),
+        pos2(name.right() + 34.0, y),
+        Align::LEFT,
+        &words,
+        Type::Body,
+        ink,
+    );
     if response.clicked() {
         wishes.push(Command::Select(Some(object.clone())));
     }

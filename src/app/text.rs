@@ -77,25 +77,36 @@ fn across_sign(painter: &Painter, at: Pos2, size: f32, colour: Color32) {
     let middle = f32::midpoint(left, right).floor() + 0.5;
     let foot = at.y - 0.5;
     painter.line_segment([pos2(left, foot), pos2(right, foot)], stroke);
-    painter.line_segment([pos2(middle, foot), pos2(middle, foot - size * 0.7)], stroke);
+    painter.line_segment(
+        [pos2(middle, foot), pos2(middle, foot - size * 0.7)],
+        stroke,
+    );
 }
 
 /// A text cut at its end to fit a width.
 pub(super) fn cut_end(painter: &Painter, text: &str, set: Type, room: f32) -> String {
-    cut(text, |short| width(painter, short, set) <= room, |kept| {
-        let head: String = text.chars().take(kept).collect();
-        format!("{}…", head.trim_end())
-    })
+    cut(
+        text,
+        |short| width(painter, short, set) <= room,
+        |kept| {
+            let head: String = text.chars().take(kept).collect();
+            format!("{}…", head.trim_end())
+        },
+    )
 }
 
 /// A text cut in its middle to fit a width.
 pub(super) fn cut_middle(painter: &Painter, text: &str, set: Type, room: f32) -> String {
     let count = text.chars().count();
-    cut(text, |short| width(painter, short, set) <= room, |kept| {
-        let head: String = text.chars().take(kept.div_ceil(2)).collect();
-        let tail: String = text.chars().skip(count - kept / 2).collect();
-        format!("{head}…{tail}")
-    })
+    cut(
+        text,
+        |short| width(painter, short, set) <= room,
+        |kept| {
+            let head: String = text.chars().take(kept.div_ceil(2)).collect();
+            let tail: String = text.chars().skip(count - kept / 2).collect();
+            format!("{head}…{tail}")
+        },
+    )
 }
 
 fn cut(text: &str, fits: impl Fn(&str) -> bool, shorten: impl Fn(usize) -> String) -> String {

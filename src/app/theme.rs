@@ -108,8 +108,6 @@ pub(crate) const MARGIN_SMALL: f32 = 12.0;
 pub(crate) const CONTROL: f32 = 24.0;
 /// Radius of controls and rows.
 pub(crate) const RADIUS: u8 = 4;
-/// Gap between fields.
-pub(crate) const FIELD_GAP: f32 = 6.0;
 /// Stroke of focus and panel marks.
 pub(crate) const FOCUS: f32 = 2.0;
 
@@ -141,7 +139,14 @@ impl Type {
             Self::Caption => (12.0, false),
             Self::CaptionStrong => (12.0, true),
         };
-        FontId::new(size, if strong { semibold() } else { FontFamily::Proportional })
+        FontId::new(
+            size,
+            if strong {
+                semibold()
+            } else {
+                FontFamily::Proportional
+            },
+        )
     }
 
     /// Body or its strong form.
@@ -151,7 +156,11 @@ impl Type {
 
     /// Caption or its strong form.
     pub(crate) fn caption(strong: bool) -> Self {
-        if strong { Self::CaptionStrong } else { Self::Caption }
+        if strong {
+            Self::CaptionStrong
+        } else {
+            Self::Caption
+        }
     }
 }
 

@@ -1,8 +1,8 @@
 //! The desk's controls, painted by its own rules at a given place. Each has an accessible name.
 
 use egui::{
-    Align, Color32, CornerRadius, Id, Key, Popup, PopupCloseBehavior, Rect, Response, Role, Sense, Stroke,
-    StrokeKind, TextEdit, Ui, WidgetInfo, pos2, vec2,
+    Align, Color32, CornerRadius, Id, Key, Popup, PopupCloseBehavior, Rect, Response, Role, Sense,
+    Stroke, StrokeKind, TextEdit, Ui, WidgetInfo, pos2, vec2,
 };
 
 use super::icon::{self, Icon};
@@ -20,7 +20,8 @@ pub(super) fn focus_ring(ui: &Ui, response: &Response, rect: Rect) {
         let ring = rect.expand(FOCUS + FOCUS / 2.0);
         let stroke = Stroke::new(FOCUS, colours(ui).accent);
         let radius = CornerRadius::same(RADIUS + 2);
-        ui.painter().rect_stroke(ring, radius, stroke, StrokeKind::Middle);
+        ui.painter()
+            .rect_stroke(ring, radius, stroke, StrokeKind::Middle);
     }
 }
 
@@ -29,26 +30,24 @@ fn keyboard_leads(ui: &Ui) -> bool {
     !ui.input(|i| i.pointer.any_down())
 }
 
-/// How a button looks.
-#[derive(Clone, Copy, Debug, PartialEq, Eq)]
-pub(super) enum Look {
-    /// Edged.
-    Plain,
-    /// Filled with the accent.
-    Main,
-}
-
 /// A button with a word on it.
-pub(super) fn button(ui: &mut Ui, rect: Rect, words: &str, enabled: bool, look: Look) -> Response {
+pub(super) fn button(ui: &mut Ui, rect: Rect, words: &str, enabled: bool) -> Response {
     let response = press(ui, rect, words, enabled);
     let c = colours(ui);
-    let (fill, ink, edge) = match look {
-        _ if !enabled => (c.panel, c.disabled, c.hairline),
-        Look::Main => (c.accent, c.on_accent, c.accent),
-        Look::Plain => (state_fill(&response, c), c.text, c.edge),
+    let (fill, ink, edge) = if enabled {
+        (state_fill(&response, c), c.text, c.edge)
+    } else {
+        (c.panel, c.disabled, c.hairline)
     };
     frame(ui, rect, fill, edge, 1.0);
-    text::put(ui.painter(), rect.center(), Align::Center, words, Type::Body, ink);
+    text::put(
+        ui.painter(),
+        rect.center(),
+        Align::Center,
+        words,
+        Type::Body,
+        ink,
+    );
     focus_ring(ui, &response, rect);
     response
 }
@@ -65,7 +64,11 @@ pub(super) fn icon_button(ui: &mut Ui, rect: Rect, icon: Icon, words: &str) -> R
 
 /// Senses a press at a place; a disabled one senses nothing.
 pub(super) fn press(ui: &mut Ui, rect: Rect, words: &str, enabled: bool) -> Response {
-    let sense = if enabled { Sense::click() } else { Sense::hover() };
+    let sense = if enabled {
+        Sense::click()
+    } else {
+        Sense::hover()
+    };
     let response = ui.interact(rect, ui.scope_id().with(("press", words)), sense);
     response.widget_info(|| WidgetInfo::labeled(Role::Button, enabled, words));
     response
@@ -85,8 +88,13 @@ pub(super) fn state_fill(response: &Response, c: &Palette) -> Color32 {
 /// A box with an edge inside it.
 pub(super) fn frame(ui: &Ui, rect: Rect, fill: Color32, edge: Color32, width: f32) {
     let radius = CornerRadius::same(RADIUS);
-    ui.painter()
-        .rect(rect, radius, fill, Stroke::new(width, edge), StrokeKind::Inside);
+    ui.painter().rect(
+        rect,
+        radius,
+        fill,
+        Stroke::new(width, edge),
+        StrokeKind::Inside,
+    );
 }
 
 /// A row of choices of which one holds. Gives the one that was pressed and the right end.
@@ -103,7 +111,8 @@ pub(super) fn segment(
         let across = text::width(ui.painter(), words, Type::body(true)).ceil() + 20.0;
         let rect = Rect::from_min_size(pos2(x, left_top.y), vec2(across, CONTROL));
         let response = press(ui, rect, words, *enabled);
-        response.widget_info(|| WidgetInfo::selected(Role::RadioButton, *enabled, i == chosen, *words));
+        response
+            .widget_info(|| WidgetInfo::selected(Role::RadioButton, *enabled, i == chosen, *words));
         if response.clicked() {
             pressed = Some(i);
         }
@@ -118,10 +127,18 @@ pub(super) fn segment(
         if strong {
             frame(ui, *rect, c.wash, c.accent, 1.5);
         } else if response.hovered() && items[i].1 {
-            ui.painter().rect_filled(rect.shrink(1.0), CornerRadius::same(RADIUS), c.hover);
+            ui.painter()
+                .rect_filled(rect.shrink(1.0), CornerRadius::same(RADIUS), c.hover);
         }
         let ink = if items[i].1 { c.text } else { c.disabled };
-        text::put(ui.painter(), rect.center(), Align::Center, items[i].0, Type::body(strong), ink);
+        text::put(
+            ui.painter(),
+            rect.center(),
+            Align::Center,
+            items[i].0,
+            Type::body(strong),
+            ink,
+        );
         focus_ring(ui, response, *rect);
     }
     (pressed, x)
@@ -142,11 +159,24 @@ pub(super) fn chooser(
         info
     });
     let c = colours(ui);
-    frame(ui, rect, if response.hovered() { c.hover } else { c.field }, c.edge, 1.0);
+    frame(
+        ui,
+        rect,
+        if response.hovered() { c.hover } else { c.field },
+        c.edge,
+        1.0,
+    );
     let room = rect.width() - 34.0;
     let shown = text::cut_end(ui.painter(), chosen, Type::BodyStrong, room);
     let at = pos2(rect.left() + 9.0, rect.center().y);
-    text::put(ui.painter(), at, Align::LEFT, &shown, Type::BodyStrong, c.text);
+    text::put(
+        ui.painter(),
+        at,
+        Align::LEFT,
+        &shown,
+        Type::BodyStrong,
+        c.text,
+    );
     let arrow = pos2(rect.right() - 14.0, rect.center().y);
     icon::paint(ui.painter(), Icon::Down, arrow, 14.0, c.text);
     focus_ring(ui, &response, rect);
@@ -155,14 +185,16 @@ pub(super) fn chooser(
         .width(rect.width())
         .close_behavior(PopupCloseBehavior::CloseOnClick)
         .show(|ui| {
-            egui::ScrollArea::vertical().max_height(320.0).show(ui, |ui| {
-                for (i, entry) in entries.iter().enumerate() {
-                    let label = entry.replace(super::rail::ACROSS, "across");
-                    if ui.selectable_label(entry == chosen, label).clicked() {
-                        picked = Some(i);
+            egui::ScrollArea::vertical()
+                .max_height(320.0)
+                .show(ui, |ui| {
+                    for (i, entry) in entries.iter().enumerate() {
+                        let label = entry.replace(super::rail::ACROSS, "across");
+                        if ui.selectable_label(entry == chosen, label).clicked() {
+                            picked = Some(i);
+                        }
                     }
-                }
-            });
+                });
         });
     picked
 }
@@ -189,7 +221,11 @@ pub(super) fn field(
 ) -> (Response, Option<Entered>) {
     let c = colours(ui);
     let id = field_id(name);
-    let (edge, width) = if at_fault { (c.fault, 2.0) } else { (c.edge, 1.0) };
+    let (edge, width) = if at_fault {
+        (c.fault, 2.0)
+    } else {
+        (c.edge, 1.0)
+    };
     frame(ui, rect, c.field, edge, width);
     let mut text = typing.unwrap_or(value).to_owned();
     let before = text.clone();
@@ -238,24 +274,38 @@ fn select_all(ui: &Ui, id: Id, text: &str) {
 /// A selected row: wash, with an accent bar at its left end.
 pub(super) fn selected_row(ui: &Ui, rect: Rect) {
     let c = colours(ui);
-    ui.painter().rect_filled(rect, CornerRadius::same(RADIUS), c.wash);
+    ui.painter()
+        .rect_filled(rect, CornerRadius::same(RADIUS), c.wash);
     let bar = Rect::from_min_max(
         rect.left_top() + vec2(0.0, 4.0),
         pos2(rect.left() + 3.0, rect.bottom() - 4.0),
     );
-    ui.painter().rect_filled(bar, CornerRadius::same(1), c.accent);
+    ui.painter()
+        .rect_filled(bar, CornerRadius::same(1), c.accent);
 }
 
 /// Tells a screen reader whether a node is selected.
 pub(super) fn mark_selected(ui: &Ui, id: Id, selected: bool) {
-    ui.ctx().accesskit_node_builder(id, |node| node.set_selected(selected));
+    ui.ctx()
+        .accesskit_node_builder(id, |node| node.set_selected(selected));
 }
 
 /// A line that divides, on whole points.
 pub(super) fn hairline(ui: &Ui, from: egui::Pos2, to: egui::Pos2) {
-    let shift = if from.y == to.y { vec2(0.0, 0.5) } else { vec2(0.5, 0.0) };
+    let shift = if from.y == to.y {
+        vec2(0.0, 0.5)
+    } else {
+        vec2(0.5, 0.0)
+    };
     let stroke = Stroke::new(1.0, colours(ui).hairline);
-    ui.painter().line_segment([from + shift, to + shift], stroke);
+    ui.painter()
+        .line_segment([from + shift, to + shift], stroke);
+}
+
+/// A sheet over the desk.
+pub(super) fn modal(ui: &Ui, name: &str) -> egui::Modal {
+    let frame = egui::Frame::popup(ui.style()).inner_margin(theme::MARGIN);
+    egui::Modal::new(Id::unique(name)).frame(frame)
 }
 
 /// A child ui that fills a rectangle and paints nowhere else.
@@ -272,7 +322,8 @@ pub(super) fn region(ui: &mut Ui, name: &str, rect: Rect) -> Ui {
 
 /// Fills a region with the panel's colour.
 pub(super) fn ground(ui: &Ui, colour: Color32) {
-    ui.painter().rect_filled(ui.max_rect(), CornerRadius::ZERO, colour);
+    ui.painter()
+        .rect_filled(ui.max_rect(), CornerRadius::ZERO, colour);
 }
 
 /// Everything moves at once when animations are off.

@@ -306,7 +306,7 @@ impl Momentum {
     }
 
     /// As a moving frame has it. The mass is kept as it is; along x the rapidity shifts and py stays. In another
-    /// direction each component is right to `16 EPS` of E and `e^rapidity` of the frame.
+    /// direction each component is right to `32 EPS` of E times `e^rapidity` of the frame.
     ///
     /// # Errors
     /// `Geometry` beyond the range.
@@ -424,10 +424,14 @@ impl Momentum {
     }
 
     fn checked(self) -> Result<Self, DynamicsError> {
-        GeometryError::check(
-            "an energy-momentum vector",
-            [self.mass(), self.py(), self.p_minus(), self.p_plus()],
-        )?;
+        let shown = [
+            self.mass(),
+            self.px(),
+            self.py(),
+            self.p_minus(),
+            self.p_plus(),
+        ];
+        GeometryError::check("an energy-momentum vector", shown)?;
         if self.gamma().is_some_and(|gamma| gamma > num::LARGEST) {
             return Err(GeometryError::Range { what: "gamma" }.into());
         }

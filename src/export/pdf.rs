@@ -62,7 +62,9 @@ pub fn pdf(sheet: &Sheet, lettering: Lettering) -> Result<Vec<u8>, ExportFault> 
     };
     let area = PageRect::from_ltrb(0.0, 0.0, width, height).map(|area| BBox::new(0, area));
     let mut figure = TagGroup::new(Tag::Figure(Some(words.clone())).with_bbox(area));
-    tagged.into_iter().for_each(|part| figure.push(part));
+    for part in tagged {
+        figure.push(part);
+    }
     let mut tree = TagTree::new().with_lang(Some("en".into()));
     tree.push(figure);
     document.set_tag_tree(tree);
@@ -79,13 +81,26 @@ pub fn pdf(sheet: &Sheet, lettering: Lettering) -> Result<Vec<u8>, ExportFault> 
 }
 
 /// Draws all marks; the pieces of tagged content, in order.
-fn draw(surface: Surface<'_>, sheet: &Sheet, lettering: Lettering) -> Result<Vec<Identifier>, String> {
-    let mut writer = Writer { surface, fonts: BTreeMap::new(), tagged: Vec::new() };
-    for run in sheet.marks.chunk_by(|a, b| is_path(&a.shape) && is_path(&b.shape)) {
+fn draw(
+    surface: Surface<'_>,
+    sheet: &Sheet,
+    lettering: Lettering,
+) -> Result<Vec<Identifier>, String> {
+    let mut writer = Writer {
+        surface,
+        fonts: BTreeMap::new(),
+        tagged: Vec::new(),
+    };
+    for run in sheet
+        .marks
+        .chunk_by(|a, b| is_path(&a.shape) && is_path(&b.shape))
+    {
         let shapes: Vec<&Shape> = run.iter().map(|mark| &mark.shape).collect();
         writer.run(&shapes, lettering == Lettering::Outline)?;
     }
-    let Writer { surface, tagged, .. } = writer;
+    let Writer {
+        surface, tagged, ..
+    } = writer;
     surface.finish();
     Ok(tagged)
 }
@@ -183,6 +198,9 @@ impl Writer<'_> {
     /// Paths that follow one another are one piece of tagged content, a label is one for itself.
     fn run(&mut self, shapes: &[&Shape], outlines: bool) -> Result<(), String> {
         if let [shape @ Shape::Label { label, at, em, ink }] = shapes {
+            if label.pieces.is_empty() {
+                return Ok(());
+            }
             let span = SpanTag::empty()
                 .with_alt_text(Some(&label.words))
                 .with_actual_text(Some(&label.letters));

@@ -1,14 +1,10 @@
 //! PNG with its physical size.
 
-use kurbo::{BezPath, PathEl};
 use png::{BitDepth, ColorType, Encoder, PixelDimensions, SrgbRenderingIntent, Unit};
-use tiny_skia::{
-    FillRule, LineCap, LineJoin, Paint as Brush, Path, PathBuilder, Pixmap, Stroke as Line,
-    StrokeDash, Transform,
-};
+use tiny_skia::Pixmap;
 
-use super::{ExportFault, PROGRAM, check, clean, goes_anywhere};
-use crate::marks::{Cap, Ink, Join, Mark, Paint, Shape, Sheet};
+use super::{ExportFault, PROGRAM, Raster, check, clean};
+use crate::marks::Sheet;
 
 /// Fewest and most dots per inch.
 const DPI: std::ops::RangeInclusive<f64> = 20.0..=2_400.0;
@@ -35,12 +31,8 @@ pub fn png(sheet: &Sheet, dpi: f64) -> Result<Vec<u8>, ExportFault> {
         dots(sheet.width * scale, dpi)?,
         dots(sheet.height * scale, dpi)?,
     );
-    let drawn: Vec<Drawn> = sheet
-        .marks
-        .iter()
-        .filter_map(|mark| drawn(mark, scale))
-        .collect();
-    picture(sheet, &drawn, (width, height), dpi).map_err(|cause| {
+    let raster = Raster::new(sheet, scale);
+    picture(sheet, &raster, (width, height), dpi).map_err(|cause| {
         ExportFault::new(
             format!("the picture cannot be written: {cause}"),
             "ask for fewer dots per inch",
@@ -62,101 +54,9 @@ fn dots(side: f64, dpi: f64) -> Result<u32, ExportFault> {
     Ok(side.round().max(1.0) as u32)
 }
 
-/// A mark in dots.
-struct Drawn {
-    path: Path,
-    ink: Ink,
-    line: Option<Line>,
-    /// First and last row it touches.
-    rows: (f64, f64),
-}
-
-fn drawn(mark: &Mark, scale: f64) -> Option<Drawn> {
-    let ink_box = mark.shape.ink_box();
-    let (ink, line) = match &mark.shape {
-        Shape::Label { ink, .. }
-        | Shape::Path {
-            paint: Paint::Fill(ink),
-            ..
-        } => (*ink, None),
-        Shape::Path {
-            paint: Paint::Stroke(stroke),
-            ..
-        } => {
-            let dash = stroke
-                .dash
-                .iter()
-                .map(|length| narrow(length * scale))
-                .collect();
-            let line = Line {
-                width: narrow(stroke.width * scale),
-                miter_limit: 10.0,
-                line_cap: if stroke.cap == Cap::Round {
-                    LineCap::Round
-                } else {
-                    LineCap::Butt
-                },
-                line_join: if stroke.join == Join::Round {
-                    LineJoin::Round
-                } else {
-                    LineJoin::Miter
-                },
-                dash: StrokeDash::new(dash, 0.0),
-            };
-            (stroke.ink, Some(line))
-        }
-    };
-    // A mitred corner may reach ten half widths out.
-    let margin = line
-        .as_ref()
-        .map_or(1.0, |line| 1.0 + 5.0 * f64::from(line.width));
-    let rows = (ink_box.y0 * scale - margin, ink_box.y1 * scale + margin);
-    Some(Drawn {
-        path: path(&mark.shape.outline(), scale)?,
-        ink,
-        line,
-        rows,
-    })
-}
-
-#[expect(clippy::cast_possible_truncation, reason = "the painter works in f32")]
-fn narrow(value: f64) -> f32 {
-    value as f32
-}
-
-fn path(outline: &BezPath, scale: f64) -> Option<Path> {
-    if !goes_anywhere(outline) {
-        return None;
-    }
-    let mut path = PathBuilder::new();
-    let at = |point: kurbo::Point| (narrow(point.x * scale), narrow(point.y * scale));
-    for element in outline.elements() {
-        match *element {
-            PathEl::MoveTo(end) => {
-                let (x, y) = at(end);
-                path.move_to(x, y);
-            }
-            PathEl::LineTo(end) => {
-                let (x, y) = at(end);
-                path.line_to(x, y);
-            }
-            PathEl::QuadTo(by, end) => {
-                let ((x1, y1), (x, y)) = (at(by), at(end));
-                path.quad_to(x1, y1, x, y);
-            }
-            PathEl::CurveTo(by, and, end) => {
-                let ((x1, y1), (x2, y2), (x, y)) = (at(by), at(and), at(end));
-                path.cubic_to(x1, y1, x2, y2, x, y);
-            }
-            PathEl::ClosePath => path.close(),
-        }
-    }
-    path.finish()
-}
-
 fn picture(
     sheet: &Sheet,
-    drawn: &[Drawn],
+    raster: &Raster,
     (width, height): (u32, u32),
     dpi: f64,
 ) -> Result<Vec<u8>, png::EncodingError> {
@@ -180,7 +80,7 @@ fn picture(
     let mut top = 0;
     while top < height {
         let band = rows.min(height - top);
-        std::io::Write::write_all(&mut stream, &painted(drawn, width, top, band))?;
+        std::io::Write::write_all(&mut stream, &painted(raster, width, top, band))?;
         top += band;
     }
     stream.finish()?;
@@ -203,24 +103,12 @@ fn per_metre(dpi: f64) -> PixelDimensions {
 }
 
 /// Some rows of the picture, three bytes a dot.
-fn painted(drawn: &[Drawn], width: u32, top: u32, rows: u32) -> Vec<u8> {
+fn painted(raster: &Raster, width: u32, top: u32, rows: u32) -> Vec<u8> {
     let Some(mut band) = Pixmap::new(width, rows) else {
         return Vec::new();
     };
     band.fill(tiny_skia::Color::WHITE);
-    let place = Transform::from_translate(0.0, -narrow(f64::from(top)));
-    for mark in drawn {
-        if mark.rows.1 < f64::from(top) || mark.rows.0 > f64::from(top + rows) {
-            continue;
-        }
-        let mut brush = Brush::default();
-        let Ink(red, green, blue) = mark.ink;
-        brush.set_color_rgba8(red, green, blue, 255);
-        match &mark.line {
-            None => band.fill_path(&mark.path, &brush, FillRule::Winding, place, None),
-            Some(line) => band.stroke_path(&mark.path, &brush, line, place, None),
-        }
-    }
+    raster.paint(&mut band, 0, top);
     band.data()
         .chunks_exact(4)
         .flat_map(|dot| dot.iter().take(3).copied())

@@ -2,9 +2,11 @@
 
 use kurbo::{BezPath, PathEl};
 use tiny_skia::{
-    FillRule, LineCap, LineJoin, Paint as Brush, Path, PathBuilder, Pixmap, Stroke as Line, StrokeDash, Transform,
+    FillRule, LineCap, LineJoin, Paint as Brush, Path, PathBuilder, Pixmap, Stroke as Line,
+    StrokeDash, Transform,
 };
 
+use super::goes_anywhere;
 use crate::marks::{Cap, Ink, Join, Mark, Paint, Shape, Sheet};
 
 /// A sheet made ready to be painted at one scale.
@@ -27,7 +29,11 @@ impl Raster {
     /// At some dots to a mm.
     pub fn new(sheet: &Sheet, scale: f64) -> Self {
         Self {
-            marks: sheet.marks.iter().filter_map(|mark| drawn(mark, scale)).collect(),
+            marks: sheet
+                .marks
+                .iter()
+                .filter_map(|mark| drawn(mark, scale))
+                .collect(),
         }
     }
 
@@ -35,7 +41,11 @@ impl Raster {
     pub fn paint(&self, picture: &mut Pixmap, left: u32, top: u32) {
         let place = Transform::from_translate(-narrow(f64::from(left)), -narrow(f64::from(top)));
         let (first, last) = (f64::from(top), f64::from(top) + f64::from(picture.height()));
-        for mark in self.marks.iter().filter(|m| m.rows.1 >= first && m.rows.0 <= last) {
+        for mark in self
+            .marks
+            .iter()
+            .filter(|m| m.rows.1 >= first && m.rows.0 <= last)
+        {
             let mut brush = Brush::default();
             let Ink(red, green, blue) = mark.ink;
             brush.set_color_rgba8(red, green, blue, 255);
@@ -50,9 +60,20 @@ impl Raster {
 fn drawn(mark: &Mark, scale: f64) -> Option<Drawn> {
     let ink_box = mark.shape.ink_box();
     let (ink, line) = match &mark.shape {
-        Shape::Label { ink, .. } | Shape::Path { paint: Paint::Fill(ink), .. } => (*ink, None),
-        Shape::Path { paint: Paint::Stroke(stroke), .. } => {
-            let dash = stroke.dash.iter().map(|length| narrow(length * scale)).collect();
+        Shape::Label { ink, .. }
+        | Shape::Path {
+            paint: Paint::Fill(ink),
+            ..
+        } => (*ink, None),
+        Shape::Path {
+            paint: Paint::Stroke(stroke),
+            ..
+        } => {
+            let dash = stroke
+                .dash
+                .iter()
+                .map(|length| narrow(length * scale))
+                .collect();
             let line = Line {
                 width: narrow(stroke.width * scale),
                 miter_limit: 10.0,
@@ -70,9 +91,16 @@ fn drawn(mark: &Mark, scale: f64) -> Option<Drawn> {
         }
     };
     // A mitred corner may reach ten half widths out.
-    let margin = line.as_ref().map_or(1.0, |line| 1.0 + 5.0 * f64::from(line.width));
+    let margin = line
+        .as_ref()
+        .map_or(1.0, |line| 1.0 + 5.0 * f64::from(line.width));
     let rows = (ink_box.y0 * scale - margin, ink_box.y1 * scale + margin);
-    Some(Drawn { path: raster_path(&mark.shape.outline(), scale)?, ink, line, rows })
+    Some(Drawn {
+        path: raster_path(&mark.shape.outline(), scale)?,
+        ink,
+        line,
+        rows,
+    })
 }
 
 #[expect(clippy::cast_possible_truncation, reason = "the painter works in f32")]
@@ -82,7 +110,7 @@ fn narrow(value: f64) -> f32 {
 
 /// A path in mm as one in dots; none for a path that goes nowhere.
 pub fn raster_path(outline: &BezPath, scale: f64) -> Option<Path> {
-    if outline.elements().len() < 2 {
+    if !goes_anywhere(outline) {
         return None;
     }
     let mut path = PathBuilder::new();

@@ -92,18 +92,20 @@ impl Ids {
         self.used.insert(next.clone());
         next
     }
+    /// The id with the lowest number from one on that nothing has yet; 1 is not written.
     fn free(&self, id: &str, from: usize) -> String {
-        let numbered = |number: usize| {
-            if number == 1 {
+        let mut number = from;
+        loop {
+            let candidate = if number == 1 {
                 id.to_owned()
             } else {
                 format!("{id}.{number}")
+            };
+            if !self.used.contains(&candidate) {
+                return candidate;
             }
-        };
-        (from..)
-            .map(numbered)
-            .find(|candidate| !self.used.contains(candidate))
-            .unwrap_or_default()
+            number += 1;
+        }
     }
 }
 
@@ -150,7 +152,7 @@ fn shape(out: &mut String, shape: &Shape, lettering: Lettering) {
         }
         Shape::Path { .. } => {}
         Shape::Label { label, at, em, ink } if lettering == Lettering::Real => {
-            text(out, label, *at, *em, *ink)
+            text(out, label, *at, *em, *ink);
         }
         Shape::Label { label, ink, .. } => {
             let outline = shape.outline();

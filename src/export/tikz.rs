@@ -26,7 +26,7 @@ pub fn tikz(sheet: &Sheet) -> Result<Vec<u8>, ExportFault> {
             .map(|text| comment(text)),
     );
     lines.push(r"\begin{tikzpicture}[x=1mm,y=-1mm,miter limit=10,".into());
-    lines.push(r"  plate label/.style={anchor=base west,inner sep=0pt,outer sep=0pt}]".into());
+    lines.push(r"  plate label/.style={anchor=base,inner sep=0pt,outer sep=0pt}]".into());
     let inks: BTreeSet<Ink> = sheet.marks.iter().map(|mark| ink(&mark.shape)).collect();
     for Ink(red, green, blue) in inks {
         let name = colour(Ink(red, green, blue));
@@ -102,7 +102,7 @@ fn drawn(shape: &Shape) -> Option<String> {
             "\\node[plate label,text={},font={}] at {} {{${}$}};",
             colour(*ink),
             font(*em),
-            pair(*at),
+            pair(Point::new(at.x + em * label.width / 2.0, at.y)),
             label.source
         )),
     }
@@ -120,7 +120,8 @@ fn stroked(stroke: &Stroke) -> String {
             format!("{kind} {}mm", fixed(*length))
         };
         let pattern: Vec<String> = stroke.dash.iter().enumerate().map(part).collect();
-        out.push_str(&format!(",dash pattern={}", pattern.join(" ")));
+        out.push_str(",dash pattern=");
+        out.push_str(&pattern.join(" "));
     }
     if stroke.cap == Cap::Round {
         out.push_str(",line cap=round");
@@ -137,8 +138,8 @@ fn data(path: &BezPath) -> String {
     let mut last = Point::ZERO;
     for element in path.elements() {
         match *element {
-            PathEl::MoveTo(end) => out.push_str(&format!(" {}", pair(end))),
-            PathEl::LineTo(end) => out.push_str(&format!("\n  -- {}", pair(end))),
+            PathEl::MoveTo(end) => out.extend([" ", &pair(end)]),
+            PathEl::LineTo(end) => out.extend(["\n  -- ", &pair(end)]),
             PathEl::QuadTo(by, end) => {
                 let (first, second) = (last.lerp(by, 2.0 / 3.0), end.lerp(by, 2.0 / 3.0));
                 out.push_str(&curve(first, second, end));

@@ -8,6 +8,7 @@ mod angle;
 mod boost;
 mod displacement;
 mod leg;
+mod piece;
 mod rapidity;
 mod worldline;
 

@@ -63,7 +63,8 @@ impl Rapidity {
     pub fn new(rapidity: f64) -> Result<Self, GeometryError> {
         // NaN fails the comparison.
         if rapidity.abs() <= Self::LIMIT {
-            Ok(Self(rapidity))
+            // Without a negative zero.
+            Ok(Self(rapidity + 0.0))
         } else {
             Err(domain("the rapidity", "from -600 to 600", rapidity))
         }
@@ -75,7 +76,7 @@ impl Rapidity {
     /// `Domain` at and beyond the speed of light.
     pub fn from_beta(beta: f64) -> Result<Self, GeometryError> {
         if beta.abs() < 1.0 {
-            Ok(Self(num::atanh(beta)))
+            Self::new(num::atanh(beta))
         } else {
             Err(domain("beta", "between -1 and 1", beta))
         }
@@ -96,7 +97,7 @@ impl Rapidity {
         } else {
             num::ln((2.0 - d) / d)
         };
-        Ok(Self(side.sign() * 0.5 * doubled))
+        Self::new(side.sign() * 0.5 * doubled)
     }
 
     /// From gamma, at least 1.

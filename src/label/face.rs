@@ -102,9 +102,9 @@ fn read(name: &str) -> Read {
         .map(|glyph| outline(&font, glyph, em))
         .collect();
     Read {
+        bytes,
         glyphs,
         outlines,
-        bytes,
     }
 }
 

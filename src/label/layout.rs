@@ -103,6 +103,12 @@ const LONGEST: usize = 1_000;
 /// The largest box, em.
 const LARGEST: f64 = 200.0;
 
+/// The accent of `\bar`.
+const MACRON: char = '\u{2C9}';
+/// How far the layout crate sets it above TeX's place, em: TeX raises an accent by what its base is higher than an x
+/// (The TeXbook, appendix G, rule 12), the crate by the base's height less 0.338; an x is 0.431 high.
+const MACRON_DROP: f64 = 0.0928;
+
 /// Sets LaTeX math.
 ///
 /// # Errors
@@ -172,13 +178,21 @@ pub(super) fn set(latex: &str, words: String, letters: String) -> Result<Label, 
         .filter_map(ink_of)
         .reduce(|all, next| all.union(next))
         .unwrap_or_default();
+    let lowered = list.items.iter().any(|item| {
+        matches!(item, DisplayItem::GlyphPath { char_code, .. } if *char_code == u32::from(MACRON))
+    });
+    let height = if lowered {
+        (list.height - MACRON_DROP).max(ink.y1)
+    } else {
+        list.height
+    };
     Ok(Label {
         source: latex.to_owned(),
         pieces,
         words,
         letters,
         width: list.width.max(0.0),
-        height: list.height,
+        height,
         depth: list.depth.max(0.0),
         ink,
     })
@@ -242,6 +256,11 @@ fn glyph(font: &str, code: u32, x: f64, y: f64, scale: f64) -> Result<Option<Pie
     }
     let drawn = katex_ttf_glyph_char(id, code);
     let id = face.glyph(drawn).ok_or_else(missing)?;
+    let y = if text == MACRON {
+        y - MACRON_DROP * scale
+    } else {
+        y
+    };
     let text = if ('\u{1D400}'..='\u{1D7FF}').contains(&text) {
         drawn
     } else {
@@ -276,7 +295,7 @@ fn path(commands: &[PathCommand], left: f64, top: f64) -> BezPath {
             PathCommand::MoveTo { x, y } => path.move_to(at(x, y)),
             PathCommand::LineTo { x, y } if !path.elements().is_empty() => path.line_to(at(x, y)),
             PathCommand::QuadTo { x1, y1, x, y } if !path.elements().is_empty() => {
-                path.quad_to(at(x1, y1), at(x, y))
+                path.quad_to(at(x1, y1), at(x, y));
             }
             PathCommand::CubicTo {
                 x1,

@@ -7,6 +7,7 @@ mod layout;
 mod plain;
 mod reader;
 mod symbols;
+mod tape;
 mod words;
 
 pub use face::Face;

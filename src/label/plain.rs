@@ -4,7 +4,7 @@ use super::layout::{self, Label};
 use super::symbols;
 
 /// Letters of Latin scripts that both the faces and LaTeX build from a letter and an accent, or have.
-const ACCENTED: &str = "ÀÁÂÃÄÅÆÇÈÉÊËÌÍÎÏÑÒÓÔÕÖØÙÚÛÜÝßàáâãäåæçèéêëìíîïñòóôõöøùúûüýÿ";
+const ACCENTED: &str = "ÀÁÂÃÄÅÆÇÈÉÊËÌÍÎÏÑÒÓÔÕÖØÙÚÛÜÝßàáâãäåæçèéêëìíîïñòóôõöøùúûüýÿĆćČčĎĚěĞğİıŃńŇňŐőŘřŚśŞşŠšŤŮůŰűŹźŻżŽž";
 
 /// The longest name that is set, characters; what follows is left out.
 const LONGEST: usize = 200;
@@ -17,21 +17,19 @@ pub(super) fn is_accented(character: char) -> bool {
 /// Sets plain upright text (an object's name); characters no face has become a replacement box, so it never fails.
 /// The label's `source` is the LaTeX of it: `\text{..}` with special characters escaped.
 pub fn plain(text: &str) -> Label {
-    let words = || text.split_whitespace().collect::<Vec<_>>().join(" ");
-    let letters = || {
-        words()
-            .chars()
-            .filter(|letter| !letter.is_control())
-            .collect::<String>()
-    };
-    let latex = latex(text);
-    layout::set(&latex, words(), letters())
-        .or_else(|_| layout::set(r"\square", words(), letters()))
+    let shown: String = text
+        .chars()
+        .filter(|letter| letter.is_whitespace() || !letter.is_control())
+        .collect();
+    let words = || shown.split_whitespace().collect::<Vec<_>>().join(" ");
+    let latex = latex(&shown);
+    layout::set(&latex, words(), words())
+        .or_else(|_| layout::set(r"\square", words(), words()))
         .unwrap_or_else(|_| Label {
             source: latex,
             pieces: Vec::new(),
             words: words(),
-            letters: letters(),
+            letters: words(),
             width: 0.0,
             height: 0.0,
             depth: 0.0,
@@ -69,7 +67,7 @@ fn latex(text: &str) -> String {
 fn spelled(character: char) -> (bool, String) {
     match character {
         '#' | '$' | '%' | '&' | '_' | '{' | '}' => (true, format!("\\{character}")),
-        // In math LaTeX forms no ligature of two and prints no other sign.
+        // Braces keep two of them from becoming one dash.
         '-' => (true, "{-}".into()),
         '<' | '>' | '|' | '"' | '\\' | '^' | '~' => (false, math_sign(character).into()),
         '\'' | '\u{2019}' => (true, "'".into()),
@@ -79,10 +77,17 @@ fn spelled(character: char) -> (bool, String) {
         '\u{2032}' => (false, "{}'".into()),
         '\u{2212}' => (false, "{-}".into()),
         '\u{B0}' => (false, r"{}^{\circ}".into()),
-        other => match symbols::of_char(other) {
-            Some(symbol) => (false, format!("{{\\{}}}", symbol.0)),
-            None => (false, r"\square{}".into()),
-        },
+        other => (false, sign(other)),
+    }
+}
+
+fn sign(character: char) -> String {
+    if let Some((sign, plain)) = symbols::script(character) {
+        return format!("{{}}{sign}{{{plain}}}");
+    }
+    match symbols::of_char(character) {
+        Some(symbol) => format!("{{\\{}}}", symbol.0),
+        None => r"\square{}".into(),
     }
 }
 

@@ -3,6 +3,7 @@
 use super::LabelFault;
 use super::allow::{self, Command, Letters};
 use super::symbols::{self, Symbol};
+use super::tape::{Tape, Token, fault};
 
 /// A label as read.
 #[derive(Clone, Debug, PartialEq)]
@@ -14,28 +15,28 @@ pub(super) enum Node {
     /// Upright words: `\text`, names of functions.
     Text(String),
     /// What stood in braces.
-    Group(Vec<Node>),
+    Group(Vec<Self>),
     /// An argument set in another face.
-    Font(Letters, Box<Node>),
+    Font(Letters, Box<Self>),
     /// What goes over (or under) the argument, in words.
-    Accent(&'static str, Box<Node>),
+    Accent(&'static str, Box<Self>),
     /// A base with scripts.
     Scripts {
         /// What carries them.
-        base: Option<Box<Node>>,
+        base: Option<Box<Self>>,
         /// Below.
-        sub: Option<Box<Node>>,
+        sub: Option<Box<Self>>,
         /// How many primes.
         primes: usize,
         /// Above.
-        sup: Option<Box<Node>>,
+        sup: Option<Box<Self>>,
     },
     /// Numerator and denominator.
-    Fraction(Box<Node>, Box<Node>),
+    Fraction(Box<Self>, Box<Self>),
     /// Index and radicand.
-    Root(Option<Box<Node>>, Box<Node>),
+    Root(Option<Box<Self>>, Box<Self>),
     /// The small thing, how it stands, the big thing.
-    Stack(Box<Node>, &'static str, Box<Node>),
+    Stack(Box<Self>, &'static str, Box<Self>),
     /// White space.
     Space,
 }
@@ -45,12 +46,6 @@ pub(super) enum Node {
 pub(super) struct Reading {
     pub(super) nodes: Vec<Node>,
     pub(super) latex: String,
-}
-
-#[derive(Clone, Debug, PartialEq, Eq)]
-enum Token {
-    Char(char),
-    Command(String),
 }
 
 /// What ends a list.
@@ -66,12 +61,8 @@ enum End {
 const DEEPEST: usize = 16;
 
 struct Reader {
-    /// Tokens and the column each starts at, last first.
-    tokens: Vec<(Token, usize)>,
-    /// Columns in all.
-    columns: usize,
+    tape: Tape,
     depth: usize,
-    latex: String,
 }
 
 /// Reads a whole label.
@@ -79,133 +70,21 @@ struct Reader {
 /// # Errors
 /// What the grammar does not know, with its column.
 pub(super) fn read(source: &str) -> Result<Reading, LabelFault> {
-    let mut tokens = tokens(source)?;
-    tokens.reverse();
-    let columns = source.chars().count();
     let mut reader = Reader {
-        tokens,
-        columns,
+        tape: Tape::new(source)?,
         depth: 0,
-        latex: String::new(),
     };
     let nodes = reader.list(End::Label)?;
     Ok(Reading {
         nodes,
-        latex: reader.latex,
-    })
-}
-
-fn fault(column: usize, what: impl Into<String>, mend: impl Into<String>) -> LabelFault {
-    LabelFault {
-        column,
-        what: what.into(),
-        mend: mend.into(),
-    }
-}
-
-fn tokens(source: &str) -> Result<Vec<(Token, usize)>, LabelFault> {
-    let mut found = Vec::new();
-    let mut characters = source.chars().enumerate().peekable();
-    while let Some((column, character)) = characters.next() {
-        let token = match character {
-            '\\' => {
-                let mut name = String::new();
-                while let Some((_, letter)) =
-                    characters.next_if(|next| next.1.is_ascii_alphabetic())
-                {
-                    name.push(letter);
-                }
-                if name.is_empty() {
-                    let Some((_, sign)) = characters.next() else {
-                        return Err(fault(
-                            column,
-                            "a backslash ends the label",
-                            "name a command after it, or take it out",
-                        ));
-                    };
-                    name.push(sign);
-                }
-                Token::Command(name)
-            }
-            '\t' | '\n' | '\r' => Token::Char(' '),
-            control if control.is_control() => {
-                let what = format!(
-                    "a label holds the control character U+{:04X}",
-                    u32::from(control)
-                );
-                return Err(fault(column, what, "take it out"));
-            }
-            other => Token::Char(other),
-        };
-        found.push((token, column));
-    }
-    Ok(found)
-}
-
-/// A character beyond ASCII as the tokens that LaTeX has for it.
-fn spelled(character: char) -> Option<Vec<Token>> {
-    let command = |name: &str| Token::Command(name.to_owned());
-    Some(match character {
-        '\u{2212}' => vec![Token::Char('-')],
-        '\u{2032}' => vec![Token::Char('\'')],
-        '\u{2033}' => vec![Token::Char('\''), Token::Char('\'')],
-        '\u{B0}' => vec![Token::Char('^'), command("circ")],
-        '\u{B9}' => vec![Token::Char('^'), Token::Char('1')],
-        '\u{B2}' => vec![Token::Char('^'), Token::Char('2')],
-        '\u{B3}' => vec![Token::Char('^'), Token::Char('3')],
-        '\u{A0}' => vec![Token::Char('~')],
-        '\u{2009}' | '\u{202F}' => vec![command(",")],
-        other => vec![command(symbols::of_char(other)?.0)],
+        latex: reader.tape.latex,
     })
 }
 
 impl Reader {
-    /// The next token of math and its column; characters beyond ASCII are spelled out.
-    fn peek(&mut self) -> Option<(Token, usize)> {
-        if let Some((Token::Char(character), column)) = self.tokens.last().cloned()
-            && !character.is_ascii()
-            && let Some(spelled) = spelled(character)
-        {
-            self.tokens.pop();
-            self.tokens
-                .extend(spelled.into_iter().rev().map(|token| (token, column)));
-        }
-        self.tokens.last().cloned()
-    }
-
-    /// Takes the next token and writes it to the LaTeX.
-    fn take(&mut self) -> Option<(Token, usize)> {
-        let next = self.peek()?;
-        self.tokens.pop();
-        match &next.0 {
-            Token::Char(character) => self.write(&character.to_string()),
-            Token::Command(name) => self.write(&format!("\\{name}")),
-        }
-        Some(next)
-    }
-
-    /// A letter right after a command's name would be read into it.
-    fn write(&mut self, text: &str) {
-        let letter = text.starts_with(|first: char| first.is_ascii_alphabetic());
-        let name = self.latex.rfind('\\').is_some_and(|at| {
-            let name = self.latex.get(at + 1..).unwrap_or_default();
-            !name.is_empty() && name.bytes().all(|byte| byte.is_ascii_alphabetic())
-        });
-        if letter && name {
-            self.latex.push(' ');
-        }
-        self.latex.push_str(text);
-    }
-
-    fn skip_space(&mut self) {
-        while self.peek().is_some_and(|next| next.0 == Token::Char(' ')) {
-            self.take();
-        }
-    }
-
     fn missing(&self, what: &str) -> LabelFault {
         fault(
-            self.columns,
+            self.tape.columns,
             format!("the label ends where {what} is missing"),
             format!("add {what}"),
         )
@@ -223,7 +102,7 @@ impl Reader {
     fn list(&mut self, end: End) -> Result<Vec<Node>, LabelFault> {
         let mut nodes = Vec::new();
         loop {
-            let Some((token, column)) = self.peek() else {
+            let Some((token, column)) = self.tape.peek() else {
                 return match end {
                     End::Label => Ok(nodes),
                     End::Brace => Err(self.missing("a closing brace }")),
@@ -237,12 +116,12 @@ impl Reader {
                 _ => false,
             };
             if ends {
-                self.take();
+                self.tape.take();
                 return Ok(nodes);
             }
             match token {
                 Token::Char(' ') => {
-                    self.take();
+                    self.tape.take();
                 }
                 Token::Char('}') => {
                     return Err(fault(
@@ -265,12 +144,12 @@ impl Reader {
 
     /// One thing with its scripts.
     fn scripted(&mut self) -> Result<Node, LabelFault> {
-        let bare = matches!(self.peek(), Some((Token::Char('^' | '_' | '\''), _)));
+        let bare = matches!(self.tape.peek(), Some((Token::Char('^' | '_' | '\''), _)));
         let base = if bare { None } else { Some(self.nucleus()?) };
         let (mut sub, mut sup, mut primes) = (None, None, 0_usize);
         loop {
-            self.skip_space();
-            let Some((Token::Char(sign), column)) = self.peek() else {
+            self.tape.skip_space();
+            let Some((Token::Char(sign), column)) = self.tape.peek() else {
                 break;
             };
             let twice = |which: &str| {
@@ -281,26 +160,25 @@ impl Reader {
                 )
             };
             match sign {
-                '\'' if sup.is_some() => return Err(twice("superscript")),
+                '\'' | '^' if sup.is_some() => return Err(twice("superscript")),
                 '\'' => {
-                    self.take();
+                    self.tape.take();
                     primes += 1;
-                    if primes > 1 && !self.latex.ends_with("''") {
+                    if primes > 1 && !self.tape.latex.ends_with("''") {
                         return Err(twice("superscript"));
                     }
                 }
-                '^' if sup.is_some() => return Err(twice("superscript")),
-                '^' if primes > 0 && !self.latex.trim_end().ends_with('\'') => {
+                '^' if primes > 0 && !self.tape.latex.ends_with('\'') => {
                     return Err(twice("superscript"));
                 }
                 '_' if sub.is_some() => return Err(twice("subscript")),
                 '^' | '_' => {
-                    self.take();
+                    self.tape.take();
                     let script = Some(Box::new(self.argument("a script")?));
                     if sign == '^' {
-                        sup = script
+                        sup = script;
                     } else {
-                        sub = script
+                        sub = script;
                     }
                 }
                 _ => break,
@@ -318,17 +196,17 @@ impl Reader {
     }
 
     fn nucleus(&mut self) -> Result<Node, LabelFault> {
-        let Some((token, column)) = self.peek() else {
+        let Some((token, column)) = self.tape.peek() else {
             return Err(self.missing("a symbol"));
         };
         match token {
             Token::Char('{') => self.group(column).map(Node::Group),
             Token::Char('~') => {
-                self.take();
+                self.tape.take();
                 Ok(Node::Space)
             }
             Token::Char(character) if allow::math_char(character) => {
-                self.take();
+                self.tape.take();
                 Ok(Node::Char(character))
             }
             Token::Char(character) => Err(refused_char(character, column)),
@@ -336,7 +214,7 @@ impl Reader {
                 let Some(command) = allow::command(&name) else {
                     return Err(refused_command(&name, column));
                 };
-                self.take();
+                self.tape.take();
                 self.command(command, &name, column)
             }
         }
@@ -344,7 +222,7 @@ impl Reader {
 
     fn group(&mut self, column: usize) -> Result<Vec<Node>, LabelFault> {
         self.deeper(column)?;
-        self.take();
+        self.tape.take();
         let nodes = self.list(End::Brace)?;
         self.depth -= 1;
         Ok(nodes)
@@ -384,24 +262,25 @@ impl Reader {
         })
     }
 
-    /// A group, or a single character or symbol.
+    /// A group, a character or a command with its own arguments; a command is put in braces, as TeX needs it.
     fn argument(&mut self, what: &str) -> Result<Node, LabelFault> {
-        self.skip_space();
-        let Some((token, column)) = self.peek() else {
+        self.tape.skip_space();
+        let Some((token, column)) = self.tape.peek() else {
             return Err(self.missing(what));
         };
         match &token {
             Token::Char('{') => return self.group(column).map(Node::Group),
             Token::Char(character) if allow::math_char(*character) => return self.nucleus(),
             Token::Command(name) => match allow::command(name) {
-                Some(Command::Symbol(_)) => {
-                    // Some symbols are two in TeX, which takes one alone.
-                    self.write("{");
-                    let node = self.nucleus();
-                    self.write("}");
-                    return node;
+                Some(Command::Space | Command::Right) => {}
+                Some(_) => {
+                    self.deeper(column)?;
+                    self.tape.write("{");
+                    let node = self.nucleus()?;
+                    self.tape.write("}");
+                    self.depth -= 1;
+                    return Ok(node);
                 }
-                Some(_) => {}
                 None => return Err(refused_command(name, column)),
             },
             Token::Char('^' | '_' | '\'' | '}' | '~') => {}
@@ -409,14 +288,14 @@ impl Reader {
         }
         Err(fault(
             column,
-            format!("{what} must stand in braces here"),
+            format!("{what} is missing here"),
             format!("put {what} in braces {{..}}"),
         ))
     }
 
     fn font(&mut self, letters: Letters, name: &str) -> Result<Node, LabelFault> {
-        self.skip_space();
-        let column = self.peek().map_or(self.columns, |next| next.1);
+        self.tape.skip_space();
+        let column = self.tape.peek().map_or(self.tape.columns, |next| next.1);
         let argument = self.argument(&format!("what \\{name} sets"))?;
         let fits = |node: &Node| match (letters, node) {
             (Letters::Word | Letters::Each, _) => true,
@@ -445,9 +324,9 @@ impl Reader {
 
     /// The words of `\text{..}`, read character by character: no math in it.
     fn text(&mut self, name: &str) -> Result<String, LabelFault> {
-        self.skip_space();
-        match self.peek() {
-            Some((Token::Char('{'), _)) => self.take(),
+        self.tape.skip_space();
+        match self.tape.peek() {
+            Some((Token::Char('{'), _)) => self.tape.take(),
             Some((_, column)) => {
                 return Err(fault(
                     column,
@@ -459,25 +338,25 @@ impl Reader {
         };
         let mut words = String::new();
         loop {
-            let Some((token, column)) = self.tokens.pop() else {
+            let Some((token, column)) = self.tape.pop() else {
                 return Err(self.missing("a closing brace }"));
             };
             match token {
                 Token::Char('}') => {
-                    self.latex.push('}');
+                    self.tape.latex.push('}');
                     return Ok(words);
                 }
                 Token::Char('~' | '\u{A0}') => {
-                    self.latex.push('~');
+                    self.tape.latex.push('~');
                     words.push(' ');
                 }
                 Token::Char(character) if allow::text_char(character) => {
-                    self.latex.push(character);
+                    self.tape.latex.push(character);
                     words.push(character);
                 }
                 Token::Command(escape) if "{}#%&$_ ".contains(&escape) => {
-                    self.latex.push('\\');
-                    self.latex.push_str(&escape);
+                    self.tape.latex.push('\\');
+                    self.tape.latex.push_str(&escape);
                     words.push_str(&escape);
                 }
                 Token::Char('$') => {
@@ -512,8 +391,8 @@ impl Reader {
     }
 
     fn operator_name(&mut self) -> Result<String, LabelFault> {
-        self.skip_space();
-        let column = self.peek().map_or(self.columns, |next| next.1);
+        self.tape.skip_space();
+        let column = self.tape.peek().map_or(self.tape.columns, |next| next.1);
         let nodes = match self.argument("the function's name")? {
             Node::Group(nodes) => nodes,
             node => vec![node],
@@ -533,11 +412,11 @@ impl Reader {
     }
 
     fn root(&mut self, column: usize) -> Result<Node, LabelFault> {
-        self.skip_space();
+        self.tape.skip_space();
         let mut index = None;
-        if matches!(self.peek(), Some((Token::Char('['), _))) {
+        if matches!(self.tape.peek(), Some((Token::Char('['), _))) {
             self.deeper(column)?;
-            self.take();
+            self.tape.take();
             index = Some(Box::new(Node::Group(self.list(End::Bracket)?)));
             self.depth -= 1;
         }
@@ -557,8 +436,8 @@ impl Reader {
     }
 
     fn delimiter(&mut self) -> Result<Node, LabelFault> {
-        self.skip_space();
-        let Some((token, column)) = self.peek() else {
+        self.tape.skip_space();
+        let Some((token, column)) = self.tape.peek() else {
             return Err(self.missing("a delimiter"));
         };
         let node = match &token {
@@ -578,7 +457,7 @@ impl Reader {
                 r"write one of ( ) [ ] | / \{ \} \langle \rangle, or . for none",
             ));
         };
-        self.take();
+        self.tape.take();
         Ok(node)
     }
 }

@@ -22,6 +22,17 @@ pub(super) fn of_char(character: char) -> Option<&'static Symbol> {
         .find(|symbol| !character.is_ascii() && symbol.1 == character)
 }
 
+/// A raised or lowered digit or sign: which script it is (`^` or `_`), and the character.
+pub(super) fn script(character: char) -> Option<(char, char)> {
+    const RAISED: [char; 12] = ['⁰', '¹', '²', '³', '⁴', '⁵', '⁶', '⁷', '⁸', '⁹', '⁺', '⁻'];
+    const LOWERED: [char; 12] = ['₀', '₁', '₂', '₃', '₄', '₅', '₆', '₇', '₈', '₉', '₊', '₋'];
+    let find = |scripts: &[char], sign: char| {
+        let index = scripts.iter().position(|script| *script == character)?;
+        Some((sign, "0123456789+-".chars().nth(index)?))
+    };
+    find(&RAISED, '^').or_else(|| find(&LOWERED, '_'))
+}
+
 /// What a symbol is called.
 pub(super) fn words(symbol: &Symbol) -> &'static str {
     if symbol.2.is_empty() {

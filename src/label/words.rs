@@ -14,7 +14,9 @@ pub(super) fn words(nodes: &[Node]) -> String {
 /// For searching and copying: `pa′`.
 pub(super) fn letters(nodes: &[Node]) -> String {
     let mut found = String::new();
-    nodes.iter().for_each(|node| spell(node, &mut found));
+    for node in nodes {
+        spell(node, &mut found);
+    }
     found.split_whitespace().collect::<Vec<_>>().join(" ")
 }
 

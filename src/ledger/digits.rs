@@ -27,7 +27,7 @@ impl Form {
         if low > high {
             return Self::Fixed(Decimals(0));
         }
-        if high >= FIGURES || high < -4 {
+        if !(-4..FIGURES).contains(&high) {
             return Self::Scientific;
         }
         let wanted = DIGITS - 1 - low;

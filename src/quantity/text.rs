@@ -1,7 +1,8 @@
 //! Numbers as text.
 
+use super::Number;
 use num_bigint::BigInt;
-use num_rational::BigRational;
+use std::ops::Range;
 
 /// How many digits stand after the decimal sign.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
@@ -16,36 +17,19 @@ pub struct Rounded {
     pub uncertainty: String,
 }
 
-/// The shortest decimal text that reads back to the same f64; whole numbers without `.0`; `-0` as `0`.
-/// Plain notation from 1e-5 up to below 1e16, else `1.5e-7` (as JSON writers print).
+/// The shortest decimal text that reads back to the same f64; whole numbers without `.0`, `-0` as `0`. Plain notation
+/// from 1e-5 up to below 1e16, as JSON writers have it, else `1.5e-7`.
 pub fn shortest(value: f64) -> String {
     if value == 0.0 {
         return "0".to_owned();
     }
-    let scientific = format!("{value:e}");
-    match scientific
-        .split_once('e')
-        .and_then(|(m, e)| Some((m, e.parse::<i32>().ok()?)))
-    {
-        Some((mantissa, exponent)) if (-5..16).contains(&exponent) => plain(mantissa, exponent),
-        _ => scientific,
-    }
+    laid_out(format!("{value:e}"), -5..16)
 }
 
 /// Rounded to some significant digits (at least one), plain notation from 1e-4 to 1e7, else `1.234e-8`. Half to even
 /// on the exact binary value (as the standard formatter does). Zero is `0`.
 pub fn significant(value: f64, digits: usize) -> String {
-    if value == 0.0 {
-        return "0".to_owned();
-    }
-    let scientific = format!("{value:.*e}", digits.max(1) - 1);
-    match scientific
-        .split_once('e')
-        .and_then(|(m, e)| Some((m, e.parse::<i32>().ok()?)))
-    {
-        Some((mantissa, exponent)) if (-4..7).contains(&exponent) => plain(mantissa, exponent),
-        _ => scientific,
-    }
+    laid_out(scientific(value, digits), -4..7)
 }
 
 /// Rounded to some significant digits (at least one), always with a power of ten: `1.23457e12`. Zero is `0`.
@@ -92,6 +76,15 @@ fn push_threes(out: &mut String, digits: &str, first: usize, least: usize) {
             out.push('\u{2009}');
         }
         out.push(digit);
+    }
+}
+
+/// What is written with a power of ten, written out where the power is in `range`.
+fn laid_out(scientific: String, range: Range<i32>) -> String {
+    let parts = scientific.split_once('e');
+    match parts.and_then(|(mantissa, power)| Some((mantissa, power.parse::<i32>().ok()?))) {
+        Some((mantissa, power)) if range.contains(&power) => plain(mantissa, power),
+        _ => scientific,
     }
 }
 
@@ -142,14 +135,13 @@ impl Spread {
     }
 }
 
-/// How many times 10^place a value is, to the nearest whole number.
+/// How many times 10^place a value is, to the nearest whole number, half away from 0; of the decimal that is printed,
+/// so that 12.2135 is half way between 12.213 and 12.214.
 fn units_of(value: f64, place: i32) -> Option<BigInt> {
-    let power = BigRational::from(BigInt::from(10)).pow(place);
-    Some(
-        (BigRational::from_float(value)? / power)
-            .round()
-            .to_integer(),
-    )
+    match Number::decimal(&shortest(value))?.over(&Number::scaled(1, 1, place)) {
+        Number::Rational(units) => Some(units.round().to_integer()),
+        Number::Real(_) => None,
+    }
 }
 
 /// A whole number of units of 10^place, in plain notation.
@@ -186,7 +178,7 @@ pub fn rounded(value: f64, uncertainty: f64) -> Option<Rounded> {
 }
 
 /// A value with its uncertainty in parentheses, in units of the last digit: `497.611(13)`; below 1e-4 and from 1e7
-/// with a power of ten, `1.67262192595(52)e-27`. For an uncertainty of 0 the shortest text of the value alone.
+/// with a power of ten, `9.1093837139(28)e-31`. For an uncertainty of 0 the shortest text of the value alone.
 pub fn with_uncertainty(value: f64, uncertainty: f64) -> String {
     let (Some(spread), Some(exponent)) = (
         Spread::of(uncertainty),

@@ -89,11 +89,12 @@ const SPEEDS: &[Row] = &[
     ("c", 1, 1, 0),
     ("m/s", 1, C, 0),
     ("km/s", 1, C, 3),
-    ("km/h", 10, 36 * C, 3),
+    ("km/h", 10, 36 * C, 0),
 ];
 const PAPER: &[Row] = &[
     ("mm", 1, 1, 0),
     ("cm", 10, 1, 0),
+    ("m", 1000, 1, 0),
     ("pt", 254, 720, 0),
     ("in", 254, 10, 0),
 ];
@@ -140,7 +141,7 @@ impl Dimension {
             Self::Momentum => "MeV/c, GeV/c and their like, a unit of energy or kg m/s",
             Self::Speed => "c, m/s, km/s or km/h",
             Self::Angle => "deg, rad or mrad",
-            Self::Paper => "mm, cm, pt or in",
+            Self::Paper => "mm, cm, m, pt or in",
         }
     }
 

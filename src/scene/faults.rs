@@ -9,7 +9,6 @@ use crate::fault::{Fault, ObjectId, Weight};
 const MOST: usize = 16;
 
 /// A text, its tree and its lines.
-#[derive(Clone, Debug, Default)]
 pub(super) struct Source {
     pub(super) text: String,
     pub(super) tree: Tree,
@@ -42,6 +41,11 @@ impl<'a> Faults<'a> {
         self.broken
     }
 
+    /// Whether any further fault would not be kept, so that its words need not be found.
+    pub(super) fn full(&self) -> bool {
+        self.list.len() >= MOST
+    }
+
     pub(super) fn into_list(self) -> Vec<Fault> {
         self.list
     }
@@ -50,13 +54,13 @@ impl<'a> Faults<'a> {
     pub(super) fn add(&mut self, at: usize, what: impl Into<String>, mend: impl Into<String>) {
         self.broken = true;
         let field = self.path(at);
-        self.put(Weight::Fault, field, at, (what.into(), mend.into()));
+        self.put(Weight::Fault, &field, at, (what.into(), mend.into()));
     }
 
     /// A finding at a byte of the text: the object is used all the same.
     pub(super) fn find(&mut self, at: usize, what: impl Into<String>, mend: impl Into<String>) {
         let field = self.path(at);
-        self.put(Weight::Finding, field, at, (what.into(), mend.into()));
+        self.put(Weight::Finding, &field, at, (what.into(), mend.into()));
     }
 
     /// A fault of a field that is not there, at the form that lacks it.
@@ -68,7 +72,7 @@ impl<'a> Faults<'a> {
         }
         field.push_str(name);
         let what = format!("`{name}` is missing");
-        self.put(Weight::Fault, field, form.start(), (what, mend.into()));
+        self.put(Weight::Fault, &field, form.start(), (what, mend.into()));
     }
 
     /// A fault within a string or a number.
@@ -83,18 +87,18 @@ impl<'a> Faults<'a> {
     }
 
     fn path(&self, at: usize) -> String {
-        if self.list.len() >= MOST {
+        if self.full() {
             return String::new();
         }
         self.root.map_or_else(String::new, |root| root.path_to(at))
     }
 
-    fn put(&mut self, weight: Weight, field: String, at: usize, (what, mend): (String, String)) {
-        if self.list.len() >= MOST {
+    fn put(&mut self, weight: Weight, field: &str, at: usize, (what, mend): (String, String)) {
+        if self.full() {
             return;
         }
         let place = self.source.lines.place(&self.source.text, at);
-        let mut fault = Fault::new(self.object.clone(), &field, what, mend);
+        let mut fault = Fault::new(self.object.clone(), field, what, mend);
         fault.weight = weight;
         fault.place = Some(place);
         if self.list.len() == MOST - 1 {

@@ -10,6 +10,7 @@ mod places;
 mod reading;
 mod scanner;
 mod tree;
+mod values;
 
 pub use document::{
     Arrows, Closure, Collision, Common, Event, Frame, FramePart, Line, LineOrParticle, List,

@@ -5,6 +5,7 @@
 //! at its own address: `velocity: Beta("3/5")` has `3/5` at `velocity`, `CentreOfMomentum("strike")` has its value at
 //! `of`, or whatever name is asked for. The fields of the scene itself are addressed likewise: `base`, `units.time`.
 
+use std::fmt;
 use std::sync::Arc;
 
 use indexmap::IndexMap;
@@ -24,11 +25,16 @@ pub struct Places {
     map: Option<Arc<Map>>,
 }
 
-#[derive(Debug)]
 struct Map {
     source: Arc<Source>,
     root: NodeId,
     index: Index,
+}
+
+impl fmt::Debug for Map {
+    fn fmt(&self, f: &mut fmt::Formatter<'_>) -> fmt::Result {
+        write!(f, "places of {} objects", self.index.len())
+    }
 }
 
 impl Places {

@@ -4,11 +4,12 @@
 use std::sync::Arc;
 
 use super::faults::{Faults, Source};
-use super::fields::{Form, common, number, punctuation, short_text, text, with_next};
+use super::fields::{Form, common};
 use super::lines::Lines;
 use super::places::Index;
 use super::scanner::{Broken, scan};
 use super::tree::{Entry, Shape, Value};
+use super::values::{number, punctuation, short_text, text, with_next};
 use super::{List, Object, Places, Scene, Units, forms};
 use crate::disk::LIMIT;
 use crate::fault::{Fault, Kind, ObjectId, Place, nearest};
@@ -231,6 +232,9 @@ impl<'a> Reader<'a> {
     }
 
     fn unknown_field(&mut self, key: Value<'a>) {
+        if self.own.full() {
+            return;
+        }
         let mend = match nearest(key.raw(), FIELDS) {
             Some(near) => format!("did you mean `{near}`?"),
             None => format!("the fields of a scene are {}", FIELDS.join(", ")),
@@ -301,15 +305,16 @@ impl<'a> Reader<'a> {
             self.own.unlike(value, "a list of named objects", mend);
             return Ok(());
         }
+        let room = OBJECTS - self.objects;
+        if let Some(excess) = value.items().nth(room) {
+            return Err(Broken::new(
+                excess.start(),
+                format!("the scene has more than {OBJECTS} objects"),
+                "split the scene",
+            ));
+        }
+        self.objects += value.len();
         for (entry, next) in with_next(value) {
-            self.objects += 1;
-            if self.objects > OBJECTS {
-                return Err(Broken::new(
-                    entry.start(),
-                    format!("the scene has more than {OBJECTS} objects"),
-                    "split the scene",
-                ));
-            }
             match (entry.key(), entry.value()) {
                 (Some(key), Some(value)) => {
                     punctuation(entry, next, &mut self.own);

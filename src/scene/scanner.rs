@@ -78,7 +78,8 @@ impl Scanner<'_> {
                     let end = self.quoted_end(self.at)?;
                     self.leaf(end)?;
                 }
-                _ if self.blank() > 0 => self.at += self.blank(),
+                b' ' | b'\t'..=b'\r' => self.at += 1,
+                0x80.. if self.wide_blank() > 0 => self.at += self.wide_blank(),
                 b'/' if self.comment()? => {}
                 _ => {
                     let end = self.run_end()?;
@@ -99,8 +100,8 @@ impl Scanner<'_> {
         Ok(())
     }
 
-    /// Length of the blank at the current place, 0 if there is none.
-    fn blank(&self) -> usize {
+    /// Length of the blank of more than one byte at the current place, 0 if there is none.
+    fn wide_blank(&self) -> usize {
         let next = self.text[self.at..].chars().next();
         next.filter(|&c| is_blank(c)).map_or(0, char::len_utf8)
     }
@@ -186,12 +187,14 @@ impl Scanner<'_> {
         if let Some(length) = character_length(rest) {
             return Ok(self.at + length);
         }
-        let ends = |(i, c): (usize, char)| {
-            let comment = c == '/' && matches!(rest.as_bytes().get(i + 1), Some(b'/' | b'*'));
-            comment || is_blank(c) || "()[]{},:\"".contains(c)
+        let bytes = rest.as_bytes();
+        let ends = |&(i, c): &(usize, char)| match c {
+            '(' | ')' | '[' | ']' | '{' | '}' | ',' | ':' | '"' => true,
+            '/' => matches!(bytes.get(i + 1), Some(b'/' | b'*')),
+            _ => is_blank(c),
         };
-        let length = rest.char_indices().find(|&next| ends(next));
-        Ok(self.at + length.map_or(rest.len(), |(i, _)| i))
+        let end = rest.char_indices().find(ends);
+        Ok(self.at + end.map_or(rest.len(), |(i, _)| i))
     }
 
     fn leaf(&mut self, end: usize) -> Result<(), Broken> {
@@ -279,19 +282,15 @@ impl Scanner<'_> {
             ));
         }
         let at = self.at;
-        let node = match self.word_before().filter(|_| shape == Shape::Round) {
-            Some(word) => {
-                self.tree.node_mut(word).open_at(at, shape);
-                word
-            }
-            None => {
-                let mut node = Node::leaf(Span::new(at, at));
-                node.open_at(at, shape);
-                let id = self.add(node)?;
-                self.value(id);
-                id
-            }
+        let word = self.word_before().filter(|_| shape == Shape::Round);
+        let node = if let Some(word) = word {
+            word
+        } else {
+            let id = self.add(Node::leaf(Span::new(at, at)))?;
+            self.value(id);
+            id
         };
+        self.tree.node_mut(node).open_at(at, shape);
         self.levels.push(Level {
             node,
             first: self.pending.len(),
@@ -362,7 +361,7 @@ fn closer(bracket: char) -> char {
 }
 
 /// Whether a character is white space in RON.
-pub(super) fn is_blank(c: char) -> bool {
+fn is_blank(c: char) -> bool {
     matches!(
         c,
         ' ' | '\t'..='\r' | '\u{85}' | '\u{200E}' | '\u{200F}' | '\u{2028}' | '\u{2029}'

@@ -41,9 +41,9 @@ pub(super) fn solve(
             let stands_after = form.after.contains(name);
             let momentum = find(id, form, (&before, &after), stands_after)?;
             if stands_after {
-                after.push(momentum)
+                after.push(momentum);
             } else {
-                before.push(momentum)
+                before.push(momentum);
             }
             let own = ObjectId::new(Kind::Particle, name);
             compare_mass(solver, &own, *particle, &momentum)?;

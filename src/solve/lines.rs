@@ -1,9 +1,9 @@
 //! Worldlines.
 
-use super::SolvedLine;
 use super::frames;
-use super::solver::{Solver, Spoiled, fault};
+use super::solver::{Solver, Spoiled, difference, fault};
 use super::velocity;
+use super::{SolvedEvent, SolvedLine};
 use crate::dynamics::Momentum;
 use crate::fault::ObjectId;
 use crate::geometry::{Angle, Displacement, Leg, Side, Worldline};
@@ -121,15 +121,15 @@ fn leg_of(momentum: &Momentum) -> Option<Leg> {
             across: py / mass,
         }),
         Momentum::Massless {
-            p_minus,
+            p_minus: 0.0,
             p_plus: _,
             py: 0.0,
-        } if p_minus == 0.0 => Some(Leg::Light(Side::Plus)),
+        } => Some(Leg::Light(Side::Plus)),
         Momentum::Massless {
             p_minus: _,
-            p_plus,
+            p_plus: 0.0,
             py: 0.0,
-        } if p_plus == 0.0 => Some(Leg::Light(Side::Minus)),
+        } => Some(Leg::Light(Side::Minus)),
         Momentum::Massless { .. } => None,
     }
 }
@@ -166,9 +166,13 @@ fn broken(
     through: &[String],
     clock: Option<&(String, Typed)>,
 ) -> Result<Worldline, Spoiled> {
-    let events: Result<Vec<Displacement>, Spoiled> = through
-        .iter()
-        .map(|name| Ok(solver.event(name)?.at))
+    let events: Result<Vec<&SolvedEvent>, Spoiled> =
+        through.iter().map(|name| solver.event(name)).collect();
+    let events = events?;
+    let places: Vec<Displacement> = events.iter().map(|event| event.at).collect();
+    let steps: Vec<Displacement> = events
+        .windows(2)
+        .map(|pair| difference(pair[1], pair[0]))
         .collect();
     let (at, reading) = match clock {
         None => (0, 0.0),
@@ -187,7 +191,7 @@ fn broken(
             (index, reading(solver, id, typed)?)
         }
     };
-    Worldline::broken(&events?, at, reading).map_err(|e| {
+    Worldline::broken_by_steps(&places, &steps, at, reading).map_err(|e| {
         fault(
             id,
             "through",

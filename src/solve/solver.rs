@@ -11,6 +11,7 @@ use super::{
     checks, collisions, events, frames, lines, particles,
 };
 use crate::fault::{Fault, Kind, ObjectId};
+use crate::geometry::Displacement;
 use crate::quantity::{Number, Quantity, Typed, Unit, read};
 use crate::scene::Scene;
 
@@ -51,11 +52,8 @@ pub fn solve(scene: &Scene, unread: &[ObjectId]) -> Solved {
         }
     }
     checks::trims(&mut solver, unread);
-    let left_out = order
-        .out
-        .iter()
-        .map(|&node| graph::id_of(scene, node))
-        .collect();
+    let out = order.out.iter().map(|&node| graph::id_of(scene, node));
+    let left_out = out.chain(unread.iter().cloned()).collect();
     solver.finish(left_out)
 }
 
@@ -229,7 +227,8 @@ fn sound<T, S>(list: &crate::scene::List<T>, solved: Vec<Option<S>>) -> IndexMap
         .collect()
 }
 
-/// A fault of one field, boxed as solving passes it on.
+/// A fault of one field, as solving passes it on.
+#[expect(clippy::unnecessary_wraps, reason = "it is always one of the two ways to be left out")]
 pub(super) fn fault(
     id: &ObjectId,
     field: &str,
@@ -239,13 +238,18 @@ pub(super) fn fault(
     Some(Box::new(Fault::new(id.clone(), field, what, mend)))
 }
 
-/// The two coordinates before rounding, less those of an origin.
-pub(super) fn exact_difference(
-    a: &(Number, Number),
-    b: &(Number, Number),
-) -> crate::geometry::Displacement {
+/// What is between two pairs of coordinates (t and x): differences are formed before rounding.
+pub(super) fn exact_difference(a: &(Number, Number), b: &(Number, Number)) -> Displacement {
     let (t, x) = (a.0.minus(&b.0), a.1.minus(&b.1));
-    crate::geometry::Displacement::new(t.minus(&x).to_f64(), t.plus(&x).to_f64(), 0.0)
+    Displacement::new(t.minus(&x).to_f64(), t.plus(&x).to_f64(), 0.0)
+}
+
+/// From event `b` to event `a`, from the numbers before rounding where both have them.
+pub(super) fn difference(a: &SolvedEvent, b: &SolvedEvent) -> Displacement {
+    match (&a.exact, &b.exact) {
+        (Some(a), Some(b)) => exact_difference(a, b),
+        _ => a.at - b.at,
+    }
 }
 
 /// Everything that has a rapidity, for the rail.

@@ -157,14 +157,11 @@ fn few_digits(
 ///
 /// # Errors
 /// Where the number does not read, or lies outside what the form allows.
-pub fn typed_rapidity(velocity: &Velocity, toward: Option<Toward>) -> Result<f64, Fault> {
+pub fn typed_rapidity(velocity: &Velocity, toward: Option<Toward>) -> Result<f64, Box<Fault>> {
     let id = ObjectId::scene();
-    read(&id, "", velocity, toward)
-        .map(|typing| typing.rapidity.value())
-        .map_err(|spoiled| {
-            spoiled.map_or_else(
-                || Fault::new(id, "", "it does not read", ""),
-                |fault| *fault,
-            )
-        })
+    match read(&id, "", velocity, toward) {
+        Ok(typing) => Ok(typing.rapidity.value()),
+        Err(Some(fault)) => Err(fault),
+        Err(None) => Err(Box::new(Fault::new(id, "", "it does not read", "type a number"))),
+    }
 }

@@ -1,6 +1,6 @@
 //! Looking at a solved scene from a frame.
 
-use super::solver::{exact_difference, ticks};
+use super::solver::{difference, exact_difference, ticks};
 use super::{RapidityTick, Solved, SolvedCollision, SolvedEvent, SolvedFrame, Viewing};
 use crate::geometry::{Boost, Displacement, Rapidity, Separation};
 use crate::quantity::{Dimension, Unit, read};
@@ -77,11 +77,10 @@ impl Solved {
     /// The displacement from one event to another in the base frame, and its kind within rounding: numbers known
     /// exactly are subtracted before rounding, so the kind of typed events is exact.
     pub fn between(&self, a: &SolvedEvent, b: &SolvedEvent) -> (Displacement, Separation) {
-        if let (Some(first), Some(second)) = (&a.exact, &b.exact) {
-            let d = exact_difference(second, first);
+        let d = difference(b, a);
+        if a.exact.is_some() && b.exact.is_some() {
             return (d, d.separation());
         }
-        let d = b.at - a.at;
         let largest = [a.at.u, a.at.v, b.at.u, b.at.v]
             .iter()
             .fold(0.0f64, |m, c| m.max(c.abs()));

@@ -14,17 +14,20 @@ fn values(text: &str) -> Vec<(usize, usize)> {
     let mut i = 0;
     while i < bytes.len() {
         match bytes[i] {
-            b'"' => i = string_end(text, i),
+            b'"' => {
+                i = string_end(text, i);
+                continue;
+            }
             b'/' if bytes.get(i + 1) == Some(&b'/') => {
-                i += text[i..].find('\n').unwrap_or(text.len() - i)
+                i += text[i..].find('\n').unwrap_or(text.len() - i);
             }
             b':' => {
                 let start = i + 1 + text[i + 1..].find(|c: char| !c.is_whitespace()).unwrap();
                 found.push((start, value_end(text, start)));
-                i += 1;
             }
-            _ => i += 1,
+            _ => {}
         }
+        i += 1;
     }
     found
 }
@@ -45,9 +48,8 @@ fn value_end(text: &str, start: usize) -> usize {
                 continue;
             }
             b'(' | b'[' | b'{' => depth += 1,
-            b')' | b']' | b'}' if depth == 0 => return i,
+            b')' | b']' | b'}' | b',' if depth == 0 => return i,
             b')' | b']' | b'}' => depth -= 1,
-            b',' if depth == 0 => return i,
             _ => {}
         }
         i += 1;
@@ -75,9 +77,13 @@ fn a_broken_value_is_pointed_at() {
                 path.display()
             );
             let (line, column) = place(&text, start);
-            let wanted = format!("scene.ron:{line}:{column}:");
+            let pointed = |said: &String| {
+                let mut parts = said.split(':').skip(1).map_while(|n| n.parse::<usize>().ok());
+                parts.next() == Some(line)
+                    && parts.next().is_some_and(|c| (column..column + BROKEN.len()).contains(&c))
+            };
             assert!(
-                lines.iter().any(|l| l.starts_with(&wanted)),
+                lines.iter().any(pointed),
                 "{}: {what} broken at {line}:{column}, but this is said:\n{}",
                 path.display(),
                 lines.join("\n"),

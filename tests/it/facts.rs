@@ -4,10 +4,10 @@ use std::collections::BTreeMap;
 use std::path::Path;
 
 /// One row: column name to text.
-pub type Row = BTreeMap<String, String>;
+pub(crate) type Row = BTreeMap<String, String>;
 
 /// The rows of `tests/facts/NAME`: a header line, then one row a line; fields may be quoted.
-pub fn rows(name: &str) -> Vec<Row> {
+pub(crate) fn rows(name: &str) -> Vec<Row> {
     let path = Path::new(env!("CARGO_MANIFEST_DIR"))
         .join("tests/facts")
         .join(name);
@@ -24,14 +24,14 @@ pub fn rows(name: &str) -> Vec<Row> {
 }
 
 /// The row of that id.
-pub fn row<'a>(rows: &'a [Row], id: &str) -> &'a Row {
+pub(crate) fn row<'a>(rows: &'a [Row], id: &str) -> &'a Row {
     rows.iter()
         .find(|row| row["id"] == id)
         .unwrap_or_else(|| panic!("no row {id}"))
 }
 
 /// A binary64 written in hexadecimal, as `0x1.8p+1`.
-pub fn hex(text: &str) -> f64 {
+pub(crate) fn hex(text: &str) -> f64 {
     let (sign, body) = match text.strip_prefix('-') {
         Some(rest) => (-1.0, rest),
         None => (1.0, text),

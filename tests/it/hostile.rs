@@ -186,7 +186,7 @@ fn mutilated_examples_end_in_an_error_or_a_drawing() {
             let texts = &texts;
             scope.spawn(move || {
                 for seed in (worker..COPIES).step_by(workers) {
-                    let mut chance = Chance(seed as u64 * 0x9e37_79b9_7f4a_7c15 + 1);
+                    let mut chance = Chance((seed as u64 + 1).wrapping_mul(0x9e37_79b9_7f4a_7c15));
                     let text = &texts[seed % texts.len()];
                     survives(&mutilated(text, &mut chance), &format!("copy {seed}"));
                 }

@@ -107,7 +107,8 @@ fn what_does_not_read_is_refused_with_its_column() {
         ("x^2'", 3),
         ("x'_a'", 4),
         (r"\frac{a}", 8),
-        (r"\frac\bar a b", 5),
+        (r"x_\,", 2),
+        ("x_}", 2),
         ("a % b", 2),
         ("a & b", 2),
         ("$a$", 0),
@@ -248,6 +249,8 @@ fn unicode_and_commands_set_the_same_label() {
         ("30°", r"30^\circ"),
         ("π→μν", r"\pi\to\mu\nu"),
         ("c²", "c^2"),
+        ("x₁⁻¹", "x_1^{-1}"),
+        (r"K_\mathrm{S}", r"K_{\mathrm{S}}"),
     ] {
         let (typed, named) = (typeset(typed).unwrap(), typeset(named).unwrap());
         assert_eq!(typed.pieces, named.pieces, "{}", named.source);
@@ -266,7 +269,8 @@ fn metrics_are_computer_moderns() {
     assert!((typeset("(").unwrap().depth - 0.25).abs() < 2e-3);
 }
 
-/// Every label's size against TeX's own, set in Computer Modern at 10 pt.
+/// Every label's size against TeX's own, set in Computer Modern at 10 pt. The faces here scale the 10 pt designs for
+/// scripts, so TeX is made to do the same.
 #[test]
 fn sizes_agree_with_tex() {
     let sources = [
@@ -289,15 +293,32 @@ fn sizes_agree_with_tex() {
         r"|\beta| \ll 1",
         r"\mathbf{p}\cdot\mathbf{q}",
     ];
-    let mut document = String::from(
-        "\\documentclass{article}\\usepackage{amsmath,amssymb}\\newbox\\it\\begin{document}\n",
-    );
-    for source in sources {
-        document.push_str(&format!(
-            "\\setbox\\it\\hbox{{${source}$}}\\typeout{{SIZE \\the\\wd\\it\\space\\the\\ht\\it\\space\\the\\dp\\it}}\n"
+    let fonts = [
+        (["OT1", "cmr", "m", "n"], "cmr10"),
+        (["OML", "cmm", "m", "it"], "cmmi10"),
+        (["OMS", "cmsy", "m", "n"], "cmsy10"),
+    ];
+    let mut lines =
+        vec![r"\documentclass{article}\usepackage{amsmath,amssymb}\newbox\it".to_owned()];
+    for (shape, font) in fonts {
+        lines.push(format!(
+            "\\DeclareFontShape{{{}}}{{<-> {font}}}{{}}",
+            shape.join("}{")
         ));
+        let shape = shape.join("/");
+        for size in ["7", "5"] {
+            lines.push(format!(
+                "\\expandafter\\let\\csname {shape}/{size}\\endcsname\\undefined"
+            ));
+        }
     }
-    document.push_str("x\\end{document}\n");
+    lines.push(r"\begin{document}".to_owned());
+    for source in sources {
+        lines.push(format!("\\setbox\\it\\hbox{{${source}$}}"));
+        lines.push(r"\typeout{SIZE \the\wd\it\space\the\ht\it\space\the\dp\it}".to_owned());
+    }
+    lines.push(r"x\end{document}".to_owned());
+    let document = lines.join("\n");
     let Some(log) = latex_log(&document) else {
         return;
     };
@@ -311,16 +332,19 @@ fn sizes_agree_with_tex() {
         })
         .collect();
     assert_eq!(sizes.len(), sources.len());
+    let mut far = Vec::new();
     for (source, size) in sources.iter().zip(sizes) {
         let label = typeset(source).unwrap();
         let ours = [label.width, label.height, label.depth];
-        for (ours, tex) in ours.iter().zip(&size) {
-            assert!(
-                (ours - tex).abs() < 0.03 + 0.02 * tex,
-                "{source}: {ours} em, TeX has {tex}"
-            );
+        if ours
+            .iter()
+            .zip(&size)
+            .any(|(ours, tex)| (ours - tex).abs() > 0.03 + 0.02 * tex)
+        {
+            far.push((source, ours, size));
         }
     }
+    assert!(far.is_empty(), "{far:?}");
 }
 
 #[test]
@@ -379,6 +403,21 @@ fn plain_names_never_fail_and_keep_their_letters() {
     assert!(plain(&"long ".repeat(100_000)).width < 200.0);
     let label = plain("x_1");
     assert_eq!(label.source, r"\text{x\_1}");
+}
+
+#[test]
+fn accented_latin_letters_are_set() {
+    let latin1 = ('\u{C0}'..='\u{FF}').filter(|letter| !"×÷ÐðÞþ".contains(*letter));
+    for letter in latin1.chain("ĆćČčĎĚěĞğİıŃńŇňŐőŘřŚśŞşŠšŤŮůŰűŹźŻżŽž".chars())
+    {
+        let label = typeset(&format!("\\text{{{letter}}}")).unwrap();
+        assert_eq!(label.letters, letter.to_string());
+        assert!(
+            plain(&letter.to_string()).source.contains(letter),
+            "{letter}"
+        );
+    }
+    assert!(plain("\u{D0}").source.contains("square"));
 }
 
 #[test]

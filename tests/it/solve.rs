@@ -14,7 +14,7 @@ const WEB: &str = r#"Scene(
         "start": At(t: 0, x: 0),
         "later": At(t: 30, x: 2),
         "moved": At(t: 1, x: 0, frame: "drift"),
-        "noon": Along(line: "cart", clock: "12 ns"),
+        "noon": Along(line: "cart", clock: "60 ns"),
         "crossing": Meeting(of: ["cart", "rail"]),
         "seen": LightFrom(event: "later", meets: "cart"),
     },
@@ -46,7 +46,7 @@ const WEB: &str = r#"Scene(
 fn web(from: &str, to: &str) -> String {
     let whole = WEB.replace(
         "\"start\": At(t: 0, x: 0),",
-        "\"start\": At(t: 0, x: 0),\n        \"late\": At(t: 90, x: 0),",
+        "\"start\": At(t: 0, x: 0),\n        \"late\": At(t: 200, x: 0),",
     );
     assert!(from.is_empty() || whole.contains(from), "{from}");
     if from.is_empty() {
@@ -130,7 +130,7 @@ fn a_bad_line_takes_along_its_events_and_their_lines() {
 
 #[test]
 fn a_trim_makes_no_dependency() {
-    let (gone, lines) = fallen("clock: \"12 ns\"", "clock: \"12 MeV\"");
+    let (gone, lines) = fallen("clock: \"60 ns\"", "clock: \"60 MeV\"");
     assert_eq!(gone, set(&["event noon", "line bent"]));
     assert_eq!(lines.len(), 1, "{lines:?}");
 }

@@ -1,5 +1,10 @@
 //! Where the paper lies in its region, and between mm on it and points on the screen.
 
+#![expect(
+    clippy::cast_possible_truncation,
+    reason = "the screen is in f32 points"
+)]
+
 use egui::{Pos2, Rect, Vec2, pos2, vec2};
 
 use crate::app::view::Camera;
@@ -30,7 +35,12 @@ pub(in crate::app) fn bounded(scale: f32) -> f32 {
 
 impl Lie {
     /// For a sheet of some mm in a region.
-    pub(super) fn new(rect: Rect, (width, height): (f64, f64), camera: Camera, pixels_per_point: f32) -> Self {
+    pub(super) fn new(
+        rect: Rect,
+        (width, height): (f64, f64),
+        camera: Camera,
+        pixels_per_point: f32,
+    ) -> Self {
         let room = room(rect);
         let size = vec2(width as f32, height as f32).max(vec2(1.0, 1.0));
         let (scale, offset) = match camera {

@@ -5,8 +5,8 @@ mod objects;
 mod picture;
 
 use egui::{
-    Align, Color32, CornerRadius, CursorIcon, PointerButton, Pos2, Rect, Response, Role, Sense, Shape, Stroke,
-    StrokeKind, Ui, WidgetInfo, pos2, vec2,
+    Align, Color32, CornerRadius, CursorIcon, PointerButton, Pos2, Rect, Response, Role, Sense,
+    Shape, Stroke, StrokeKind, Ui, WidgetInfo, pos2, vec2,
 };
 
 pub(super) use lie::{Lie, MM_TRUE, bounded};
@@ -17,7 +17,7 @@ use super::context::Context;
 use super::icon::Icon;
 use super::text;
 use super::theme::{CONTROL, FOCUS, MARGIN, ON_PAPER, Type};
-use super::widgets::{self, Look, colours};
+use super::widgets::{self, colours};
 use crate::plate::PanelPlace;
 use crate::scene::View as Kind;
 
@@ -29,7 +29,13 @@ const TAB: f32 = 24.0;
 const ARM: f32 = 14.0;
 
 /// Paints the sheet's region and reads it.
-pub(super) fn canvas(ui: &mut Ui, rect: Rect, context: &Context<'_>, picture: &mut Picture, wishes: &mut Wishes) {
+pub(super) fn canvas(
+    ui: &mut Ui,
+    rect: Rect,
+    context: &Context<'_>,
+    picture: &mut Picture,
+    wishes: &mut Wishes,
+) {
     let c = colours(ui);
     widgets::ground(ui, c.ground);
     let Some(laid) = &context.shown.laid else {
@@ -41,7 +47,12 @@ pub(super) fn canvas(ui: &mut Ui, rect: Rect, context: &Context<'_>, picture: &m
     let clip = ui.painter().with_clip_rect(rect);
     clip.rect_filled(lie.paper, CornerRadius::ZERO, Color32::WHITE);
     picture.paint(ui, &clip, rect, &lie, context);
-    clip.rect_stroke(lie.paper, CornerRadius::ZERO, Stroke::new(1.0, c.rule), StrokeKind::Outside);
+    clip.rect_stroke(
+        lie.paper,
+        CornerRadius::ZERO,
+        Stroke::new(1.0, c.rule),
+        StrokeKind::Outside,
+    );
     if let Some(panel) = context.shown.panels().get(context.view.panel) {
         brackets(&clip, lie.rect(panel.outer).intersect(lie.paper));
     }
@@ -89,20 +100,32 @@ fn tabs(ui: &mut Ui, lie: &Lie, context: &Context<'_>, wishes: &mut Wishes) {
         let active = i == context.view.panel;
         let set = Type::caption(active);
         let left = lie.rect(panel.outer).left().max(lie.paper.left()) + 11.0;
-        let end = panels.get(i + 1).map_or(lie.paper.right(), |p| lie.rect(p.outer).left());
+        let end = panels
+            .get(i + 1)
+            .map_or(lie.paper.right(), |p| lie.rect(p.outer).left());
         let letter = format!("({})  ", panel.letter);
         let room = (end - left - 30.0).max(20.0);
         let words = format!("{letter}{}", panel_words(panel, context));
         let shown = text::cut_end(ui.painter(), &words, set, room);
         let width = text::width(ui.painter(), &shown, set).ceil() + 20.0;
         let rect = Rect::from_min_size(pos2(left.round(), lie.paper.top() - TAB), vec2(width, TAB));
-        let response = widgets::press(ui, rect, &words.replace(super::rail::ACROSS, "across"), true);
+        let response = widgets::press(
+            ui,
+            rect,
+            &words.replace(super::rail::ACROSS, "across"),
+            true,
+        );
         let (fill, ink) = match active {
             true => (c.accent, c.on_accent),
             false if response.hovered() => (c.hover, c.text),
             false => (c.panel, c.text),
         };
-        let radius = CornerRadius { nw: 4, ne: 4, sw: 0, se: 0 };
+        let radius = CornerRadius {
+            nw: 4,
+            ne: 4,
+            sw: 0,
+            se: 0,
+        };
         ui.painter().rect_filled(rect, radius, fill);
         text::put(ui.painter(), rect.center(), Align::Center, &shown, set, ink);
         widgets::focus_ring(ui, &response, rect);
@@ -114,7 +137,9 @@ fn tabs(ui: &mut Ui, lie: &Lie, context: &Context<'_>, wishes: &mut Wishes) {
 
 /// The bar over the sheet: which plate, its size, zoom.
 fn bar(ui: &mut Ui, rect: Rect, lie: &Lie, context: &Context<'_>, wishes: &mut Wishes) {
-    let Some(laid) = &context.shown.laid else { return };
+    let Some(laid) = &context.shown.laid else {
+        return;
+    };
     let c = colours(ui);
     let back = Rect::from_min_size(rect.min, vec2(rect.width(), 40.0));
     if lie.paper.top() - TAB < back.bottom() {
@@ -124,7 +149,10 @@ fn bar(ui: &mut Ui, rect: Rect, lie: &Lie, context: &Context<'_>, wishes: &mut W
     let entries: Vec<String> = plates(context);
     let chosen = entries.get(context.view.plate).cloned().unwrap_or_default();
     let width = (text::width(ui.painter(), &chosen, Type::BodyStrong) + 44.0).clamp(84.0, 200.0);
-    let chooser = Rect::from_min_size(pos2(rect.left() + MARGIN, y - CONTROL / 2.0), vec2(width, CONTROL));
+    let chooser = Rect::from_min_size(
+        pos2(rect.left() + MARGIN, y - CONTROL / 2.0),
+        vec2(width, CONTROL),
+    );
     if let Some(i) = widgets::chooser(ui, chooser, "Plate", &chosen, &entries) {
         wishes.push(Command::Plate(i));
     }
@@ -135,8 +163,19 @@ fn bar(ui: &mut Ui, rect: Rect, lie: &Lie, context: &Context<'_>, wishes: &mut W
 }
 
 fn plates(context: &Context<'_>) -> Vec<String> {
-    let names: Vec<String> = context.document.opened.scene.plates.keys().map(ToString::to_string).collect();
-    if names.is_empty() { vec!["everything".to_owned()] } else { names }
+    let names: Vec<String> = context
+        .document
+        .opened
+        .scene
+        .plates
+        .keys()
+        .map(ToString::to_string)
+        .collect();
+    if names.is_empty() {
+        vec!["everything".to_owned()]
+    } else {
+        names
+    }
 }
 
 fn zoom(ui: &mut Ui, rect: Rect, y: f32, lie: &Lie, wishes: &mut Wishes) {
@@ -144,16 +183,26 @@ fn zoom(ui: &mut Ui, rect: Rect, y: f32, lie: &Lie, wishes: &mut Wishes) {
     let top = y - CONTROL / 2.0;
     let right = rect.right() - MARGIN;
     let fit = Rect::from_min_max(pos2(right - 40.0, top), pos2(right, top + CONTROL));
-    if widgets::button(ui, fit, "Fit", true, Look::Plain).clicked() {
+    if widgets::button(ui, fit, "Fit", true).clicked() {
         wishes.push(Command::Fit);
     }
-    let plus = Rect::from_min_size(pos2(fit.left() - 8.0 - CONTROL, top), vec2(CONTROL, CONTROL));
+    let plus = Rect::from_min_size(
+        pos2(fit.left() - 8.0 - CONTROL, top),
+        vec2(CONTROL, CONTROL),
+    );
     if widgets::icon_button(ui, plus, Icon::Plus, "Zoom in").clicked() {
         wishes.push(Command::ZoomBy(1.25));
     }
     let share = format!("{:.0} %", lie.scale / MM_TRUE * 100.0);
     let middle = pos2(plus.left() - 28.0, y);
-    text::put(ui.painter(), middle, Align::Center, &share, Type::Body, c.text);
+    text::put(
+        ui.painter(),
+        middle,
+        Align::Center,
+        &share,
+        Type::Body,
+        c.text,
+    );
     let minus = plus.translate(vec2(-56.0 - CONTROL, 0.0));
     if widgets::icon_button(ui, minus, Icon::Minus, "Zoom out").clicked() {
         wishes.push(Command::ZoomBy(0.8));
@@ -168,7 +217,9 @@ fn navigate(ui: &Ui, paper: &Response, rect: Rect, lie: &Lie, wishes: &mut Wishe
         }
         ui.ctx().set_cursor_icon(CursorIcon::Grabbing);
     }
-    let Some(pointer) = paper.hover_pos() else { return };
+    let Some(pointer) = paper.hover_pos() else {
+        return;
+    };
     let (wheel, pinch) = ui.input(|i| (i.smooth_scroll_delta().y, i.zoom_delta()));
     let factor = pinch * (wheel / 240.0).exp();
     if factor != 1.0 {

@@ -6,8 +6,8 @@ use kurbo::{ParamCurveNearest as _, Point, Shape as _};
 use super::Lie;
 use crate::app::command::{Command, Wishes};
 use crate::app::context::Context;
-use crate::app::theme::{FOCUS, ON_PAPER};
 use crate::app::facts;
+use crate::app::theme::{FOCUS, ON_PAPER};
 use crate::fault::ObjectId;
 use crate::marks::{Paint, Shape, Sheet};
 
@@ -18,13 +18,19 @@ const SIDE: f32 = 20.0;
 
 /// What the pointer does on paper.
 pub(super) fn point(paper: &Response, lie: &Lie, context: &Context<'_>, wishes: &mut Wishes) {
-    let Some(laid) = &context.shown.laid else { return };
+    let Some(laid) = &context.shown.laid else {
+        return;
+    };
     let under = |at: Pos2| hit(&laid.sheet, context, lie.mm(at), f64::from(lie.scale));
     if paper.clicked()
         && let Some(at) = paper.interact_pointer_pos()
     {
         let mm = lie.mm(at);
-        let inside = context.shown.panels().iter().position(|p| p.outer.contains(mm));
+        let inside = context
+            .shown
+            .panels()
+            .iter()
+            .position(|p| p.outer.contains(mm));
         wishes.extend(inside.map(Command::Panel));
         wishes.push(Command::Select(under(at)));
     }
@@ -43,7 +49,12 @@ fn hit(sheet: &Sheet, context: &Context<'_>, at: Point, scale: f64) -> Option<Ob
     let reach = REACH / scale;
     let mut best: Option<(f64, usize)> = None;
     for mark in &sheet.marks {
-        if context.shown.objects.get(mark.group).is_none_or(Option::is_none) {
+        if context
+            .shown
+            .objects
+            .get(mark.group)
+            .is_none_or(Option::is_none)
+        {
             continue;
         }
         let Some(off) = distance(&mark.shape, at, reach) else {
@@ -66,7 +77,10 @@ fn distance(shape: &Shape, at: Point, reach: f64) -> Option<f64> {
     let off = match shape {
         // A name counts like what it names, but what is drawn comes first.
         Shape::Label { .. } => outside(shape.ink_box(), at) + reach * 0.3,
-        Shape::Path { path, paint: Paint::Fill(_) } if path.contains(at) && path.bounding_box().area() < 40.0 => 0.0,
+        Shape::Path {
+            path,
+            paint: Paint::Fill(_),
+        } if path.contains(at) && path.bounding_box().area() < 40.0 => 0.0,
         Shape::Path { path, .. } => path
             .segments()
             .map(|s| s.nearest(at, 1e-3).distance_sq.sqrt())
@@ -82,8 +96,16 @@ fn outside(rect: kurbo::Rect, at: Point) -> f64 {
 }
 
 /// One node for each group that shows an object: found by name, focused with Tab, selected with Enter.
-pub(super) fn nodes(ui: &mut Ui, rect: Rect, lie: &Lie, context: &Context<'_>, wishes: &mut Wishes) {
-    let Some(laid) = &context.shown.laid else { return };
+pub(super) fn nodes(
+    ui: &mut Ui,
+    rect: Rect,
+    lie: &Lie,
+    context: &Context<'_>,
+    wishes: &mut Wishes,
+) {
+    let Some(laid) = &context.shown.laid else {
+        return;
+    };
     let builder = egui::UiBuilder::new().max_rect(rect).id_salt("objects");
     let mut child = ui.new_child(builder);
     let id = child.unique_id();
@@ -95,7 +117,14 @@ pub(super) fn nodes(ui: &mut Ui, rect: Rect, lie: &Lie, context: &Context<'_>, w
         let (Some(place), Some(Some(object))) = (place, context.shown.objects.get(group)) else {
             continue;
         };
-        node(&mut child, group, place.intersect(rect), object, context, wishes);
+        node(
+            &mut child,
+            group,
+            place.intersect(rect),
+            object,
+            context,
+            wishes,
+        );
     }
 }
 
@@ -126,7 +155,11 @@ fn node(
 ) {
     let id = ui.scope_id().with(("object", group));
     let missing = (egui::vec2(SIDE, SIDE) - place.size()).max(egui::Vec2::ZERO);
-    let response = ui.interact(place.expand2(missing / 2.0), id, Sense::focusable_noninteractive());
+    let response = ui.interact(
+        place.expand2(missing / 2.0),
+        id,
+        Sense::focusable_noninteractive(),
+    );
     let selected = context.view.selected.as_ref() == Some(object);
     response.widget_info(|| WidgetInfo::selected(Role::Button, true, selected, object.to_string()));
     let value = facts::coordinates(object, context);
@@ -147,6 +180,7 @@ fn node(
     if response.has_focus() {
         let ring = place.expand(2.0);
         let stroke = Stroke::new(FOCUS, ON_PAPER);
-        ui.painter().rect_stroke(ring, 4, stroke, egui::StrokeKind::Outside);
+        ui.painter()
+            .rect_stroke(ring, 4, stroke, egui::StrokeKind::Outside);
     }
 }

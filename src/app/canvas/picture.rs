@@ -1,6 +1,12 @@
 //! The picture of the marks: the sheet painted by the same code that writes it as PNG, at the screen's scale, kept
 //! until view or sheet change. What is selected gets its band in it, under the ink; what the pointer is over, a line.
 
+#![expect(
+    clippy::cast_possible_truncation,
+    clippy::cast_sign_loss,
+    reason = "the screen is in f32 points and whole pixels"
+)]
+
 use egui::{Color32, ColorImage, Painter, Rect, TextureHandle, TextureOptions, Ui, pos2, vec2};
 use tiny_skia::{BlendMode, FillRule, LineCap, LineJoin, Paint, Pixmap, Stroke, Transform};
 
@@ -33,14 +39,25 @@ pub(in crate::app) struct Picture {
 
 impl std::fmt::Debug for Picture {
     fn fmt(&self, f: &mut std::fmt::Formatter<'_>) -> std::fmt::Result {
-        f.debug_struct("Picture").field("key", &self.key).finish_non_exhaustive()
+        f.debug_struct("Picture")
+            .field("key", &self.key)
+            .finish_non_exhaustive()
     }
 }
 
 impl Picture {
     /// Paints the part of the paper that lies in the region.
-    pub(super) fn paint(&mut self, ui: &Ui, painter: &Painter, rect: Rect, lie: &Lie, context: &Context<'_>) {
-        let Some(laid) = &context.shown.laid else { return };
+    pub(super) fn paint(
+        &mut self,
+        ui: &Ui,
+        painter: &Painter,
+        rect: Rect,
+        lie: &Lie,
+        context: &Context<'_>,
+    ) {
+        let Some(laid) = &context.shown.laid else {
+            return;
+        };
         let ppp = ui.pixels_per_point();
         let visible = lie.paper.intersect(rect);
         if visible.width() < 1.0 || visible.height() < 1.0 {
@@ -48,7 +65,10 @@ impl Picture {
         }
         let px = |v: f32| (v * ppp).round().max(0.0) as u32;
         let from = (visible.min - lie.paper.min) * ppp;
-        let (left, top) = (from.x.floor().max(0.0) as u32, from.y.floor().max(0.0) as u32);
+        let (left, top) = (
+            from.x.floor().max(0.0) as u32,
+            from.y.floor().max(0.0) as u32,
+        );
         let (width, height) = (px(visible.width()).max(1), px(visible.height()).max(1));
         let key = Key {
             version: context.shown.version,
@@ -69,11 +89,22 @@ impl Picture {
             let corner = lie.paper.min + vec2(left as f32, top as f32) / ppp;
             let size = vec2(width as f32, height as f32) / ppp;
             let uv = Rect::from_min_max(pos2(0.0, 0.0), pos2(1.0, 1.0));
-            painter.image(texture.id(), Rect::from_min_size(corner, size), uv, Color32::WHITE);
+            painter.image(
+                texture.id(),
+                Rect::from_min_size(corner, size),
+                uv,
+                Color32::WHITE,
+            );
         }
     }
 
-    fn draw(&mut self, sheet: &Sheet, scale: f64, key: &Key, context: &Context<'_>) -> Option<Pixmap> {
+    fn draw(
+        &mut self,
+        sheet: &Sheet,
+        scale: f64,
+        key: &Key,
+        context: &Context<'_>,
+    ) -> Option<Pixmap> {
         let fresh = self
             .raster
             .as_ref()
@@ -110,12 +141,11 @@ impl Picture {
     fn keep(&mut self, ui: &Ui, pixmap: &Pixmap) {
         let size = [pixmap.width() as usize, pixmap.height() as usize];
         let image = ColorImage::from_rgba_premultiplied(size, pixmap.data());
-        match &mut self.texture {
-            Some(texture) => texture.set(image, TextureOptions::NEAREST),
-            None => {
-                let options = TextureOptions::NEAREST;
-                self.texture = Some(ui.ctx().load_texture("sheet", image, options));
-            }
+        let options = TextureOptions::NEAREST;
+        if let Some(texture) = &mut self.texture {
+            texture.set(image, options);
+        } else {
+            self.texture = Some(ui.ctx().load_texture("sheet", image, options));
         }
     }
 }
@@ -162,7 +192,11 @@ impl Chosen<'_> {
         };
         let wide = f64::from(BAND) * pixels_per_point;
         self.paint(&mut layer, &Paint::default(), 2.5 * pixels_per_point, wide);
-        for (dot, over) in pixmap.data_mut().chunks_exact_mut(4).zip(layer.data().chunks_exact(4)) {
+        for (dot, over) in pixmap
+            .data_mut()
+            .chunks_exact_mut(4)
+            .zip(layer.data().chunks_exact(4))
+        {
             let [r, g, b, _] = *dot else { continue };
             let paper = u32::from(r.min(g).min(b)) * u32::from(over[3]);
             for (channel, band) in dot.iter_mut().zip(SELECTION) {

@@ -1,6 +1,13 @@
 //! One triangle: positions to 1/256 px, integer edge functions with the top-left rule, blending of premultiplied
 //! colour in gamma space as egui's other painters do.
 
+#![expect(
+    clippy::cast_possible_truncation,
+    clippy::cast_possible_wrap,
+    clippy::cast_sign_loss,
+    reason = "the screen is in f32 points and whole pixels"
+)]
+
 use egui::epaint::Vertex;
 use egui::{Color32, ColorImage, Rect, TextureFilter, TextureOptions};
 
@@ -39,9 +46,9 @@ impl Texture {
         }
     }
 
-    fn texel(&self, x: i32, y: i32) -> [f32; 4] {
-        let x = x.clamp(0, self.width as i32 - 1) as usize;
-        let y = y.clamp(0, self.height as i32 - 1) as usize;
+    fn texel(&self, x: f32, y: f32) -> [f32; 4] {
+        let x = (x.max(0.0) as usize).min(self.width.saturating_sub(1));
+        let y = (y.max(0.0) as usize).min(self.height.saturating_sub(1));
         self.pixels
             .get(y * self.width + x)
             .map_or([0.0; 4], |c| c.to_array().map(f32::from))
@@ -51,20 +58,19 @@ impl Texture {
     fn sample(&self, u: f32, v: f32) -> [f32; 4] {
         let (x, y) = (u * self.width as f32, v * self.height as f32);
         if !self.linear {
-            return self.texel(x.floor() as i32, y.floor() as i32);
+            return self.texel(x.floor(), y.floor());
         }
         let (x, y) = (x - 0.5, y - 0.5);
         let (left, top) = ((x + 1e-3).floor(), (y + 1e-3).floor());
         let (right, down) = (x - left, y - top);
-        let (left, top) = (left as i32, top as i32);
         let corner = self.texel(left, top);
         if right < 2e-3 && down < 2e-3 {
             return corner;
         }
         let (b, c, d) = (
-            self.texel(left + 1, top),
-            self.texel(left, top + 1),
-            self.texel(left + 1, top + 1),
+            self.texel(left + 1.0, top),
+            self.texel(left, top + 1.0),
+            self.texel(left + 1.0, top + 1.0),
         );
         std::array::from_fn(|i| {
             let upper = corner[i] + (b[i] - corner[i]) * right;
@@ -129,7 +135,8 @@ impl Edge {
         match self.across {
             0 if start < 0 => span.1 = span.0,
             0 => {}
-            step if step > 0 => span.0 = span.0.max((-start).div_euclid(step) + i64::from((-start).rem_euclid(step) > 0)),
+            // Rounded up: the first column that is not outside.
+            step if step > 0 => span.0 = span.0.max(-start.div_euclid(step)),
             step => span.1 = span.1.min(start.div_euclid(-step) + 1),
         }
     }
@@ -282,7 +289,12 @@ mod tests {
     #[test]
     fn triangles_that_share_an_edge_cover_each_pixel_once() {
         let half = Color32::from_rgba_premultiplied(100, 0, 0, 100);
-        let (a, b, c, d) = (pos2(1.3, 2.1), pos2(14.2, 1.7), pos2(13.1, 14.6), pos2(2.4, 13.3));
+        let (a, b, c, d) = (
+            pos2(1.3, 2.1),
+            pos2(14.2, 1.7),
+            pos2(13.1, 14.6),
+            pos2(2.4, 13.3),
+        );
         let picture = painted(&[[a, b, c], [a, c, d]], half);
         let reds: std::collections::BTreeSet<u8> = picture.pixels().iter().map(|p| p[0]).collect();
         assert_eq!(reds.into_iter().collect::<Vec<_>>(), [0, 100]);
@@ -290,7 +302,12 @@ mod tests {
 
     #[test]
     fn a_square_on_whole_pixels_fills_just_these() {
-        let (a, b, c, d) = (pos2(3.0, 4.0), pos2(7.0, 4.0), pos2(7.0, 9.0), pos2(3.0, 9.0));
+        let (a, b, c, d) = (
+            pos2(3.0, 4.0),
+            pos2(7.0, 4.0),
+            pos2(7.0, 9.0),
+            pos2(3.0, 9.0),
+        );
         let picture = painted(&[[a, b, c], [a, c, d]], Color32::WHITE);
         for (i, pixel) in picture.pixels().iter().enumerate() {
             let inside = (3..7).contains(&(i % 16)) && (4..9).contains(&(i / 16));

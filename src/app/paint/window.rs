@@ -1,5 +1,10 @@
 //! A window painted in software, for machines whose OpenGL is missing or broken.
 
+#![expect(
+    clippy::cast_possible_truncation,
+    reason = "the screen is in f32 points"
+)]
+
 use std::num::NonZeroU32;
 use std::sync::Arc;
 use std::time::Instant;

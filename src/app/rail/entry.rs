@@ -8,11 +8,15 @@ use crate::app::command::{Command, Wishes};
 use crate::app::context::Context;
 use crate::app::text;
 use crate::app::theme::{CONTROL, MARGIN, Type, WIDE};
-use crate::app::widgets::{self, Entered, Look, colours};
+use crate::app::widgets::{self, Entered, colours};
 use crate::quantity::{Decimals, fixed, grouped, shortest, significant};
 use crate::scene::When;
 use crate::task::{SpeedForm, Speeds, rapidity_from, speeds};
 
+/// The narrowest window in which the row says what it is.
+const LABELLED: f32 = 1000.0;
+/// The narrowest window in which it says from where the frame is seen.
+const SEEN: f32 = 1180.0;
 /// Width of the chooser of frames.
 const CHOOSER: f32 = 136.0;
 
@@ -29,18 +33,39 @@ pub(super) fn row(ui: &mut Ui, layout: &Layout, context: &Context<'_>, wishes: &
     let wide = layout.rect.width() >= WIDE;
     let gap = if wide { 20.0 } else { 12.0 };
     let y = layout.rect.top() + ROW;
-    let left = layout.rect.left() + MARGIN;
-    let label = text::put(ui.painter(), pos2(left, y), Align::LEFT, "Viewing frame", Type::Body, c.quiet);
-    let mut x = (label.right() + 10.0).round();
+    let mut x = layout.rect.left() + MARGIN;
+    // In a narrow window the words give way before the numbers do.
+    if layout.rect.width() >= LABELLED {
+        let at = pos2(x, y);
+        let label = text::put(
+            ui.painter(),
+            at,
+            Align::LEFT,
+            "Viewing frame",
+            Type::Body,
+            c.quiet,
+        );
+        x = (label.right() + 10.0).round();
+    }
     let rect = Rect::from_min_size(pos2(x, y - CONTROL / 2.0), vec2(CHOOSER, CONTROL));
     frames(ui, rect, layout, context, wishes);
-    x = rect.right() + 8.0;
-    let seen = seen_from(context);
-    let place = text::put(ui.painter(), pos2(x, y), Align::LEFT, &seen, Type::Body, c.quiet);
-    x = place.right() + gap + 4.0;
+    x = rect.right() + gap;
+    if layout.rect.width() >= SEEN {
+        let at = pos2(rect.right() + 8.0, y);
+        let words = text::cut_end(ui.painter(), &seen_from(context), Type::Body, 220.0);
+        let place = text::put(ui.painter(), at, Align::LEFT, &words, Type::Body, c.quiet);
+        x = place.right() + gap + 4.0;
+    }
     let values = speeds(layout.rapidity);
     for (form, name) in FORMS {
-        let label = text::put(ui.painter(), pos2(x.round(), y), Align::LEFT, name, Type::Body, c.quiet);
+        let label = text::put(
+            ui.painter(),
+            pos2(x.round(), y),
+            Align::LEFT,
+            name,
+            Type::Body,
+            c.quiet,
+        );
         let left = (label.right() + 7.0).round();
         let size = vec2(widgets::field_width(layout.rect.width()), CONTROL);
         let rect = Rect::from_min_size(pos2(left, y - CONTROL / 2.0), size);
@@ -60,7 +85,7 @@ fn buttons(ui: &mut Ui, layout: &Layout, context: &Context<'_>, wishes: &mut Wis
             pos2(right - width, y - CONTROL / 2.0),
             pos2(right, y + CONTROL / 2.0),
         );
-        if widgets::button(ui, rect, words, enabled, Look::Plain).clicked() {
+        if widgets::button(ui, rect, words, enabled).clicked() {
             wishes.push(match words {
                 "To base" => Command::Frame(When::Base),
                 _ => Command::Rail(RailCommand::Range(None)),
@@ -155,7 +180,9 @@ fn field(
             text,
             fault: None,
         })),
-        Some(Entered::Done(text)) if plain(&text) == plain(&value) || text.trim().is_empty() => RailCommand::Entry(None),
+        Some(Entered::Done(text)) if plain(&text) == plain(&value) || text.trim().is_empty() => {
+            RailCommand::Entry(None)
+        }
         Some(Entered::Done(text)) => match rapidity_from(form, &plain(&text), values.rapidity) {
             Ok(rapidity) => {
                 wishes.push(Command::Frame(at_rapidity(rapidity)));
@@ -240,7 +267,9 @@ fn reason(ui: &Ui, rect: Rect, fault: &str) {
                 .inner_margin(8)
                 .show(ui, |ui| {
                     ui.set_max_width(280.0);
-                    let words = egui::RichText::new(fault).font(Type::Caption.font()).color(c.fault);
+                    let words = egui::RichText::new(fault)
+                        .font(Type::Caption.font())
+                        .color(c.fault);
                     ui.label(words);
                 });
         });
@@ -262,7 +291,10 @@ mod tests {
         let values = speeds(18.0);
         assert_eq!(shown(SpeedForm::Beta, &values), "1 \u{2212} 4.6e\u{2212}16");
         let values = speeds(-18.0);
-        assert_eq!(shown(SpeedForm::Beta, &values), "\u{2212}1 + 4.6e\u{2212}16");
+        assert_eq!(
+            shown(SpeedForm::Beta, &values),
+            "\u{2212}1 + 4.6e\u{2212}16"
+        );
     }
 
     #[test]
@@ -271,7 +303,10 @@ mod tests {
             let values = speeds(rapidity);
             for (form, name) in FORMS {
                 let back = rapidity_from(form, &plain(&shown(form, &values)), rapidity).unwrap();
-                assert!((back - rapidity).abs() < 1e-4, "{name} of {rapidity}: {back}");
+                assert!(
+                    (back - rapidity).abs() < 1e-4,
+                    "{name} of {rapidity}: {back}"
+                );
             }
         }
     }

@@ -1,24 +1,24 @@
 //! Where everything on the rail stands: pure functions of rapidities, widths of names and the rail's width. Lengths
 //! are points, x from the rail's left end.
 
+mod axis;
+mod close;
+
 use std::ops::Range;
 
 use crate::fault::Kind;
 use crate::num;
-use crate::quantity::{Decimals, fixed, grouped};
+use crate::quantity::{Decimals, fixed};
 use crate::solve::RapidityTick;
+
+pub(super) use axis::{Graduation, Scale, Step, graduate, key_step, whole};
+pub(super) use close::{CloseName, CloseUp, bars, close_up};
 
 /// From the rail's end to its axis, where the dots lead to the end stops.
 pub(super) const END: f32 = 100.0;
 /// From the rail's end to its walls, and to a close-up.
 pub(super) const EDGE: f32 = 16.0;
 const NAME_GAP: f32 = 12.0;
-const BLOCK_GAP: f32 = 10.0;
-/// How much wider a block of three names is than the widest of them.
-const BLOCK_EXTRA: f32 = 16.0;
-const LEADER_STEP: f32 = 5.0;
-const NUMBER_GAP: f32 = 64.0;
-const BAR_GAP: f32 = 2.0;
 /// Rapidities closer than this are one.
 const SAME: f64 = 1e-11;
 /// Stands for the sign of motion across, which the typeface lacks: it is painted.
@@ -114,169 +114,9 @@ fn kind(thing: &RapidityTick) -> TickKind {
         Kind::Frame if thing.is_base => TickKind::Base,
         Kind::Frame => TickKind::Frame,
         Kind::Particle => TickKind::Particle,
-        Kind::Line
-        | Kind::Scene
-        | Kind::Species
-        | Kind::Event
-        | Kind::Collision
-        | Kind::Plate => TickKind::Line,
-    }
-}
-
-/// The range of rapidity that holds all of these: 0.1 beyond, outward to halves, at least 2 wide.
-pub(super) fn whole(rapidities: impl IntoIterator<Item = f64>) -> (f64, f64) {
-    let (mut low, mut high) = (f64::INFINITY, f64::NEG_INFINITY);
-    for rapidity in rapidities.into_iter().filter(|r| r.is_finite()) {
-        low = low.min(rapidity);
-        high = high.max(rapidity);
-    }
-    if low > high {
-        return (-1.0, 1.0);
-    }
-    low = ((low - 0.1) * 2.0).floor() / 2.0;
-    high = ((high + 0.1) * 2.0).ceil() / 2.0;
-    let missing = (2.0 - (high - low)).max(0.0);
-    (low - missing / 2.0, high + missing / 2.0)
-}
-
-/// Rapidity to x and back, linear.
-#[derive(Clone, Copy, Debug, PartialEq)]
-pub(super) struct Scale {
-    pub(super) low: f64,
-    pub(super) high: f64,
-    pub(super) left: f32,
-    pub(super) right: f32,
-}
-
-impl Scale {
-    pub(super) fn x(&self, rapidity: f64) -> f32 {
-        let part = (rapidity - self.low) / (self.high - self.low);
-        self.left + (part * f64::from(self.right - self.left)) as f32
-    }
-
-    pub(super) fn rapidity(&self, x: f32) -> f64 {
-        let part = f64::from(x - self.left) / f64::from(self.right - self.left);
-        self.low + part * (self.high - self.low)
-    }
-
-    /// The rapidity at a point, no finer than a point is wide.
-    pub(super) fn pointed(&self, x: f32) -> f64 {
-        let grain = self.per_point();
-        let step = nice_below(grain);
-        let rapidity = self.rapidity(x).clamp(self.low, self.high);
-        step.times((rapidity / step.value()).round())
-    }
-
-    fn per_point(&self) -> f64 {
-        (self.high - self.low) / f64::from(self.right - self.left)
-    }
-
-    fn holds(&self, rapidity: f64) -> bool {
-        let slack = (self.high - self.low) * 1e-9;
-        (self.low - slack..=self.high + slack).contains(&rapidity)
-    }
-}
-
-/// 1, 2 or 5 times a power of ten, kept so that multiples come out as their decimals.
-#[derive(Clone, Copy, Debug, PartialEq)]
-pub(super) struct Step {
-    digit: f64,
-    power: i32,
-}
-
-impl Step {
-    pub(super) fn value(self) -> f64 {
-        self.times(1.0)
-    }
-
-    /// A multiple of it.
-    pub(super) fn times(self, count: f64) -> f64 {
-        let scale = num::pow(10.0, f64::from(self.power.abs()));
-        if self.power < 0 {
-            count * self.digit / scale
-        } else {
-            count * self.digit * scale
+        Kind::Line | Kind::Scene | Kind::Species | Kind::Event | Kind::Collision | Kind::Plate => {
+            TickKind::Line
         }
-    }
-
-    fn decimals(self) -> Decimals {
-        Decimals(usize::try_from(-self.power).unwrap_or(0))
-    }
-
-    /// How many strokes stand to a number.
-    fn parts(self) -> f64 {
-        if self.digit == 2.0 { 4.0 } else { 5.0 }
-    }
-}
-
-/// The smallest 1-2-5 step that is not below `value`.
-fn nice_above(value: f64) -> Step {
-    let power = num::log10(value).floor();
-    let lead = value / num::pow(10.0, power);
-    let power = power as i32;
-    match lead {
-        l if l <= 1.0 + 1e-9 => Step { digit: 1.0, power },
-        l if l <= 2.0 + 1e-9 => Step { digit: 2.0, power },
-        l if l <= 5.0 + 1e-9 => Step { digit: 5.0, power },
-        _ => Step {
-            digit: 1.0,
-            power: power + 1,
-        },
-    }
-}
-
-/// The largest 1-2-5 step that is not above `value`.
-fn nice_below(value: f64) -> Step {
-    let power = num::log10(value).floor();
-    let lead = value / num::pow(10.0, power);
-    let digit = match lead {
-        l if l < 2.0 => 1.0,
-        l if l < 5.0 => 2.0,
-        _ => 5.0,
-    };
-    Step {
-        digit,
-        power: power as i32,
-    }
-}
-
-/// What an arrow key moves the handle by on a span: a hundredth, rounded to 1-2-5; with Shift a tenth of that.
-pub(super) fn key_step(span: f64) -> f64 {
-    nice_below(span / 100.0 * 1.000_001).value()
-}
-
-/// Numbers and strokes under an axis.
-#[derive(Clone, Debug, PartialEq, Default)]
-pub(super) struct Graduation {
-    pub(super) numbers: Vec<(f32, String)>,
-    pub(super) strokes: Vec<f32>,
-}
-
-/// Numbers every half and strokes every tenth; by 1-2-5 where that would crowd or leave the axis bare.
-pub(super) fn graduate(scale: &Scale) -> Graduation {
-    let span = scale.high - scale.low;
-    let fitting = nice_above(f64::from(NUMBER_GAP) * scale.per_point());
-    let half = Step {
-        digit: 5.0,
-        power: -1,
-    };
-    let step = if span >= 2.0 && fitting.value() < half.value() {
-        half
-    } else {
-        fitting
-    };
-    let count = |per: f64| {
-        let low = (scale.low / per - 1e-6).ceil();
-        let high = (scale.high / per + 1e-6).floor();
-        (low as i64)..=(high as i64)
-    };
-    let minor = step.value() / step.parts();
-    Graduation {
-        numbers: count(step.value())
-            .map(|i| step.times(i as f64))
-            .map(|r| (scale.x(r), grouped(&fixed(r, step.decimals()))))
-            .collect(),
-        strokes: count(minor).map(|i| scale.x(i as f64 * minor)).collect(),
     }
 }
 
@@ -285,7 +125,7 @@ pub(super) fn graduate(scale: &Scale) -> Graduation {
 pub(super) fn spread(want: &[f32], widths: &[f32], gap: f32, bounds: (f32, f32)) -> Vec<f32> {
     let mut offsets = vec![0.0_f32; want.len()];
     for i in 1..want.len() {
-        offsets[i] = offsets[i - 1] + (widths[i - 1] + widths[i]) / 2.0 + gap;
+        offsets[i] = offsets[i - 1] + f32::midpoint(widths[i - 1], widths[i]) + gap;
     }
     let mut blocks: Vec<(f32, usize)> = Vec::new();
     for (wanted, offset) in want.iter().zip(&offsets) {
@@ -351,7 +191,13 @@ impl Name {
 pub(super) type Measure<'a> = &'a dyn Fn(&str) -> f32;
 
 /// Names of the ticks on the axis; runs that crowd become brackets.
-pub(super) fn names(ticks: &[Tick], things: &[RapidityTick], scale: &Scale, width: f32, measure: Measure<'_>) -> Vec<Name> {
+pub(super) fn names(
+    ticks: &[Tick],
+    things: &[RapidityTick],
+    scale: &Scale,
+    width: f32,
+    measure: Measure<'_>,
+) -> Vec<Name> {
     let mut names: Vec<Name> = ticks
         .iter()
         .enumerate()
@@ -399,7 +245,12 @@ fn crowded(names: &[Name]) -> Option<Range<usize>> {
     crowds
         .iter()
         .find(failing)
-        .or_else(|| crowds.iter().filter(|c| c.len() > 1).max_by_key(|c| c.len()))
+        .or_else(|| {
+            crowds
+                .iter()
+                .filter(|c| c.len() > 1)
+                .max_by_key(|c| c.len())
+        })
         .cloned()
         .or(Some(run))
 }
@@ -471,148 +322,6 @@ fn upward(value: f64) -> String {
     } else {
         crate::quantity::shortest(unit.times(count))
     }
-}
-
-/// A name of a close-up.
-#[derive(Clone, Debug, PartialEq)]
-pub(super) struct CloseName {
-    pub(super) tick: usize,
-    pub(super) text: String,
-    pub(super) left: f32,
-    pub(super) right: f32,
-    /// Which of the three rows, from below.
-    pub(super) row: usize,
-    /// Where its leader hangs.
-    pub(super) leader: f32,
-    /// Where its tick stands.
-    pub(super) x: f32,
-}
-
-/// A stretch of the axis, drawn larger.
-#[derive(Clone, Debug, PartialEq)]
-pub(super) struct CloseUp {
-    pub(super) scale: Scale,
-    pub(super) ticks: Range<usize>,
-    pub(super) names: Vec<CloseName>,
-    /// Runs of ticks too close to tell apart, from and to.
-    pub(super) bars: Vec<(f32, f32)>,
-}
-
-/// The close-up of a bracket.
-pub(super) fn close_up(bracket: &Name, ticks: &[Tick], width: f32, measure: Measure<'_>) -> CloseUp {
-    let shown = &ticks[bracket.ticks.clone()];
-    let (low, high) = match shown {
-        [first, .., last] => (first.rapidity, last.rapidity),
-        [one] => (one.rapidity, one.rapidity),
-        [] => (0.0, 0.0),
-    };
-    let margin = ((high - low) * 0.065).max(1e-12);
-    let scale = Scale {
-        low: low - margin,
-        high: high + margin,
-        left: EDGE,
-        right: width - EDGE,
-    };
-    let texts: Vec<String> = shown.iter().map(Tick::text).collect();
-    let widths: Vec<f32> = texts.iter().map(|t| measure(t)).collect();
-    let every = every_nth(&widths, width - 2.0 * EDGE - 16.0);
-    let chosen: Vec<usize> = (0..shown.len()).step_by(every).collect();
-    CloseUp {
-        names: threes(&chosen, shown, &texts, &widths, &scale)
-            .into_iter()
-            .map(|mut name| {
-                name.tick += bracket.ticks.start;
-                name
-            })
-            .collect(),
-        bars: bars(shown.iter().map(|t| scale.x(t.rapidity))),
-        ticks: bracket.ticks.clone(),
-        scale,
-    }
-}
-
-/// Every how many names fit in.
-fn every_nth(widths: &[f32], room: f32) -> usize {
-    let needed = |every: usize| {
-        let chosen: Vec<f32> = widths.iter().step_by(every).copied().collect();
-        let blocks = chosen.chunks(3).map(|c| widest(c) + BLOCK_EXTRA + BLOCK_GAP);
-        blocks.sum::<f32>() - BLOCK_GAP
-    };
-    (1..=widths.len().max(1))
-        .find(|&every| needed(every) <= room)
-        .unwrap_or(widths.len().max(1))
-}
-
-fn widest(widths: &[f32]) -> f32 {
-    widths.iter().copied().fold(0.0, f32::max)
-}
-
-/// Blocks of three names; within a block the second and third stand above the first and carry a leader at their end.
-fn threes(
-    chosen: &[usize],
-    ticks: &[Tick],
-    texts: &[String],
-    widths: &[f32],
-    scale: &Scale,
-) -> Vec<CloseName> {
-    let blocks: Vec<&[usize]> = chosen.chunks(3).collect();
-    let core: Vec<f32> = blocks
-        .iter()
-        .map(|b| widest(&b.iter().map(|&i| widths[i]).collect::<Vec<_>>()))
-        .collect();
-    let boxes: Vec<f32> = core.iter().map(|w| w + BLOCK_EXTRA).collect();
-    let hang = |block: usize, row: usize, i: usize| match row {
-        0 => core[block] - widths[i] / 2.0,
-        row => core[block] + 1.0 + LEADER_STEP * row as f32,
-    };
-    let x = |i: usize| scale.x(ticks[i].rapidity);
-    let want: Vec<f32> = blocks
-        .iter()
-        .enumerate()
-        .map(|(k, block)| {
-            let sum: f32 = block
-                .iter()
-                .enumerate()
-                .map(|(row, &i)| x(i) - hang(k, row, i))
-                .sum();
-            sum / block.len() as f32 + boxes[k] / 2.0
-        })
-        .collect();
-    let bounds = (scale.left + 8.0, scale.right - 8.0);
-    let placed = spread(&want, &boxes, BLOCK_GAP, bounds);
-    let mut names = Vec::new();
-    for (k, block) in blocks.iter().enumerate() {
-        let left = placed[k] - boxes[k] / 2.0;
-        for (row, &i) in block.iter().enumerate() {
-            let leader = left + hang(k, row, i);
-            let right = match row {
-                0 => left + core[k],
-                _ => leader + 2.0,
-            };
-            names.push(CloseName {
-                tick: i,
-                text: texts[i].clone(),
-                left: right - widths[i],
-                right,
-                row,
-                leader,
-                x: x(i),
-            });
-        }
-    }
-    names
-}
-
-/// Runs of ticks less than two points apart.
-pub(super) fn bars(places: impl Iterator<Item = f32>) -> Vec<(f32, f32)> {
-    let mut bars: Vec<(f32, f32)> = Vec::new();
-    for x in places {
-        match bars.last_mut() {
-            Some(bar) if x - bar.1 < BAR_GAP => bar.1 = x,
-            _ => bars.push((x, x)),
-        }
-    }
-    bars
 }
 
 #[cfg(test)]

@@ -1,5 +1,6 @@
 //! The rail: the viewing frame's rapidity, with a tick at the rapidity of everything in the scene.
 
+mod dimension;
 mod entry;
 mod layout;
 mod paint;
@@ -156,9 +157,10 @@ impl Layout {
     fn new(rect: Rect, shown: &Shown, view: &RailView, measure: layout::Measure<'_>) -> Self {
         let ticks = layout::gather(&shown.things);
         let rapidity = shown.rapidity();
-        let (low, high) = view.held.or(view.range).unwrap_or_else(|| {
-            layout::whole(ticks.iter().map(|t| t.rapidity).chain([rapidity]))
-        });
+        let (low, high) = view
+            .held
+            .or(view.range)
+            .unwrap_or_else(|| layout::whole(ticks.iter().map(|t| t.rapidity).chain([rapidity])));
         let width = rect.width();
         let scale = Scale {
             low,
@@ -192,7 +194,12 @@ impl Layout {
     }
 
     fn axis(&self) -> f32 {
-        self.rect.top() + if self.close.is_some() { AXIS_ABOVE } else { AXIS }
+        self.rect.top()
+            + if self.close.is_some() {
+                AXIS_ABOVE
+            } else {
+                AXIS
+            }
     }
 
     /// The scale on which the handle moves, and the y of its axis.

@@ -1,17 +1,23 @@
 //! Painting the rail.
 
-use egui::{Align, Color32, CornerRadius, Painter, Pos2, Rect, Shape, Stroke, StrokeKind, Ui, pos2, vec2};
+#![expect(
+    clippy::cast_possible_truncation,
+    reason = "the screen is in f32 points"
+)]
+
+use egui::{
+    Align, Color32, CornerRadius, Painter, Pos2, Rect, Shape, Stroke, StrokeKind, Ui, pos2, vec2,
+};
 
 use super::layout::{self, CloseUp, Graduation, Name, TickKind, graduate};
 use super::sense::handle_id;
-use super::{AXIS_CLOSE, Layout, NAMES, entry, measure};
+use super::{AXIS_CLOSE, Layout, NAMES, dimension, entry, measure};
 use crate::app::command::Wishes;
 use crate::app::context::Context;
 use crate::app::text;
 use crate::app::theme::{FOCUS, Palette, Type};
 use crate::app::widgets::{self, colours};
-use crate::quantity::{Decimals, fixed, grouped};
-use crate::task::speeds;
+use crate::quantity::{Decimals, fixed};
 
 /// Middles of a close-up's rows of names, from the lowest.
 pub(super) const CLOSE_ROWS: [f32; 3] = [125.0, 110.0, 95.0];
@@ -20,16 +26,15 @@ const SLANT: (f32, f32) = (140.0, 154.0);
 const TICK: f32 = 16.0;
 const TICK_ABOVE: f32 = 10.0;
 /// From an axis down to the middle of its numbers.
-const NUMBERS: f32 = 17.0;
+pub(super) const NUMBERS: f32 = 17.0;
 /// Numbers nearer to the handle are left out.
 const CLEAR: f32 = 26.0;
-const DIMENSION: f32 = 65.0;
 
 /// A painter with what it needs to know.
-struct Brush<'a> {
-    painter: &'a Painter,
-    c: &'static Palette,
-    layout: &'a Layout,
+pub(super) struct Brush<'a> {
+    pub(super) painter: &'a Painter,
+    pub(super) c: &'static Palette,
+    pub(super) layout: &'a Layout,
     standing: Option<usize>,
 }
 
@@ -52,7 +57,7 @@ pub(in crate::app) fn paint(ui: &mut Ui, rect: Rect, context: &Context<'_>, wish
         brush.close_up(close);
     }
     brush.names();
-    dimension(ui, &brush);
+    dimension::dimension(ui, &brush);
     brush.handle();
     if context.document.is_empty() {
         brush.hint();
@@ -79,12 +84,14 @@ fn handle_node(ui: &Ui, layout: &Layout, context: &Context<'_>) {
         node.set_min_numeric_value(layout.scale.low);
         node.set_max_numeric_value(layout.scale.high);
         node.set_value(words);
-        node.set_description("Left and Right move it, Control goes from tick to tick, Home to the base frame");
+        node.set_description(
+            "Left and Right move it, Control goes from tick to tick, Home to the base frame",
+        );
     });
 }
 
 impl Brush<'_> {
-    fn x(&self, x: f32) -> f32 {
+    pub(super) fn x(&self, x: f32) -> f32 {
         self.layout.rect.left() + x
     }
 
@@ -103,7 +110,8 @@ impl Brush<'_> {
 
     fn upright(&self, x: f32, from: f32, to: f32, stroke: Stroke) {
         let x = Self::crisp(x, stroke.width);
-        self.painter.line_segment([pos2(x, from), pos2(x, to)], stroke);
+        self.painter
+            .line_segment([pos2(x, from), pos2(x, to)], stroke);
     }
 
     /// The walls that no frame reaches, and the dots that say how far they are.
@@ -114,12 +122,17 @@ impl Brush<'_> {
         let (left, right) = (self.layout.rect.left(), self.layout.rect.right());
         for (wall, toward) in [(left + layout::EDGE, 1.0), (right - layout::EDGE, -1.0)] {
             let body = Rect::from_center_size(pos2(wall, axis), vec2(4.0, 2.0 * half));
-            self.painter.rect_filled(body, CornerRadius::ZERO, self.c.text);
+            self.painter
+                .rect_filled(body, CornerRadius::ZERO, self.c.text);
             let mut at = 4.0;
             while at < layout::END - layout::EDGE - 2.0 {
                 let from = wall + toward * at;
-                let dot = Rect::from_two_pos(pos2(from, axis - 1.0), pos2(from + toward * 2.0, axis + 1.0));
-                self.painter.rect_filled(dot, CornerRadius::ZERO, self.c.text);
+                let dot = Rect::from_two_pos(
+                    pos2(from, axis - 1.0),
+                    pos2(from + toward * 2.0, axis + 1.0),
+                );
+                self.painter
+                    .rect_filled(dot, CornerRadius::ZERO, self.c.text);
                 at += 6.0;
             }
             let (align, speed) = if toward > 0.0 {
@@ -129,10 +142,24 @@ impl Brush<'_> {
             };
             let x = wall + toward * 8.0;
             let above = axis - if whole { 14.0 } else { 11.0 };
-            text::put(self.painter, pos2(x, above), align, "light", Type::Caption, self.c.text);
+            text::put(
+                self.painter,
+                pos2(x, above),
+                align,
+                "light",
+                Type::Caption,
+                self.c.text,
+            );
             if whole {
                 let below = pos2(x, axis + NUMBERS);
-                text::put(self.painter, below, align, speed, Type::Caption, self.c.quiet);
+                text::put(
+                    self.painter,
+                    below,
+                    align,
+                    speed,
+                    Type::Caption,
+                    self.c.quiet,
+                );
             }
         }
     }
@@ -142,7 +169,8 @@ impl Brush<'_> {
         let axis = layout.axis();
         let (from, to) = (self.x(layout.scale.left), self.x(layout.scale.right));
         let bar = Rect::from_min_max(pos2(from, axis - 1.0), pos2(to, axis + 1.0));
-        self.painter.rect_filled(bar, CornerRadius::ZERO, self.c.text);
+        self.painter
+            .rect_filled(bar, CornerRadius::ZERO, self.c.text);
         let open = layout.close.as_ref().map(|c| c.ticks.clone());
         if open.is_none() {
             self.graduation(&graduate(&layout.scale), axis, true);
@@ -155,13 +183,19 @@ impl Brush<'_> {
             .filter(|t| visible(t.rapidity))
             .map(|t| layout.scale.x(t.rapidity))
             .collect();
-        for (from, to) in layout::bars(places.into_iter()).into_iter().filter(|b| b.1 > b.0) {
+        for (from, to) in layout::bars(places.into_iter())
+            .into_iter()
+            .filter(|b| b.1 > b.0)
+        {
             self.merged(from, to, axis - high, axis);
         }
         for (i, tick) in layout.ticks.iter().enumerate() {
             if visible(tick.rapidity) {
                 let colour = self.tick_colour(i);
-                let bare = layout.names.iter().any(|n| n.is_bracket() && n.ticks.contains(&i));
+                let bare = layout
+                    .names
+                    .iter()
+                    .any(|n| n.is_bracket() && n.ticks.contains(&i));
                 let kind = if bare { TickKind::Line } else { tick.kind };
                 let x = self.x(layout.scale.x(tick.rapidity));
                 self.tick(kind, pos2(x, axis - 1.0), high - 1.0, colour);
@@ -178,8 +212,12 @@ impl Brush<'_> {
     }
 
     fn merged(&self, from: f32, to: f32, top: f32, bottom: f32) {
-        let bar = Rect::from_min_max(pos2(self.x(from) - 0.5, top), pos2(self.x(to) + 0.5, bottom));
-        self.painter.rect_filled(bar, CornerRadius::ZERO, self.c.text);
+        let bar = Rect::from_min_max(
+            pos2(self.x(from) - 0.5, top),
+            pos2(self.x(to) + 0.5, bottom),
+        );
+        self.painter
+            .rect_filled(bar, CornerRadius::ZERO, self.c.text);
     }
 
     /// A tick by the kind of what stands there.
@@ -191,18 +229,33 @@ impl Brush<'_> {
             TickKind::Line => self.upright(x, top, foot.y, stroke),
             TickKind::Particle => {
                 self.upright(x, top + 4.0, foot.y, stroke);
-                let head = vec![pos2(x, top), pos2(x + 3.5, top + 7.0), pos2(x - 3.5, top + 7.0)];
-                self.painter.add(Shape::convex_polygon(head, colour, Stroke::NONE));
+                let head = vec![
+                    pos2(x, top),
+                    pos2(x + 3.5, top + 7.0),
+                    pos2(x - 3.5, top + 7.0),
+                ];
+                self.painter
+                    .add(Shape::convex_polygon(head, colour, Stroke::NONE));
             }
             TickKind::Frame => {
                 self.upright(x, top + 7.0, foot.y, stroke);
                 let square = Rect::from_min_size(pos2(x - 3.5, top), vec2(7.0, 7.0));
-                self.painter.rect(square, CornerRadius::ZERO, self.c.panel, stroke, StrokeKind::Inside);
+                self.painter.rect(
+                    square,
+                    CornerRadius::ZERO,
+                    self.c.panel,
+                    stroke,
+                    StrokeKind::Inside,
+                );
             }
             TickKind::Base => {
                 self.upright(x, top + 7.0, foot.y, stroke);
                 let square = Rect::from_min_size(pos2(x - 4.5, top), vec2(8.0, 8.0));
-                self.painter.rect_filled(square.translate(vec2(0.5, 0.0)), CornerRadius::ZERO, colour);
+                self.painter.rect_filled(
+                    square.translate(vec2(0.5, 0.0)),
+                    CornerRadius::ZERO,
+                    colour,
+                );
             }
         }
     }
@@ -223,7 +276,14 @@ impl Brush<'_> {
                 continue;
             }
             let at = pos2(x, axis + NUMBERS);
-            text::put(self.painter, at, Align::Center, number, Type::Caption, self.c.quiet);
+            text::put(
+                self.painter,
+                at,
+                Align::Center,
+                number,
+                Type::Caption,
+                self.c.quiet,
+            );
         }
     }
 
@@ -235,12 +295,22 @@ impl Brush<'_> {
             }
             let colour = if here { self.c.accent } else { self.c.text };
             let at = pos2(self.x(name.at), self.y(NAMES));
-            text::put(self.painter, at, Align::Center, &name.text, Type::caption(here), colour);
+            text::put(
+                self.painter,
+                at,
+                Align::Center,
+                &name.text,
+                Type::caption(here),
+                colour,
+            );
         }
     }
 
     fn is_open(&self, name: &Name) -> bool {
-        self.layout.close.as_ref().is_some_and(|c| c.ticks == name.ticks)
+        self.layout
+            .close
+            .as_ref()
+            .is_some_and(|c| c.ticks == name.ticks)
     }
 
     fn bracket(&self, name: &Name) {
@@ -250,18 +320,27 @@ impl Brush<'_> {
         if self.is_open(name) {
             let stroke = Stroke::new(1.0, self.c.accent);
             let around = Rect::from_min_max(pos2(from, axis - 13.0), pos2(to, axis + 7.0));
-            self.painter.rect_stroke(around, CornerRadius::ZERO, stroke, StrokeKind::Middle);
+            self.painter
+                .rect_stroke(around, CornerRadius::ZERO, stroke, StrokeKind::Middle);
             return;
         }
         let stroke = Stroke::new(1.0, self.c.text);
         let top = axis - 19.5;
-        let shape = vec![pos2(from, top + 4.0), pos2(from, top), pos2(to, top), pos2(to, top + 4.0)];
+        let shape = vec![
+            pos2(from, top + 4.0),
+            pos2(from, top),
+            pos2(to, top),
+            pos2(to, top + 4.0),
+        ];
         self.painter.add(Shape::line(shape, stroke));
     }
 
     fn close_up(&self, close: &CloseUp) {
         let axis = self.y(AXIS_CLOSE);
-        let (left, right) = (self.x(close.scale.left) + 0.5, self.x(close.scale.right) - 0.5);
+        let (left, right) = (
+            self.x(close.scale.left) + 0.5,
+            self.x(close.scale.right) - 0.5,
+        );
         let accent = Stroke::new(1.0, self.c.accent);
         if let Some(name) = self.layout.names.iter().find(|n| self.is_open(n)) {
             let from = self.layout.axis() + 7.0;
@@ -277,7 +356,8 @@ impl Brush<'_> {
             }
         }
         let bar = Rect::from_min_max(pos2(left, axis - 1.0), pos2(right, axis + 1.0));
-        self.painter.rect_filled(bar, CornerRadius::ZERO, self.c.text);
+        self.painter
+            .rect_filled(bar, CornerRadius::ZERO, self.c.text);
         self.graduation(&graduate(&close.scale), axis, true);
         for &(from, to) in &close.bars {
             if to > from {
@@ -298,7 +378,10 @@ impl Brush<'_> {
         let here = self.standing == Some(name.tick);
         let stroke = Stroke::new(1.0, if here { self.c.accent } else { self.c.quiet });
         let middle = self.y(CLOSE_ROWS[name.row]);
-        let (hang, foot) = (Self::crisp(self.x(name.leader), 1.0), Self::crisp(self.x(name.x), 1.0));
+        let (hang, foot) = (
+            Self::crisp(self.x(name.leader), 1.0),
+            Self::crisp(self.x(name.x), 1.0),
+        );
         let leader = vec![
             pos2(hang, middle + 8.0),
             pos2(hang, self.y(SLANT.0)),
@@ -308,7 +391,14 @@ impl Brush<'_> {
         self.painter.add(Shape::line(leader, stroke));
         let colour = if here { self.c.accent } else { self.c.text };
         let at = pos2(self.x(name.right), middle);
-        text::put(self.painter, at, Align::RIGHT, &name.text, Type::caption(here), colour);
+        text::put(
+            self.painter,
+            at,
+            Align::RIGHT,
+            &name.text,
+            Type::caption(here),
+            colour,
+        );
     }
 
     fn handle(&self) {
@@ -316,7 +406,11 @@ impl Brush<'_> {
         let (_, axis) = self.layout.working();
         let x = peg.center().x.round();
         let accent = self.c.accent;
-        let high = if self.layout.close.is_some() { 10.0 } else { TICK };
+        let high = if self.layout.close.is_some() {
+            10.0
+        } else {
+            TICK
+        };
         let line = Rect::from_min_max(pos2(x - 1.0, axis - high), pos2(x + 1.0, axis));
         // A named frame's or the base's square keeps its form above the hairline.
         let form = self.standing.map(|i| self.layout.ticks[i].kind);
@@ -336,79 +430,29 @@ impl Brush<'_> {
             pos2(left, bottom),
             pos2(left, top + 6.0),
         ];
-        self.painter.add(Shape::convex_polygon(shape, accent, Stroke::NONE));
+        self.painter
+            .add(Shape::convex_polygon(shape, accent, Stroke::NONE));
         for grip in [-2.5, 1.5] {
-            let stroke = Rect::from_min_max(pos2(x + grip, top + 9.0), pos2(x + grip + 1.0, top + 15.0));
-            self.painter.rect_filled(stroke, CornerRadius::ZERO, self.c.on_accent);
+            let stroke =
+                Rect::from_min_max(pos2(x + grip, top + 9.0), pos2(x + grip + 1.0, top + 15.0));
+            self.painter
+                .rect_filled(stroke, CornerRadius::ZERO, self.c.on_accent);
         }
     }
 
     fn hint(&self) {
-        let Some(last) = self.layout.names.last() else { return };
+        let Some(last) = self.layout.names.last() else {
+            return;
+        };
         let at = pos2(self.x(last.at + last.width / 2.0) + 16.0, self.y(NAMES));
         let words = "Every line, massive particle and named frame will stand here at its rapidity.";
-        text::put(self.painter, at, Align::LEFT, words, Type::Caption, self.c.quiet);
+        text::put(
+            self.painter,
+            at,
+            Align::LEFT,
+            words,
+            Type::Caption,
+            self.c.quiet,
+        );
     }
-}
-
-/// How far apart the two ticks about the pointer are.
-fn dimension(ui: &Ui, brush: &Brush<'_>) {
-    let layout = brush.layout;
-    let (scale, axis) = layout.working();
-    let band = Rect::from_min_max(
-        pos2(layout.rect.left(), axis - 20.0),
-        pos2(layout.rect.right(), axis + 4.0),
-    );
-    let Some(pointer) = ui.input(|i| i.pointer.hover_pos()).filter(|p| band.contains(*p)) else {
-        return;
-    };
-    if ui.ctx().layer_id_at(pointer) != Some(ui.layer_id()) || layout.close.is_some() {
-        return;
-    }
-    let at = scale.rapidity(pointer.x - layout.rect.left());
-    let Some(after) = layout.ticks.iter().position(|t| t.rapidity > at).filter(|&i| i > 0) else {
-        return;
-    };
-    let (low, high) = (layout.ticks[after - 1].rapidity, layout.ticks[after].rapidity);
-    let (from, to) = (brush.x(scale.x(low)), brush.x(scale.x(high)));
-    let words = apart(high - low);
-    let width = text::width(brush.painter, &words, Type::Caption);
-    let fits = to - from > width + 44.0;
-    let y = layout.rect.top() + DIMENSION;
-    if fits {
-        let (left, right) = (from + 5.0, to - 5.0);
-        let middle = f32::midpoint(left, right);
-        let half = width / 2.0 + 6.0;
-        arrow(brush, pos2(middle - half, y), pos2(left, y));
-        arrow(brush, pos2(middle + half, y), pos2(right, y));
-        let at = pos2(middle, y);
-        text::put(brush.painter, at, Align::Center, &words, Type::Caption, brush.c.accent);
-    } else {
-        let low = layout.rect.left() + 8.0 + width / 2.0;
-        let high = layout.rect.right() - 8.0 - width / 2.0;
-        let mut x = f32::midpoint(from, to).clamp(low, high);
-        let handle = layout.handle();
-        let reach = width / 2.0 + 12.0;
-        if (x - handle.center().x).abs() < reach + handle.width() / 2.0 {
-            x = if x < handle.center().x { handle.left() - reach } else { handle.right() + reach };
-        }
-        let at = pos2(x, axis + NUMBERS);
-        let back = Rect::from_center_size(at, vec2(width + 12.0, 17.0));
-        brush.painter.rect_filled(back, CornerRadius::same(4), brush.c.panel);
-        text::put(brush.painter, at, Align::Center, &words, Type::Caption, brush.c.accent);
-    }
-}
-
-fn apart(rapidity: f64) -> String {
-    let beta = grouped(&fixed(speeds(rapidity).beta, Decimals(6)));
-    format!("{} apart, β {beta}", grouped(&fixed(rapidity, Decimals(6))))
-}
-
-fn arrow(brush: &Brush<'_>, from: Pos2, to: Pos2) {
-    let y = from.y.floor() + 0.5;
-    let stroke = Stroke::new(1.0, brush.c.accent);
-    brush.painter.line_segment([pos2(from.x, y), pos2(to.x, y)], stroke);
-    let back = 6.0 * (from.x - to.x).signum();
-    let head = vec![pos2(to.x, y), pos2(to.x + back, y - 3.0), pos2(to.x + back, y + 3.0)];
-    brush.painter.add(Shape::convex_polygon(head, brush.c.accent, Stroke::NONE));
 }

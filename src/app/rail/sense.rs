@@ -1,7 +1,9 @@
 //! Hands and keys on the rail: read before anything is painted, so that all else follows within the frame.
 
 use egui::accesskit::{Action, ActionData};
-use egui::{CursorIcon, Event, EventFilter, Id, Key, Pos2, Rect, Role, Sense, Ui, WidgetInfo, pos2, vec2};
+use egui::{
+    CursorIcon, Event, EventFilter, Id, Key, Pos2, Rect, Role, Sense, Ui, WidgetInfo, pos2, vec2,
+};
 
 use super::layout::{Scale, key_step};
 use super::{AXIS_CLOSE, Entry, Layout, NAMES, RailCommand, at_rapidity, frame_of, measure};
@@ -21,7 +23,13 @@ pub(super) fn handle_id() -> Id {
 }
 
 /// Reads what is done to the rail.
-pub(in crate::app) fn sense(ui: &mut Ui, rect: Rect, shown: &Shown, view: &View, wishes: &mut Wishes) {
+pub(in crate::app) fn sense(
+    ui: &mut Ui,
+    rect: Rect,
+    shown: &Shown,
+    view: &View,
+    wishes: &mut Wishes,
+) {
     let layout = Layout::new(rect, shown, &view.rail, &measure(ui));
     wheel(ui, &layout, wishes);
     ticks(ui, &layout, shown, wishes);
@@ -29,19 +37,28 @@ pub(in crate::app) fn sense(ui: &mut Ui, rect: Rect, shown: &Shown, view: &View,
 }
 
 fn wheel(ui: &Ui, layout: &Layout, wishes: &mut Wishes) {
-    let band = Rect::from_min_max(layout.rect.left_top() + vec2(0.0, 36.0), layout.rect.right_bottom());
-    let Some(pointer) = ui.input(|i| i.pointer.hover_pos()).filter(|p| band.contains(*p)) else {
+    let band = Rect::from_min_max(
+        layout.rect.left_top() + vec2(0.0, 36.0),
+        layout.rect.right_bottom(),
+    );
+    let Some(pointer) = ui
+        .input(|i| i.pointer.hover_pos())
+        .filter(|p| band.contains(*p))
+    else {
         return;
     };
     if ui.ctx().layer_id_at(pointer) != Some(ui.layer_id()) {
         return;
     }
-    let turned = ui.input(|i| f64::from(i.smooth_scroll_delta().y) + f64::from(i.zoom_delta() - 1.0) * 200.0);
+    let turned = ui
+        .input(|i| f64::from(i.smooth_scroll_delta().y) + f64::from(i.zoom_delta() - 1.0) * 200.0);
     if turned == 0.0 {
         return;
     }
     let scale = &layout.scale;
-    let about = scale.rapidity(pointer.x - layout.rect.left()).clamp(scale.low, scale.high);
+    let about = scale
+        .rapidity(pointer.x - layout.rect.left())
+        .clamp(scale.low, scale.high);
     let factor = crate::num::exp(-turned / 200.0);
     let span = ((scale.high - scale.low) * factor).clamp(1e-6, 1300.0);
     let part = (about - scale.low) / (scale.high - scale.low);
@@ -168,16 +185,26 @@ fn handle(ui: &mut Ui, layout: &Layout, shown: &Shown, view: &View, wishes: &mut
         .on_hover_cursor(CursorIcon::ResizeHorizontal);
     response.widget_info(|| WidgetInfo::slider(true, layout.rapidity, "Viewing frame rapidity"));
     let (scale, _) = layout.working();
-    // The press counts, not the distance after which a press becomes a drag: nothing of the move is lost.
-    let pressed = ui.input(|i| i.pointer.primary_pressed()) && response.is_pointer_button_down_on();
-    let mut grip = view.rail.grip;
-    if let (true, Some(at)) = (pressed, response.interact_pointer_pos()) {
-        grip = at.x - peg.center().x;
+    // The press counts, not the distance after which a press becomes a drag, and the last move counts that comes
+    // with the release: nothing of the way is lost.
+    let (pressed, down, origin, at) = ui.input(|i| {
+        let p = &i.pointer;
+        (
+            p.primary_pressed(),
+            p.primary_down(),
+            p.press_origin(),
+            p.latest_pos(),
+        )
+    });
+    let mut grip = view.rail.held.map(|_| view.rail.grip);
+    if let (true, true, Some(origin)) = (pressed, response.is_pointer_button_down_on(), origin) {
+        let off = origin.x - peg.center().x;
         let axis = (layout.scale.low, layout.scale.high);
-        wishes.push(Command::Rail(RailCommand::Take { axis, grip }));
+        wishes.push(Command::Rail(RailCommand::Take { axis, grip: off }));
         response.request_focus();
+        grip = (at != Some(origin)).then_some(off);
     }
-    if let (true, Some(at)) = (response.is_pointer_button_down_on() && !pressed, response.interact_pointer_pos())
+    if let (Some(grip), Some(at)) = (grip, at)
         && ui.input(|i| i.pointer.delta().x != 0.0)
     {
         let x = at.x - grip;
@@ -188,7 +215,7 @@ fn handle(ui: &mut Ui, layout: &Layout, shown: &Shown, view: &View, wishes: &mut
         };
         wishes.push(Command::Frame(when));
     }
-    if view.rail.held.is_some() && !ui.input(|i| i.pointer.primary_down()) {
+    if view.rail.held.is_some() && !down {
         wishes.push(Command::Rail(RailCommand::Release));
     }
     asked(ui, layout, wishes);
@@ -211,7 +238,9 @@ fn asked(ui: &Ui, layout: &Layout, wishes: &mut Wishes) {
         for (action, by) in [(Action::Increment, step), (Action::Decrement, -step)] {
             let count = i.accesskit_action_requests(handle_id(), action).count();
             if count > 0 {
-                wishes.push(Command::Frame(at_rapidity(layout.rapidity + by * count as f64)));
+                wishes.push(Command::Frame(at_rapidity(
+                    layout.rapidity + by * count as f64,
+                )));
             }
         }
     });
@@ -243,7 +272,11 @@ fn keys(ui: &Ui, layout: &Layout, shown: &Shown, wishes: &mut Wishes) {
         let grid = size / 100.0;
         let rounded = (moved / grid).round() * grid;
         let per = (1.0 / grid).round();
-        let exact = if per >= 1.0 { (rounded * per).round() / per } else { rounded };
+        let exact = if per >= 1.0 {
+            (rounded * per).round() / per
+        } else {
+            rounded
+        };
         wishes.push(Command::Frame(at_rapidity(exact)));
     }
     if ui.input(|i| i.key_pressed(Key::Home)) {

@@ -55,7 +55,10 @@ impl Columns {
             .iter()
             .enumerate()
             .map(|(i, column)| {
-                let cells = table.rows.iter().filter_map(|r| Some((r.cells.get(i)?, r.is_sum)));
+                let cells = table
+                    .rows
+                    .iter()
+                    .filter_map(|r| Some((r.cells.get(i)?, r.is_sum)));
                 let widest = cells
                     .map(|(cell, strong)| match column.align {
                         Align::Left => measure(&cell.text, true),
@@ -65,13 +68,21 @@ impl Columns {
                 widest.max(measure(&head(column), false) * 0.93).ceil()
             })
             .collect();
-        let words = table.columns.iter().take_while(|c| c.align == Align::Left).count();
+        let words = table
+            .columns
+            .iter()
+            .take_while(|c| c.align == Align::Left)
+            .count();
         let count = table.columns.len() - words;
         let numbers: f32 = natural[words..].iter().map(|w| w.max(NUMBER.0) + GAP).sum();
         let names: f32 = natural[..words].iter().map(|w| w + GAP).sum::<f32>() - GAP + WORDS_GAP;
         let spare = (room - numbers - names).max(0.0);
         let most = names.max(NAMES);
-        let more = if count == 0 { 0.0 } else { (spare / count as f32).min(NUMBER.1 - NUMBER.0) };
+        let more = if count == 0 {
+            0.0
+        } else {
+            (spare / count as f32).min(NUMBER.1 - NUMBER.0)
+        };
         let widths: Vec<f32> = natural[words..]
             .iter()
             .map(|w| w.max((NUMBER.0 + more).max(NUMBER.0)))
@@ -84,12 +95,20 @@ impl Columns {
         for (i, width) in natural[..words].iter().enumerate() {
             let last = i + 1 == words;
             let right = if last { start - WORDS_GAP } else { x + width };
-            places.push(Place { left: x, right: right.max(x), align: Align::Left });
+            places.push(Place {
+                left: x,
+                right: right.max(x),
+                align: Align::Left,
+            });
             x += width + GAP;
         }
         let mut x = start;
         for width in widths {
-            places.push(Place { left: x, right: x + width, align: Align::Right });
+            places.push(Place {
+                left: x,
+                right: x + width,
+                align: Align::Right,
+            });
             x += width + GAP;
         }
         Self { places, words }
@@ -121,7 +140,10 @@ mod tests {
         let numbers = rows.first().map_or(0, |r| r.1.len());
         let mut columns = vec![column("particle", Align::Left)];
         columns.extend((0..numbers).map(|_| column("m", Align::Right)));
-        let cell = |text: &&str| Cell { value: None, text: (*text).to_owned() };
+        let cell = |text: &&str| Cell {
+            value: None,
+            text: (*text).to_owned(),
+        };
         let rows = rows
             .iter()
             .map(|(name, numbers)| Row {
@@ -131,7 +153,12 @@ mod tests {
                 cells: std::iter::once(name).chain(*numbers).map(cell).collect(),
             })
             .collect();
-        Table { name: "particles", columns, rows, notes: Vec::new() }
+        Table {
+            name: "particles",
+            columns,
+            rows,
+            notes: Vec::new(),
+        }
     }
 
     fn measure(text: &str, _: bool) -> f32 {
@@ -140,7 +167,10 @@ mod tests {
 
     #[test]
     fn columns_never_overlap_and_end_before_the_edge() {
-        let table = table(&[("a rather long name of a particle", &["1234.567890", "-0.5", "12.25"])]);
+        let table = table(&[(
+            "a rather long name of a particle",
+            &["1234.567890", "-0.5", "12.25"],
+        )]);
         for room in [300.0, 640.0, 1200.0] {
             let columns = Columns::new(&table, room, measure);
             for pair in columns.places.windows(2) {

@@ -1,8 +1,9 @@
 //! Collisions.
 
 use crate::scene::faults::Faults;
-use crate::scene::fields::{Form, one_of, text, texts};
+use crate::scene::fields::Form;
 use crate::scene::tree::Value;
+use crate::scene::values::{one_of, text, texts};
 use crate::scene::{Closure, Collision};
 
 /// Reads a collision. Without a closure nothing in it is unknown.

@@ -2,8 +2,9 @@
 
 use crate::scene::Event;
 use crate::scene::faults::Faults;
-use crate::scene::fields::{Form, list, number, text, unknown};
+use crate::scene::fields::Form;
 use crate::scene::tree::Value;
+use crate::scene::values::{list, number, text, unknown};
 
 /// The forms of an event.
 const FORMS: [&str; 4] = ["At", "Along", "Meeting", "LightFrom"];

@@ -2,8 +2,9 @@
 
 use super::velocity::{toward, velocity};
 use crate::scene::faults::Faults;
-use crate::scene::fields::{Form, number, text, texts, unknown};
+use crate::scene::fields::Form;
 use crate::scene::tree::{Shape, Value};
+use crate::scene::values::{number, text, texts, unknown};
 use crate::scene::{Frame, FramePart, LineOrParticle};
 
 /// The forms of a frame.

@@ -4,8 +4,9 @@ use super::velocity::{toward, velocity};
 use crate::quantity::Typed;
 use crate::scene::Line;
 use crate::scene::faults::Faults;
-use crate::scene::fields::{Form, number, pair, text, texts, unknown};
+use crate::scene::fields::Form;
 use crate::scene::tree::Value;
+use crate::scene::values::{number, pair, text, texts, unknown};
 
 /// The forms of a line.
 const FORMS: [&str; 4] = ["Free", "Broken", "Light", "Follows"];

@@ -2,8 +2,9 @@
 
 use super::velocity::{self, one_number, toward};
 use crate::scene::faults::Faults;
-use crate::scene::fields::{Form, bare_word, number, text, unknown};
+use crate::scene::fields::Form;
 use crate::scene::tree::Value;
+use crate::scene::values::{bare_word, number, text, unknown};
 use crate::scene::{Particle, State};
 
 const FIELDS: [&str; 7] = [

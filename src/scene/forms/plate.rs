@@ -2,8 +2,9 @@
 
 use crate::quantity::Typed;
 use crate::scene::faults::Faults;
-use crate::scene::fields::{Form, list, number, one_of, pair, short_text, text, texts, truth};
+use crate::scene::fields::Form;
 use crate::scene::tree::Value;
+use crate::scene::values::{list, number, one_of, pair, short_text, text, texts, truth};
 use crate::scene::{Arrows, Panel, Plate, Range, TimeAxis, View};
 
 const PANEL: [&str; 14] = [

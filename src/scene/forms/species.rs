@@ -2,8 +2,9 @@
 
 use crate::scene::SpeciesEntry;
 use crate::scene::faults::Faults;
-use crate::scene::fields::{Form, number, whole};
+use crate::scene::fields::Form;
 use crate::scene::tree::Value;
+use crate::scene::values::{number, whole};
 
 /// Reads a species. Without a charge it is neutral.
 pub(in crate::scene) fn species<'a>(

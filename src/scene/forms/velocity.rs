@@ -2,8 +2,8 @@
 
 use crate::quantity::Typed;
 use crate::scene::faults::Faults;
-use crate::scene::fields::{number, one_of, unknown};
 use crate::scene::tree::{Shape, Value};
+use crate::scene::values::{number, one_of, unknown};
 use crate::scene::{Toward, Velocity};
 
 /// The forms of a velocity.

@@ -5,9 +5,7 @@ use conewright::num::EPS;
 use proptest::prelude::*;
 
 use super::exact::{Big, absolute, big, relative};
-use super::generators::{
-    boost, displacement, planar_displacement, rapidity, two_rapidities,
-};
+use super::generators::{boost, displacement, planar_displacement, rapidity, two_rapidities};
 
 fn along_x(eta: f64) -> Boost {
     Boost::along_x(Rapidity::new(eta).unwrap())
@@ -76,10 +74,7 @@ fn the_wigner_angle_is_the_published_one_for_perpendicular_boosts() {
     let (b1, b2) = (0.6, 0.8);
     let (g1, g2) = (1.25, 5.0 / 3.0);
     let first = along_x(Rapidity::from_beta(b1).unwrap().value());
-    let second = Boost::new(
-        Rapidity::from_beta(b2).unwrap(),
-        Angle::from_degrees(90.0),
-    );
+    let second = Boost::new(Rapidity::from_beta(b2).unwrap(), Angle::from_degrees(90.0));
     let (whole, omega) = first.then(second).unwrap();
     let want = libm::atan(g1 * g2 * b1 * b2 / (g1 + g2)) * 180.0 / std::f64::consts::PI;
     assert!((omega - want).abs() < 1e-13, "{omega} {want}");

@@ -7,26 +7,21 @@ use dashu_float::FBig;
 use dashu_float::round::mode::HalfEven;
 
 /// A binary float of [`BITS`] bits.
-pub type Big = FBig<HalfEven, 2>;
+pub(super) type Big = FBig<HalfEven, 2>;
 
-/// Enough that sums of p+ and p- of things 600 apart in rapidity (e^1200 = 2^1731) keep every digit of an f64.
-const BITS: usize = 2200;
+/// Enough for `1 - beta` by subtraction at a rapidity of 300 (e^600 = 2^866) to all the digits of an f64.
+const BITS: usize = 1000;
 
 /// An f64 as it is.
-pub fn big(x: f64) -> Big {
-    big_to(x, BITS)
-}
-
-/// The same with fewer bits, for long sums.
-pub fn big_to(x: f64, bits: usize) -> Big {
+pub(super) fn big(x: f64) -> Big {
     Big::try_from(x)
         .expect("a finite number")
-        .with_precision(bits)
+        .with_precision(BITS)
         .value()
 }
 
 /// A decimal of a table.
-pub fn decimal(text: &str) -> Big {
+pub(super) fn decimal(text: &str) -> Big {
     let decimal = DBig::from_str(text).unwrap_or_else(|e| panic!("{text}: {e}"));
     decimal
         .with_precision(400)
@@ -37,12 +32,12 @@ pub fn decimal(text: &str) -> Big {
 }
 
 /// The f64 nearest.
-pub fn f64_of(x: &Big) -> f64 {
+pub(super) fn f64_of(x: &Big) -> f64 {
     x.to_f64().value()
 }
 
 /// |got - want| / |want|; 0 where both are 0.
-pub fn relative(got: f64, want: &Big) -> f64 {
+pub(super) fn relative(got: f64, want: &Big) -> f64 {
     if *want == Big::ZERO {
         return if got == 0.0 { 0.0 } else { f64::INFINITY };
     }
@@ -51,7 +46,7 @@ pub fn relative(got: f64, want: &Big) -> f64 {
 }
 
 /// |got - want|.
-pub fn absolute(got: f64, want: &Big) -> f64 {
+pub(super) fn absolute(got: f64, want: &Big) -> f64 {
     f64_of(&(big(got) - want)).abs()
 }
 

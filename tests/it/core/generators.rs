@@ -13,7 +13,7 @@ fn small() -> impl Strategy<Value = f64> {
 }
 
 /// A rapidity up to `limit` in size: near 0, everyday, or large.
-pub fn rapidity(limit: f64) -> impl Strategy<Value = f64> {
+pub(super) fn rapidity(limit: f64) -> impl Strategy<Value = f64> {
     prop_oneof![
         1 => Just(0.0),
         3 => small(),
@@ -23,7 +23,7 @@ pub fn rapidity(limit: f64) -> impl Strategy<Value = f64> {
 }
 
 /// Two rapidities, often nearly equal or nearly opposite.
-pub fn two_rapidities(limit: f64) -> impl Strategy<Value = (f64, f64)> {
+pub(super) fn two_rapidities(limit: f64) -> impl Strategy<Value = (f64, f64)> {
     prop_oneof![
         (rapidity(limit), rapidity(limit)),
         (rapidity(limit * 0.99), small()).prop_map(|(a, d)| (a, a + d)),
@@ -41,17 +41,17 @@ fn component() -> impl Strategy<Value = f64> {
 }
 
 /// A displacement without motion across.
-pub fn displacement() -> impl Strategy<Value = Displacement> {
+pub(super) fn displacement() -> impl Strategy<Value = Displacement> {
     (component(), component()).prop_map(|(u, v)| Displacement::new(u, v, 0.0))
 }
 
 /// A displacement of the plane.
-pub fn planar_displacement() -> impl Strategy<Value = Displacement> {
+pub(super) fn planar_displacement() -> impl Strategy<Value = Displacement> {
     (component(), component(), component()).prop_map(|(u, v, y)| Displacement::new(u, v, y))
 }
 
 /// A direction: the axes, near the axes, or any.
-pub fn angle() -> impl Strategy<Value = Angle> {
+pub(super) fn angle() -> impl Strategy<Value = Angle> {
     prop_oneof![
         2 => (-2..3_i32).prop_map(|q| Angle::from_degrees(90.0 * f64::from(q))),
         2 => (-2..3_i32, small()).prop_map(|(q, d)| Angle::from_degrees(90.0 * f64::from(q) + d)),
@@ -60,13 +60,13 @@ pub fn angle() -> impl Strategy<Value = Angle> {
 }
 
 /// A planar boost up to a rapidity.
-pub fn boost(limit: f64) -> impl Strategy<Value = Boost> {
+pub(super) fn boost(limit: f64) -> impl Strategy<Value = Boost> {
     (rapidity(limit), angle())
         .prop_map(|(eta, angle)| Boost::new(Rapidity::new(eta).expect("in range"), angle))
 }
 
 /// A particle: massive (1e-9 to 1e3) or light, in any direction, up to a rapidity.
-pub fn particle(limit: f64) -> impl Strategy<Value = Momentum> {
+pub(super) fn particle(limit: f64) -> impl Strategy<Value = Momentum> {
     let massive = (-9.0..3.0_f64, rapidity(limit), angle()).prop_map(|(e, eta, angle)| {
         Momentum::moving(
             libm::pow(10.0, e),

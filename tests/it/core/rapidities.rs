@@ -42,7 +42,17 @@ fn every_form_reads_to_the_rapidity_that_arbitrary_precision_gives() {
         let got = Rapidity::from_beta(beta).unwrap().value();
         assert!(relative(got, &want) < 2.0 * EPS, "beta {beta}");
     }
-    for &d in &[1.0 - 1e-12, 0.9, 0.51, 0.5, 0.1, 1e-5, 1e-20, 1e-200, 1e-300] {
+    for &d in &[
+        1.0 - 1e-12,
+        0.9,
+        0.51,
+        0.5,
+        0.1,
+        1e-5,
+        1e-20,
+        1e-200,
+        1e-300,
+    ] {
         let want = ((big(2.0) - big(d)) / big(d)).ln() / big(2.0);
         let got = Rapidity::from_one_minus_beta(d, Side::Plus).unwrap();
         assert!(relative(got.value(), &want) < 2.0 * EPS, "1 - beta {d}");
@@ -83,7 +93,9 @@ fn what_no_velocity_can_be_is_a_domain_error() {
         Rapidity::from_celerity(f64::INFINITY),
         Rapidity::from_doppler(0.0),
         Rapidity::from_doppler(-2.0),
-        Rapidity::new(400.0).unwrap().then(Rapidity::new(300.0).unwrap()),
+        Rapidity::new(400.0)
+            .unwrap()
+            .then(Rapidity::new(300.0).unwrap()),
     ];
     for result in wrong {
         assert!(

@@ -75,7 +75,9 @@ fn dragging_bare_paper_moves_it_and_selects_nothing() {
     let mut window = relay_window();
     let paper = window.get_by_role(Role::Canvas).rect();
     let from = paper.left_bottom() + egui::vec2(12.0, -8.0);
-    let before = window.get_by_role_and_label(Role::Button, "event turn").rect();
+    let before = window
+        .get_by_role_and_label(Role::Button, "event turn")
+        .rect();
     window.hover_at(from);
     window.run();
     window.drag_at(from);
@@ -84,7 +86,12 @@ fn dragging_bare_paper_moves_it_and_selects_nothing() {
     window.run();
     window.drop_at(from + egui::vec2(40.0, -20.0));
     window.run();
-    let after = window.get_by_role_and_label(Role::Button, "event turn").rect();
+    let after = window
+        .get_by_role_and_label(Role::Button, "event turn")
+        .rect();
     let moved = after.center() - before.center();
-    assert!((moved - egui::vec2(40.0, -20.0)).length() < 1.5, "{moved:?}");
+    assert!(
+        (moved - egui::vec2(40.0, -20.0)).length() < 1.5,
+        "{moved:?}"
+    );
 }

@@ -2,7 +2,10 @@
 
 use std::path::{Path, PathBuf};
 
-use conewright::app::{self, Desk, paint::{Picture, SoftPainter}};
+use conewright::app::{
+    self, Desk,
+    paint::{Picture, SoftPainter},
+};
 use egui::accesskit::Role;
 use egui_kittest::kittest::{NodeT as _, Queryable as _};
 use egui_kittest::{Harness, SnapshotOptions, TestRenderer};
@@ -17,16 +20,29 @@ impl TestRenderer for Soft {
         self.0.free_textures(delta);
     }
 
-    fn render(&mut self, ctx: &egui::Context, output: &egui::FullOutput) -> Result<image::RgbaImage, String> {
+    fn render(
+        &mut self,
+        ctx: &egui::Context,
+        output: &egui::FullOutput,
+    ) -> Result<image::RgbaImage, String> {
         let scale = ctx.pixels_per_point();
         let size = ctx.content_rect().size() * scale;
-        let (width, height) = (size.x.round() as usize, size.y.round() as usize);
+        let (width, height) = (pixels(size.x), pixels(size.y));
         let primitives = ctx.tessellate(output.shapes.clone(), scale);
-        let mut picture = Picture::filled(width, height, [0, 0, 0, 255]);
+        let mut picture = Picture::filled(width as usize, height as usize, [0, 0, 0, 255]);
         self.0.paint(&mut picture, &primitives, scale);
         let bytes = picture.pixels().concat();
-        image::RgbaImage::from_raw(width as u32, height as u32, bytes).ok_or_else(|| "no picture".to_owned())
+        image::RgbaImage::from_raw(width, height, bytes).ok_or_else(|| "no picture".to_owned())
     }
+}
+
+#[expect(
+    clippy::cast_possible_truncation,
+    clippy::cast_sign_loss,
+    reason = "a window's side in whole pixels"
+)]
+fn pixels(side: f32) -> u32 {
+    side.round() as u32
 }
 
 pub(super) type Window = Harness<'static, Desk>;
@@ -59,7 +75,11 @@ pub(super) fn open(scene: Option<&Path>, setup: Setup) -> Window {
         .with_max_steps(40)
         .with_context_setup(app::install)
         .renderer(Soft::default())
-        .with_options(SnapshotOptions::new().threshold(0.8).output_path(pictures()))
+        .with_options(
+            SnapshotOptions::new()
+                .threshold(0.8)
+                .output_path(pictures()),
+        )
         .build_ui_state(whole, Desk::new(scene.map(Path::to_owned)));
     window.run();
     window
@@ -113,7 +133,9 @@ pub(super) fn entry(window: &Window, name: &str) -> String {
 pub(super) fn enter(window: &mut Window, name: &str, text: &str) {
     window.get_by_role_and_label(Role::TextInput, name).focus();
     window.run();
-    window.get_by_role_and_label(Role::TextInput, name).type_text(text);
+    window
+        .get_by_role_and_label(Role::TextInput, name)
+        .type_text(text);
     window.run();
     window.key_press(egui::Key::Enter);
     window.run();
@@ -121,7 +143,10 @@ pub(super) fn enter(window: &mut Window, name: &str, text: &str) {
 
 /// Presses on the handle, moves it by some points and lets go.
 pub(super) fn drag_handle(window: &mut Window, by: f32, release: bool) {
-    let from = window.get_by_role_and_label(Role::Slider, "Viewing frame rapidity").rect().center();
+    let from = window
+        .get_by_role_and_label(Role::Slider, "Viewing frame rapidity")
+        .rect()
+        .center();
     window.hover_at(from);
     window.run();
     window.drag_at(from);

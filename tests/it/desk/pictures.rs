@@ -26,7 +26,10 @@ fn mid_drag() {
 
 #[test]
 fn in_the_dark() {
-    let setup = Setup { theme: egui::Theme::Dark, ..Setup::default() };
+    let setup = Setup {
+        theme: egui::Theme::Dark,
+        ..Setup::default()
+    };
     let mut window = open(Some(&relay()), setup);
     click(&mut window, "go to courier");
     click(&mut window, "Events");

@@ -34,12 +34,19 @@ fn a_scene_opens_by_its_path() {
     window.run();
     window.key_press_modifiers(Modifiers::COMMAND, Key::A);
     window.run();
-    window.get_by_role_and_label(Role::TextInput, "Path").type_text(path.to_str().unwrap());
+    window
+        .get_by_role_and_label(Role::TextInput, "Path")
+        .type_text(path.to_str().unwrap());
     window.run();
     window.key_press(Key::Enter);
     window.run();
     assert!(is_open(&window));
-    assert!(window.query_by_role_and_label(Role::TextInput, "Path").is_none(), "the chooser is put away");
+    assert!(
+        window
+            .query_by_role_and_label(Role::TextInput, "Path")
+            .is_none(),
+        "the chooser is put away"
+    );
 }
 
 #[test]
@@ -49,11 +56,17 @@ fn a_path_that_does_not_open_is_said_and_keeps_the_chooser() {
     window.run();
     window.key_press_modifiers(Modifiers::COMMAND, Key::A);
     window.run();
-    window.get_by_role_and_label(Role::TextInput, "Path").type_text("/nowhere/none.ron");
+    window
+        .get_by_role_and_label(Role::TextInput, "Path")
+        .type_text("/nowhere/none.ron");
     window.run();
     window.key_press(Key::Enter);
     window.run();
-    assert!(window.query_by_role_and_label(Role::TextInput, "Path").is_some());
+    assert!(
+        window
+            .query_by_role_and_label(Role::TextInput, "Path")
+            .is_some()
+    );
     assert!(window.query_all_by_label_contains("none.ron").count() >= 1);
 }
 
@@ -61,7 +74,9 @@ fn a_path_that_does_not_open_is_said_and_keeps_the_chooser() {
 fn the_folder_is_listed_and_a_scene_in_it_opens_by_a_click() {
     let mut window = open(Some(&relay()), Setup::default());
     click(&mut window, "File");
-    window.get_by(|n| n.label().is_some_and(|l| l.starts_with("Open…"))).click();
+    window
+        .get_by(|n| n.label().is_some_and(|l| l.starts_with("Open…")))
+        .click();
     window.run();
     click(&mut window, "relay.ron");
     assert!(is_open(&window));
@@ -83,7 +98,10 @@ impl egui::DroppedFile for Dropped {
 #[test]
 fn a_dropped_file_opens() {
     let mut window = empty();
-    window.input_mut().dropped_files.push(Arc::new(Dropped(relay())));
+    window
+        .input_mut()
+        .dropped_files
+        .push(Arc::new(Dropped(relay())));
     window.run();
     assert!(is_open(&window));
 }

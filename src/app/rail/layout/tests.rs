@@ -149,7 +149,10 @@ fn a_close_up_of_forty_names_overlaps_nowhere() {
         for b in &close.names[i + 1..] {
             let apart = a.row != b.row || a.right + 4.0 <= b.left || b.right + 4.0 <= a.left;
             assert!(apart, "{a:?} {b:?}");
-            assert!(a.leader < b.leader && a.x <= b.x, "leaders cross: {a:?} {b:?}");
+            assert!(
+                a.leader < b.leader && a.x <= b.x,
+                "leaders cross: {a:?} {b:?}"
+            );
             // A leader comes down through the rows below its name.
             let through = b.row > a.row && (a.left..=a.right).contains(&b.leader);
             let back = a.row > b.row && (b.left..=b.right).contains(&a.leader);
@@ -169,7 +172,11 @@ fn a_close_up_with_too_many_names_leaves_some_out_evenly() {
     let ticks = gather(&all);
     let placed = super::names(&ticks, &all, &axis(&ticks), WIDTH, &measure);
     let close = close_up(&placed[0], &ticks, WIDTH, &measure);
-    let steps: Vec<usize> = close.names.windows(2).map(|w| w[1].tick - w[0].tick).collect();
+    let steps: Vec<usize> = close
+        .names
+        .windows(2)
+        .map(|w| w[1].tick - w[0].tick)
+        .collect();
     assert!(steps.iter().all(|&s| s == steps[0] && s > 1), "{steps:?}");
 }
 
