@@ -504,7 +504,10 @@ fn what_is_wrong_with_a_plate_is_said() {
             r"(panels: [(view: Spacetime, range: (x: (-1, 1), t: (-1, 1)))])",
             "event late: it lies outside",
         ),
-        (r#"(width: "600 cm", panels: [(view: Spacetime)])"#, "over 5 m"),
+        (
+            r#"(width: "600 cm", panels: [(view: Spacetime)])"#,
+            "over 5 m",
+        ),
         (
             r#"(width: "2 mm", panels: [(view: Spacetime)])"#,
             "too little",
@@ -561,4 +564,14 @@ fn a_scene_without_plates_shows_everything() {
     for title in ["event rounding", "line skiff", "line beam", "particle k"] {
         assert!(paths(&laid.sheet, title).count() > 0, "{title}");
     }
+}
+
+#[test]
+fn what_hangs_on_an_unread_object_is_no_second_fault() {
+    let text = r#"Scene(format: 1, base: "b",
+        events: { "bad": Nowhere(t: 0), "good": At(t: 1, x: 0) },
+        plates: { "p": (panels: [(view: Spacetime, events: ["bad", "good"], cones: ["bad"])]) })"#;
+    let laid = laid(text, "p");
+    assert_eq!(laid.faults, []);
+    assert!(paths(&laid.sheet, "event good").count() > 0);
 }
