@@ -5,12 +5,13 @@ use std::sync::Arc;
 use kurbo::{Point, Rect, Vec2};
 
 use super::arrow::{head, shaft_end};
-use super::canvas::{Canvas, Layer, Rank, Seek, Window, Wish};
+use super::canvas::{Canvas, Layer, Rank, Seek, Wish};
 use super::names::{Names, number};
 use super::outline;
 use super::place::Candidate;
 use super::style::{INK, Style};
 use super::ticks::Ticks;
+use super::window::Window;
 use crate::fault::ObjectId;
 use crate::label::Label;
 use crate::marks::Ink;
@@ -165,7 +166,7 @@ impl Axes {
             (false, &self.x, &ticks.x, plane.x0, plane.x1),
         ] {
             let f = axis.factor;
-            if ticks.step.times(1) / f * scale <= canvas.style.half_from || ticks.ticks.is_empty() {
+            if ticks.step.times(1) / f * scale <= canvas.style.half_from || ticks.marks.is_empty() {
                 continue;
             }
             for v in ticks.step.halves(low * f, high * f) {
@@ -329,7 +330,7 @@ pub(super) fn wish(
 
 fn places(ticks: &Ticks, factor: f64, mm: impl Fn(f64) -> Point) -> Vec<(i64, Point)> {
     ticks
-        .ticks
+        .marks
         .iter()
         .map(|tick| (tick.count, mm(tick.value / factor)))
         .collect()

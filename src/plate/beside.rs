@@ -17,17 +17,17 @@ pub(super) struct Spot {
     pub(super) order: f64,
 }
 
-/// Which sides of a stroke are tried.
+/// Which side of a stroke is tried first.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
-pub(super) enum Sides {
-    /// Right of it to the eye first, then left.
-    RightFirst,
-    /// Left first.
-    LeftFirst,
-    /// Above first, then below.
-    AboveFirst,
-    /// Below first.
-    BelowFirst,
+pub(super) enum Side {
+    /// Right of it to the eye, then left.
+    Right,
+    /// Left, then right.
+    Left,
+    /// Above, then below.
+    Above,
+    /// Below, then above.
+    Below,
 }
 
 /// What the second side costs, ems.
@@ -42,28 +42,34 @@ pub(super) fn beside(
     canvas: &Canvas<'_>,
     label: &Label,
     spots: &[Spot],
-    sides: Sides,
+    first: Side,
     half: f64,
 ) -> Vec<Candidate> {
     let size = canvas.size(label);
     let em = canvas.style.em;
+    let top = canvas.window.field.y0;
     let [nearest, _, farthest] = canvas.style.name;
     let mut found = Vec::with_capacity(spots.len() * 2 * DISTANCES);
     for spot in spots {
         let unit = spot.along.normalize();
         let normal = Vec2::new(-unit.y, unit.x);
-        let toward = match sides {
-            Sides::RightFirst => normal.x,
-            Sides::LeftFirst => -normal.x,
-            Sides::AboveFirst => -normal.y,
-            Sides::BelowFirst => normal.y,
+        let toward = match first {
+            Side::Right => normal.x,
+            Side::Left => -normal.x,
+            Side::Above => -normal.y,
+            Side::Below => normal.y,
         };
-        let first = if toward >= 0.0 { normal } else { -normal };
+        let side = if toward >= 0.0 { normal } else { -normal };
         for i in 0..DISTANCES {
             let far = (farthest - nearest) * i as f64 / (DISTANCES - 1) as f64;
-            for (side, cost) in [(first, 0.0), (-first, OTHER_SIDE)] {
+            for (side, cost) in [(side, 0.0), (-side, OTHER_SIDE)] {
+                let rect = box_beside(spot.foot, side, size, nearest + half + far);
+                // Above the field stand titles and symbols alone.
+                if rect.y0 < top && spot.foot.y >= top {
+                    continue;
+                }
                 found.push(Candidate {
-                    rect: box_beside(spot.foot, side, size, nearest + half + far),
+                    rect,
                     cost: far + (spot.order + cost) * em,
                     leader: Some(spot.foot + side * (half + OFF_STROKE)),
                 });

@@ -6,7 +6,7 @@ use kurbo::{Point, Rect, Vec2};
 
 use super::arrow::{Form, arrow};
 use super::axes::{Axes, Axis, wish};
-use super::beside::{Sides, Spot, beside, spots};
+use super::beside::{Side, Spot, beside, spots};
 use super::canvas::{Canvas, Layer, Rank};
 use super::clip;
 use super::curve::{Branch, Hyperbola};
@@ -15,40 +15,16 @@ use super::job::{Job, letter};
 use super::names::number;
 use super::place::Candidate;
 use super::spacetime::{primed, primes_of};
-use super::style::{CLARET, CURVE_TOLERANCE, GUIDE, INK, OCHRE, OWNERS, TEAL};
+use super::style::{CLARET, CURVE_TOLERANCE, GUIDE, INK, OCHRE, TEAL};
+use super::vectors::{Sum, Vector, of_collision, of_particles};
 use super::words::kind;
-use crate::dynamics::{Momentum, Total};
-use crate::fault::{Fault, Kind, ObjectId};
+use crate::fault::{Fault, Kind};
 use crate::label::Label;
 use crate::marks::Ink;
 use crate::num::hypot;
 use crate::quantity::{Dimension, significant};
 use crate::scene::{Arrows, Panel};
 use crate::solve::{Solved, Viewing};
-
-/// One momentum arrow in the plane: x is px, y is E.
-#[derive(Clone, Debug)]
-struct Vector {
-    object: ObjectId,
-    form: Form,
-    ink: Ink,
-    tail: Point,
-    tip: Point,
-    transverse_mass: f64,
-    has_across: bool,
-}
-
-/// The sum of all vectors before (or of all).
-#[derive(Clone, Debug)]
-struct Sum {
-    object: ObjectId,
-    tip: Point,
-    /// Its vertex: the transverse mass of the sum.
-    mass: f64,
-    has_across: bool,
-    /// Its arrow is drawn: it is none of the others.
-    has_arrow: bool,
-}
 
 /// An energy-momentum panel's contents.
 #[derive(Clone, Debug)]
@@ -183,7 +159,7 @@ impl Energy {
             self.sides(job, canvas);
         }
         if self.is_projection {
-            job.remark(canvas, "E and px: a projection");
+            job.remark(canvas, "projection on E and px");
         }
     }
 
@@ -214,7 +190,7 @@ impl Energy {
                 along: Vec2::new(0.0, 1.0),
                 order: 0.0,
             };
-            beside(canvas, &label, &[spot], Sides::RightFirst, canvas.style.dot)
+            beside(canvas, &label, &[spot], Side::Right, canvas.style.dot)
         } else {
             candidates
         };
@@ -272,13 +248,13 @@ impl Energy {
                 let middle = a.midpoint(b);
                 let turn = (tip - foot).cross(middle - foot);
                 if turn > 0.0 || (turn == 0.0 && form != Form::Before) {
-                    Sides::RightFirst
+                    Side::Right
                 } else {
-                    Sides::LeftFirst
+                    Side::Left
                 }
             }
-            _ if b.x < a.x => Sides::LeftFirst,
-            _ => Sides::RightFirst,
+            _ if b.x < a.x => Side::Left,
+            _ => Side::Right,
         };
         beside(canvas, label, &spots((a, b), parts), sides, half)
     }
@@ -299,7 +275,7 @@ impl Energy {
                 let label = job.names.word("total");
                 let half = canvas.style.stroke.total / 2.0;
                 let places = spots(ends, &[0.7, 0.62, 0.78, 0.54, 0.46, 0.38, 0.3, 0.84]);
-                let candidates = beside(canvas, &label, &places, Sides::RightFirst, half);
+                let candidates = beside(canvas, &label, &places, Side::Right, half);
                 wish(canvas, Rank::Word, (group, None), (label, INK), candidates);
             }
         }
@@ -317,7 +293,7 @@ impl Energy {
                 .names
                 .math(&format!(r"{symbol}\,{{=}}\,{value}\,{unit}"));
             let places = along_shell(canvas, sum.mass, sum.tip.x);
-            let candidates = beside(canvas, &label, &places, Sides::BelowFirst, pen.1 / 2.0);
+            let candidates = beside(canvas, &label, &places, Side::Below, pen.1 / 2.0);
             wish(
                 canvas,
                 Rank::Curve,
@@ -359,9 +335,13 @@ impl Energy {
             seen.push(mass);
             let group = canvas.group(&format!("shell of {}", vector.object));
             shell(canvas, group, mass, (GUIDE, canvas.style.stroke.fine));
+            if mass * canvas.window.scale() < canvas.style.name[0] {
+                // Its vertex is lost in the light lines: a name would name those.
+                continue;
+            }
             let label = job.names.math(&shell_label(job.solved, vector));
             let places = along_shell(canvas, mass, 0.0);
-            let candidates = beside(canvas, &label, &places, Sides::AboveFirst, 0.0);
+            let candidates = beside(canvas, &label, &places, Side::Above, 0.0);
             let blame = (!canvas.style.is_large()).then(|| vector.object.clone());
             wish(
                 canvas,
@@ -427,156 +407,6 @@ fn collision(job: &mut Job<'_>, field: &str, panel: &Panel) -> Option<Arc<str>> 
     only.filter(|_| panel.particles.is_none()).cloned()
 }
 
-fn of_collision(
-    job: &mut Job<'_>,
-    name: &Arc<str>,
-    from: &Viewing,
-    arrows: Arrows,
-) -> (Vec<Vector>, Option<Sum>) {
-    let Some(collision) = job.solved.collisions.get(name) else {
-        return (Vec::new(), None);
-    };
-    let before = boosted(job, &collision.before, from);
-    let after = boosted(job, &collision.after, from);
-    let total = Total::of(&before.iter().map(|p| p.1).collect::<Vec<_>>());
-    let tip = Point::new(total.px, total.energy);
-    let mut vectors = Vec::new();
-    for (form, ink, parts) in [(Form::Before, CLARET, &before), (Form::After, TEAL, &after)] {
-        let whole = form == Form::Before || collision.balanced();
-        chain(
-            &mut vectors,
-            parts,
-            (form, |_| ink),
-            arrows,
-            whole.then_some(tip),
-        );
-    }
-    let object = ObjectId {
-        kind: Kind::Collision,
-        name: name.clone(),
-    };
-    let has_arrow = before.len() != 1
-        && (after.len() != 1 || arrows == Arrows::FromOrigin && !collision.balanced());
-    let sum = (!before.is_empty()).then(|| sum_of(object, &total, has_arrow));
-    (vectors, sum)
-}
-
-fn of_particles(
-    job: &mut Job<'_>,
-    field: &str,
-    panel: &Panel,
-    from: &Viewing,
-    arrows: Arrows,
-) -> (Vec<Vector>, Option<Sum>) {
-    let list = if panel.collision.is_some() {
-        Some(&[][..])
-    } else {
-        panel.particles.as_deref()
-    };
-    let known = job.solved.particles.keys().cloned().collect();
-    let names = job.chosen(list, Kind::Particle, &format!("{field}.particles"), known);
-    let parts = boosted(job, &names, from);
-    let total = Total::of(&parts.iter().map(|p| p.1).collect::<Vec<_>>());
-    let tip = Point::new(total.px, total.energy);
-    let mut vectors = Vec::new();
-    let owner = |i: usize| OWNERS[i % OWNERS.len()];
-    chain(
-        &mut vectors,
-        &parts,
-        (Form::Before, owner),
-        arrows,
-        Some(tip),
-    );
-    let has_sum = arrows == Arrows::TipToTail && parts.len() > 1;
-    let sum = has_sum.then(|| sum_of(job.plate.clone(), &total, true));
-    (vectors, sum)
-}
-
-fn sum_of(object: ObjectId, total: &Total, has_arrow: bool) -> Sum {
-    Sum {
-        object,
-        tip: Point::new(total.px, total.energy),
-        mass: hypot(total.invariant_mass, total.py),
-        has_across: total.py.abs() > ACROSS * total.momentum_scale.max(total.energy),
-        has_arrow,
-    }
-}
-
-/// Momentum across that is more than rounding, relative to the whole.
-const ACROSS: f64 = 1e-12;
-
-/// Particles as a frame has them; those that leave the range are left out.
-fn boosted(job: &mut Job<'_>, names: &[Arc<str>], from: &Viewing) -> Vec<(ObjectId, Momentum)> {
-    let mut found = Vec::new();
-    for name in names {
-        let Some(particle) = job.solved.particles.get(name) else {
-            continue;
-        };
-        let id = ObjectId {
-            kind: Kind::Particle,
-            name: name.clone(),
-        };
-        match particle.momentum.boosted(from.boost) {
-            Ok(momentum) => found.push((id, momentum)),
-            Err(wrong) => job.names.fault(
-                Fault::new(
-                    id,
-                    "",
-                    format!("it cannot be drawn from this frame: {wrong}"),
-                    "choose a slower frame",
-                )
-                .finding(),
-            ),
-        }
-    }
-    found
-}
-
-/// Arrows of some particles, all from the origin or each from the tip of the one before. Chained, those of `before`
-/// go by rising slope and those of `after` by falling slope, so that the closed figure is convex and no two of its
-/// sides cross; the last tip is put on the common one.
-fn chain(
-    vectors: &mut Vec<Vector>,
-    parts: &[(ObjectId, Momentum)],
-    (form, ink): (Form, impl Fn(usize) -> Ink),
-    arrows: Arrows,
-    whole: Option<Point>,
-) {
-    let mut order: Vec<usize> = (0..parts.len()).collect();
-    if arrows == Arrows::TipToTail {
-        order.sort_by(|&i, &j| {
-            let slopes = parts[i].1.beta_x().total_cmp(&parts[j].1.beta_x());
-            if form == Form::After {
-                slopes.reverse()
-            } else {
-                slopes
-            }
-        });
-    }
-    let mut at = Point::ORIGIN;
-    for (i, &k) in order.iter().enumerate() {
-        let (object, momentum) = &parts[k];
-        let step = Vec2::new(momentum.px(), momentum.energy());
-        let (tail, tip) = match arrows {
-            Arrows::FromOrigin => (Point::ORIGIN, step.to_point()),
-            Arrows::TipToTail => {
-                let last = i + 1 == order.len();
-                (at, whole.filter(|_| last).unwrap_or(at + step))
-            }
-        };
-        at = tip;
-        vectors.push(Vector {
-            object: object.clone(),
-            form,
-            ink: ink(k),
-            tail,
-            tip,
-            transverse_mass: momentum.transverse_mass(),
-            has_across: momentum.py().abs() > ACROSS * momentum.energy(),
-        });
-    }
-}
-
 /// The light lines from the origin, and the word beside the right-hand one.
 fn light(job: &mut Job<'_>, canvas: &mut Canvas<'_>) {
     let window = canvas.window;
@@ -591,7 +421,7 @@ fn light(job: &mut Job<'_>, canvas: &mut Canvas<'_>) {
         let ends = (window.mm(a), window.mm(b));
         canvas.line(Layer::Light, group, ends, pen);
         let places = spots(ends, &[0.86, 0.8, 0.74, 0.68, 0.92, 0.6, 0.5, 0.4]);
-        let beside = beside(canvas, &label, &places, Sides::BelowFirst, 0.0);
+        let beside = beside(canvas, &label, &places, Side::Below, 0.0);
         candidates.extend(beside.into_iter().map(|c| Candidate {
             cost: c.cost + order * canvas.style.em,
             ..c
@@ -619,7 +449,7 @@ fn along_shell(canvas: &Canvas<'_>, mass: f64, px: f64) -> Vec<Spot> {
     let window = canvas.window;
     let plane = window.plane;
     let step = canvas.style.name_step / window.scale();
-    let count = ((plane.width() / step).floor() as usize).min(MOST_SPOTS);
+    let count = super::whole::count(plane.width() / step).min(MOST_SPOTS);
     let mut found = Vec::new();
     for i in 0..=count {
         let p = plane.width().mul_add(i as f64 / count as f64, plane.x0);

@@ -49,12 +49,11 @@ impl Wanted {
     /// The height a field of some width would like.
     pub(super) fn height(&self, width: f64, style: &Style) -> f64 {
         let scale = self.scale_by_width(width, style);
-        let (bounds, height) = match self.y {
-            Some((low, high)) => (GIVEN_ASPECT, (high - low) * scale),
-            None => {
-                let room = self.span().height * scale + style.air + style.below_axis;
-                (FITTED_ASPECT, room)
-            }
+        let (bounds, height) = if let Some((low, high)) = self.y {
+            (GIVEN_ASPECT, (high - low) * scale)
+        } else {
+            let room = self.span().height * scale + style.air + style.below_axis;
+            (FITTED_ASPECT, room)
         };
         height.clamp(bounds.0 * width, bounds.1 * width)
     }
@@ -71,7 +70,7 @@ impl Wanted {
             (Some(x), Some(y)) => given(x, y, room),
             (Some((x0, x1)), None) => {
                 let by_width = room.width / (x1 - x0);
-                let by_height = self.inner_height(room, style) / self.span().height;
+                let by_height = inner_height(room, style) / self.span().height;
                 let scale = by_width.min(by_height).max(LEAST_PART * by_width);
                 let size = Size::new((x1 - x0) * scale, room.height);
                 let y0 = self.lower_edge(room.height, scale, style);
@@ -85,17 +84,13 @@ impl Wanted {
                 (Rect::new(x0, y0, x1, y0 + size.height / scale), size, false)
             }
             (None, None) => {
-                let by_height = self.inner_height(room, style) / self.span().height;
+                let by_height = inner_height(room, style) / self.span().height;
                 let scale = by_height.min(self.scale_by_width(room.width, style));
                 let (x0, x1) = self.across(room.width, scale);
                 let y0 = self.lower_edge(room.height, scale, style);
                 (Rect::new(x0, y0, x1, y0 + room.height / scale), room, false)
             }
         }
-    }
-
-    fn inner_height(&self, room: Size, style: &Style) -> f64 {
-        (room.height - style.air - style.below_axis).max(room.height / 3.0)
     }
 
     /// The contents in the middle.
@@ -111,6 +106,11 @@ impl Wanted {
         let below = style.below_axis.min(height / 4.0) / scale;
         self.contents.y0 - spare / 2.0 - below
     }
+}
+
+/// The height in which contents stand.
+fn inner_height(room: Size, style: &Style) -> f64 {
+    (room.height - style.air - style.below_axis).max(room.height / 3.0)
 }
 
 /// Both ranges as given; a field that would be a sliver shows more of the plane around its middle instead.

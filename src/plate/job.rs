@@ -4,10 +4,11 @@ use std::sync::Arc;
 
 use kurbo::Point;
 
-use super::canvas::{Canvas, Groups, Rank};
+use super::canvas::{Canvas, Rank};
 use super::inks::Inks;
 use super::names::Names;
 use super::style::Style;
+use super::window::Groups;
 use crate::fault::{Fault, Kind, ObjectId, nearest};
 use crate::geometry::{Boost, Displacement, Leg, Rapidity};
 use crate::quantity::{Dimension, Typed, Unit, read};
@@ -209,11 +210,6 @@ impl Job<'_> {
         None
     }
 
-    /// A base-frame displacement from the base's origin as a point of a viewing frame's plane: x right, t up.
-    pub(super) fn seen(&self, at: Displacement, from: &Viewing) -> Option<Point> {
-        drawable(from.boost.apply(at - from.origin).ok()?)
-    }
-
     /// Findings for labels that found no place.
     pub(super) fn unplaced(&mut self, index: usize, missing: Vec<(Rank, Option<ObjectId>)>) {
         let letter = letter(index);
@@ -224,19 +220,16 @@ impl Job<'_> {
                     format!("an axis' title has no free place on panel {letter}"),
                     "make the panel wider, or show less",
                 ),
-                (Rank::Curve, Some(object)) if object.kind == Kind::Plate => self.finding(
+                (_, Some(object)) if object.kind == Kind::Plate => self.finding(
                     &format!("panels.{index}"),
-                    format!("the words of a curve or a line of simultaneity have no free place on panel {letter}"),
+                    format!("the words of an axis, a curve or a line of simultaneity have no free place on panel {letter}"),
                     "make the panel wider, or show less",
                 ),
                 (_, Some(object)) => self.names.fault(
                     Fault::new(
                         object,
                         "label",
-                        format!(
-                            "its label has no free place on panel {letter} of {}",
-                            self.plate
-                        ),
+                        format!("its label has no free place on panel {letter} of {}", self.plate),
                         "make the panel wider, show less, or choose a shorter label",
                     )
                     .finding(),
@@ -272,6 +265,11 @@ pub(super) fn letter(index: usize) -> char {
         .ok()
         .filter(|i| *i < 26)
         .map_or('z', |i| char::from(b'a' + i))
+}
+
+/// A base-frame displacement from the base's origin as a point of a viewing frame's plane: x right, t up.
+pub(super) fn seen(at: Displacement, from: &Viewing) -> Option<Point> {
+    drawable(from.boost.apply(at - from.origin).ok()?)
 }
 
 /// A displacement as a point of the plane, where it is not too far to draw.

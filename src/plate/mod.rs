@@ -19,11 +19,14 @@ mod tall;
 mod ticks;
 mod tilted;
 mod track;
+mod vectors;
+mod whole;
+mod window;
 mod words;
 
 use kurbo::{Affine, Point, Rect, Size};
 
-use self::canvas::{Canvas, Groups, Rank, Seek, Window, Wish};
+use self::canvas::{Canvas, Rank, Seek, Wish};
 use self::energy::Energy;
 use self::fit::Wanted;
 use self::inks::Inks;
@@ -32,6 +35,7 @@ use self::names::Names;
 use self::place::Candidate;
 use self::spacetime::Spacetime;
 use self::style::{COLUMN, INK, LARGEST, SMALLEST_FIELD, Style, TEXT_RANGE, USUAL_TEXT};
+use self::window::{Groups, Window};
 use crate::fault::{Fault, Kind, ObjectId};
 use crate::marks::{Mark, Sheet};
 use crate::quantity::Typed;
@@ -165,7 +169,7 @@ pub fn lay_out(solved: &Solved, name: &str, plate: &Plate, change: &Override) ->
 /// The plate drawn where a scene has none: one that shows everything.
 pub fn everything(solved: &Solved) -> Plate {
     let has_particles = !solved.particles.is_empty();
-    let has_spacetime = !(solved.events.is_empty() && solved.lines.is_empty()) || !has_particles;
+    let has_spacetime = !(solved.events.is_empty() && solved.lines.is_empty() && has_particles);
     let views = [
         (View::Spacetime, has_spacetime),
         (View::EnergyMomentum, has_particles),

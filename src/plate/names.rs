@@ -1,6 +1,7 @@
 //! Labels of objects and of the panel's own words, set once a sheet; labels that do not set become faults.
 
 use std::collections::BTreeMap;
+use std::fmt::Write as _;
 use std::sync::Arc;
 
 use crate::fault::{Fault, ObjectId};
@@ -85,7 +86,7 @@ pub(super) fn number(text: &str) -> String {
         out.push_str(&threes(rest, 0));
     }
     if let Some(exponent) = exponent {
-        out.push_str(&format!(r"\times 10^{{{exponent}}}"));
+        let _ = write!(out, r"\times 10^{{{exponent}}}");
     }
     out
 }

@@ -84,7 +84,7 @@ pub(super) fn dashes(points: &[Point], pattern: [f64; 2]) -> Vec<Vec<Point>> {
     let [on, off] = pattern[..] else {
         return vec![points.to_vec()];
     };
-    let count = ((length + off) / (on + off)).round() as usize;
+    let count = super::whole::count((length + off) / (on + off) + 0.5);
     (0..count)
         .map(|i| {
             let start = i as f64 * (on + off);

@@ -5,6 +5,7 @@
 use kurbo::{Point, Rect, Vec2};
 
 use super::style::{HAIR, Style};
+use super::whole;
 
 /// A straight piece of ink with its half width, mm.
 #[derive(Clone, Copy, Debug, PartialEq)]
@@ -33,8 +34,8 @@ pub(super) struct Places {
     bounds: Rect,
     columns: usize,
     rows: usize,
-    ink: Vec<Vec<u32>>,
-    text: Vec<Vec<u32>>,
+    ink: Vec<Vec<usize>>,
+    text: Vec<Vec<usize>>,
     pieces: Vec<Piece>,
     labels: Vec<Rect>,
     clear_ink: f64,
@@ -57,7 +58,7 @@ const THIN_BETWEEN: f64 = 0.8;
 impl Places {
     /// None taken, inside a panel.
     pub(super) fn new(panel: Rect, style: &Style) -> Self {
-        let count = |side: f64| ((side / CELL).ceil() as usize).clamp(1, MOST_CELLS);
+        let count = |side: f64| whole::count((side / CELL).ceil()).clamp(1, MOST_CELLS);
         let (columns, rows) = (count(panel.width()), count(panel.height()));
         Self {
             bounds: panel,
@@ -76,12 +77,12 @@ impl Places {
 
     fn column(&self, x: f64) -> usize {
         let part = (x - self.bounds.x0) / self.bounds.width() * self.columns as f64;
-        (part.max(0.0) as usize).min(self.columns - 1)
+        whole::count(part).min(self.columns - 1)
     }
 
     fn row(&self, y: f64) -> usize {
         let part = (y - self.bounds.y0) / self.bounds.height() * self.rows as f64;
-        (part.max(0.0) as usize).min(self.rows - 1)
+        whole::count(part).min(self.rows - 1)
     }
 
     /// Takes up a straight piece of ink.
@@ -89,7 +90,7 @@ impl Places {
         if !(a.is_finite() && b.is_finite()) {
             return;
         }
-        let index = self.pieces.len() as u32;
+        let index = self.pieces.len();
         self.pieces.push(Piece {
             a,
             b,
@@ -109,7 +110,7 @@ impl Places {
 
     /// Takes up a label.
     pub(super) fn add_label(&mut self, rect: Rect) {
-        let index = self.labels.len() as u32;
+        let index = self.labels.len();
         self.labels.push(rect);
         for row in self.row(rect.y0)..=self.row(rect.y1) {
             for column in self.column(rect.x0)..=self.column(rect.x1) {
@@ -125,7 +126,7 @@ impl Places {
         for row in self.row(near.y0)..=self.row(near.y1) {
             for column in self.column(near.x0)..=self.column(near.x1) {
                 for &i in &self.ink[row * self.columns + column] {
-                    let piece = &self.pieces[i as usize];
+                    let piece = &self.pieces[i];
                     if beyond(piece, rect, least) {
                         continue;
                     }
@@ -151,17 +152,19 @@ impl Places {
         let (y0, y1) = (start.y.min(end.y), start.y.max(end.y));
         let (x0, x1) = (start.x.min(end.x), start.x.max(end.x));
         let mut cost = 0.0;
-        for row in self.row(y0)..=self.row(y1) {
-            for column in self.column(x0)..=self.column(x1) {
-                for &i in &self.ink[row * self.columns + column] {
-                    let piece = &self.pieces[i as usize];
-                    if cross(start, end, piece.a, piece.b) {
-                        if piece.is_heavy {
-                            return None;
-                        }
-                        cost = self.thin_between;
-                    }
+        let columns = self.column(x0)..=self.column(x1);
+        let cells = (self.row(y0)..=self.row(y1))
+            .flat_map(|row| columns.clone().map(move |column| (row, column)));
+        for (row, column) in cells {
+            for &i in &self.ink[row * self.columns + column] {
+                let piece = &self.pieces[i];
+                if !cross(start, end, piece.a, piece.b) {
+                    continue;
                 }
+                if piece.is_heavy {
+                    return None;
+                }
+                cost = self.thin_between;
             }
         }
         Some(cost)
@@ -173,7 +176,7 @@ impl Places {
             (self.column(near.x0)..=self.column(near.x1)).any(|column| {
                 self.text[row * self.columns + column]
                     .iter()
-                    .any(|&i| gap(self.labels[i as usize], rect) < self.clear_label - HAIR)
+                    .any(|&i| gap(self.labels[i], rect) < self.clear_label - HAIR)
             })
         })
     }
@@ -188,7 +191,7 @@ impl Places {
                 b,
                 half,
                 is_heavy: _,
-            } = self.pieces[i as usize];
+            } = self.pieces[i];
             if to_segment(p, a, b) > near + half {
                 continue;
             }

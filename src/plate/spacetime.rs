@@ -5,7 +5,7 @@ use std::sync::Arc;
 use kurbo::{Point, Rect, Vec2};
 
 use super::axes::{Axes, Axis, wish};
-use super::beside::{Sides, beside, spots};
+use super::beside::{Side, beside, spots};
 use super::canvas::{Canvas, Layer, Rank, Seek, Wish};
 use super::clip;
 use super::fit::Wanted;
@@ -293,7 +293,7 @@ fn tracks(job: &mut Job<'_>, index: usize, panel: &Panel, from: &Viewing) -> Vec
         let Some(line) = job.solved.lines.get(&name) else {
             continue;
         };
-        if let Some(track) = Track::of(job, &name, line, from) {
+        if let Some(track) = Track::of(&name, line, from) {
             found.push(track);
         }
     }
@@ -367,7 +367,7 @@ fn frames(job: &mut Job<'_>, index: usize, panel: &Panel, from: &Viewing) -> Vec
         let Some((rapidity, ink, primes)) = relative(job, &observer, from, &field) else {
             continue;
         };
-        let Some(origin) = job.seen(observer.view.origin, from) else {
+        let Some(origin) = super::job::seen(observer.view.origin, from) else {
             continue;
         };
         if rapidity == 0.0 && origin == Point::ORIGIN {
@@ -529,7 +529,7 @@ fn cone(job: &mut Job<'_>, canvas: &mut Canvas<'_>, event: &ObjectId, apex: Poin
             &[0.55, 0.62, 0.7, 0.48, 0.78, 0.85, 0.4, 0.32, 0.92],
         );
         candidates.extend(
-            beside(canvas, &label, &places, Sides::BelowFirst, 0.0)
+            beside(canvas, &label, &places, Side::Below, 0.0)
                 .into_iter()
                 .map(|mut c| {
                     c.cost += order * canvas.style.em;

@@ -5,9 +5,9 @@ use kurbo::{Rect, Size};
 
 use super::Prepared;
 use super::axes::Axes;
-use super::canvas::Window;
 use super::job::Job;
 use super::style::{SMALLEST_FIELD, Style};
+use super::window::Window;
 
 /// The common measures of a plate's panels, mm.
 #[derive(Clone, Copy, Debug, PartialEq)]
@@ -85,8 +85,7 @@ impl Tall {
             )
         };
         let (first, _) = place(usual);
-        let left =
-            (self.room_left(job, &first, panel) - (first.field.x0 - outer.x0 - usual)).max(usual);
+        let left = (room_left(job, &first, panel) - (first.field.x0 - outer.x0 - usual)).max(usual);
         let (window, widened) = place(left);
         if widened {
             job.finding(
@@ -97,28 +96,28 @@ impl Tall {
         }
         window
     }
+}
 
-    /// From the panel's edge to the field, so that the widest number has room left of the upright axis.
-    fn room_left(&self, job: &mut Job<'_>, window: &Window, panel: &Prepared) -> f64 {
-        let Some(axes) = panel.axes() else { return 0.0 };
-        let plane = window.plane;
-        let into = (0.0_f64.clamp(plane.x0, plane.x1) - plane.x0) * window.scale();
-        let style = &job.style;
-        let ticks = Axes::ticks_in(axes, window, style).y;
-        let em = style.em;
-        let widest = ticks
-            .ticks
-            .iter()
-            .map(|tick| {
-                job.names
-                    .math(&super::names::number(&ticks.text(tick.count)))
-                    .ink
-                    .width()
-                    * em
-            })
-            .fold(0.0, f64::max);
-        style.centred_number + widest + 2.0 * style.clear_edge - into
-    }
+/// From the panel's edge to the field, so that the widest number has room left of the upright axis.
+fn room_left(job: &mut Job<'_>, window: &Window, panel: &Prepared) -> f64 {
+    let Some(axes) = panel.axes() else { return 0.0 };
+    let plane = window.plane;
+    let into = (0.0_f64.clamp(plane.x0, plane.x1) - plane.x0) * window.scale();
+    let style = &job.style;
+    let ticks = Axes::ticks_in(axes, window, style).y;
+    let em = style.em;
+    let widest = ticks
+        .marks
+        .iter()
+        .map(|tick| {
+            job.names
+                .math(&super::names::number(&ticks.text(tick.count)))
+                .ink
+                .width()
+                * em
+        })
+        .fold(0.0, f64::max);
+    style.centred_number + widest + 2.0 * style.clear_edge - into
 }
 
 impl Prepared {

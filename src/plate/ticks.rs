@@ -1,5 +1,6 @@
 //! Ticks: steps of 1, 2, 5 times a power of ten, equal decimals on an axis, no number at 0.
 
+use super::whole::integer;
 use crate::quantity::{Decimals, fixed};
 
 /// The distance between ticks: `mantissa` (1, 2 or 5) times ten to `exponent`.
@@ -24,7 +25,7 @@ pub(super) struct Ticks {
     /// The step.
     pub(super) step: Step,
     /// Inside the axis, ascending.
-    pub(super) ticks: Vec<Tick>,
+    pub(super) marks: Vec<Tick>,
     /// Numbers are in units of ten to this power.
     pub(super) power: i32,
 }
@@ -80,7 +81,7 @@ impl Step {
         if first.abs() > FARTHEST || last.abs() > FARTHEST {
             return (1, 0);
         }
-        let (first, last) = (first as i64, last as i64);
+        let (first, last) = (integer(first), integer(last));
         if last - first > MOST {
             (1, 0)
         } else {
@@ -110,14 +111,14 @@ impl Ticks {
             exponent: 0,
         });
         let (first, last) = step.counts(low, high);
-        let ticks: Vec<Tick> = (first..=last)
+        let marks: Vec<Tick> = (first..=last)
             .map(|count| Tick {
                 count,
                 value: step.times(count),
             })
             .filter(|tick| low < tick.value && tick.value < high)
             .collect();
-        let largest = ticks.iter().map(|t| t.value.abs()).fold(0.0, f64::max);
+        let largest = marks.iter().map(|t| t.value.abs()).fold(0.0, f64::max);
         let leading = if largest > 0.0 {
             leading_power(largest)
         } else {
@@ -126,7 +127,7 @@ impl Ticks {
         let large = leading > MOST_DIGITS;
         let small = step.exponent < -MOST_DIGITS + 1 && leading < 0;
         let power = if large || small { leading } else { 0 };
-        Self { step, ticks, power }
+        Self { step, marks, power }
     }
 
     /// A tick's number, plain ASCII.
@@ -143,7 +144,7 @@ mod tests {
 
     fn texts(low: f64, high: f64, apart: f64) -> Vec<String> {
         let ticks = Ticks::between(low, high, apart);
-        ticks.ticks.iter().map(|t| ticks.text(t.count)).collect()
+        ticks.marks.iter().map(|t| ticks.text(t.count)).collect()
     }
 
     #[test]
@@ -168,7 +169,7 @@ mod tests {
 
     #[test]
     fn an_axis_that_cannot_be_told_apart_has_no_ticks() {
-        assert!(Ticks::between(1e20, 1e20 + 1e5, 1.0).ticks.is_empty());
-        assert!(Ticks::between(0.0, 1.0, f64::NAN).ticks.len() < 2);
+        assert!(Ticks::between(1e20, 1e20 + 1e5, 1.0).marks.is_empty());
+        assert!(Ticks::between(0.0, 1.0, f64::NAN).marks.len() < 2);
     }
 }

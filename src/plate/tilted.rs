@@ -3,7 +3,7 @@
 use kurbo::{Point, Rect, Vec2};
 
 use super::axes::{AxisTicks, headed, wish};
-use super::beside::{Sides, Spot, beside, spots};
+use super::beside::{Side, Spot, beside, spots};
 use super::canvas::{Canvas, Layer, Rank};
 use super::clip;
 use super::curve::{Branch, Hyperbola};
@@ -13,6 +13,7 @@ use super::outline;
 use super::place::{Candidate, box_beside};
 use super::style::{CURVE_TOLERANCE, GUIDE};
 use super::ticks::Ticks;
+use super::whole::integer;
 use crate::fault::ObjectId;
 use crate::marks::Ink;
 use crate::num::{cosh, sinh, tanh};
@@ -171,7 +172,7 @@ impl Tilted {
         if low.abs().max(high.abs()) > 1e9 {
             return Vec::new();
         }
-        let (first, last) = (low.floor() as i64 + 1, high.ceil() as i64 - 1);
+        let (first, last) = (integer(low.floor()) + 1, integer(high.ceil()) - 1);
         (first..=last.min(first + MOST_TICKS))
             .filter(|count| *count != 0)
             .collect()
@@ -349,15 +350,21 @@ impl Tilted {
             })
             .collect();
         let sides = match which {
-            Which::Time => Sides::LeftFirst,
-            Which::Space => Sides::AboveFirst,
+            Which::Time => Side::Left,
+            Which::Space => Side::Above,
         };
         candidates.extend(beside(canvas, &label, &feet, sides, 0.0));
         let group = canvas.group(&self.object.to_string());
+        let is_base = self.object.name == job.solved.base;
+        let blame = if is_base {
+            job.plate.clone()
+        } else {
+            self.object.clone()
+        };
         wish(
             canvas,
             Rank::Symbol,
-            (group, Some(self.object.clone())),
+            (group, Some(blame)),
             (label, self.ink),
             candidates,
         );
@@ -403,7 +410,7 @@ pub(super) fn arcs(
         ]
         .into_iter()
         .fold(0.0, |m: f64, v| m.max(v.abs()));
-        let last = ((reach / step).floor() as i64).clamp(0, MOST_TICKS);
+        let last = integer(reach / step).clamp(0, MOST_TICKS);
         for count in 1..=last {
             if canvas.style.is_large() && last > ARCS_IN_LARGE && count % 2 == 1 {
                 continue;
@@ -495,7 +502,7 @@ impl Cut {
         );
         let label = job.names.math(&self.label);
         let places = spots((a, b), &CUT_PARTS);
-        let candidates = beside(canvas, &label, &places, Sides::BelowFirst, 0.0);
+        let candidates = beside(canvas, &label, &places, Side::Below, 0.0);
         wish(
             canvas,
             Rank::Curve,

@@ -6,7 +6,7 @@ use kurbo::{BezPath, Point, Rect, Vec2};
 
 use super::arrow::head;
 use super::axes::wish;
-use super::beside::{Sides, Spot, beside};
+use super::beside::{self, Spot};
 use super::canvas::{Canvas, Layer, Rank};
 use super::clip;
 use super::inks::is_light;
@@ -14,7 +14,7 @@ use super::job::Job;
 use super::outline;
 use super::style::{INK, OCHRE};
 use crate::fault::{Kind, ObjectId};
-use crate::geometry::{Leg, Side};
+use crate::geometry::{Displacement, Leg, Side};
 use crate::marks::Ink;
 use crate::num::tanh;
 use crate::solve::{SolvedLine, Viewing};
@@ -38,17 +38,12 @@ pub(super) struct Track {
 
 impl Track {
     /// A solved line as a frame has it.
-    pub(super) fn of(
-        job: &Job<'_>,
-        name: &Arc<str>,
-        line: &SolvedLine,
-        from: &Viewing,
-    ) -> Option<Self> {
+    pub(super) fn of(name: &Arc<str>, line: &SolvedLine, from: &Viewing) -> Option<Self> {
         let rapidity = from.boost.rapidity().value();
         let start = line.from.as_ref().map(|end| end.1);
         let end = line.until.as_ref().map(|end| end.1);
-        let low = start.map_or(f64::NEG_INFINITY, |d| d.t());
-        let high = end.map_or(f64::INFINITY, |d| d.t());
+        let low = start.map_or(f64::NEG_INFINITY, Displacement::t);
+        let high = end.map_or(f64::INFINITY, Displacement::t);
         let corners = line
             .world
             .corners()
@@ -62,7 +57,7 @@ impl Track {
         }
         let points = known
             .iter()
-            .map(|&d| job.seen(d, from))
+            .map(|&d| super::job::seen(d, from))
             .collect::<Option<Vec<_>>>()?;
         if points.len() > 1 && high < low {
             return None;
@@ -209,7 +204,7 @@ impl Track {
         let label = job.names.of(&self.object, self.label.as_deref());
         let first = style.name_below_end + canvas.size(&label).y / 2.0;
         let spots = down(part, first, style.name_step);
-        let candidates = beside(canvas, &label, &spots, Sides::RightFirst, half);
+        let candidates = beside::beside(canvas, &label, &spots, beside::Side::Right, half);
         wish(
             canvas,
             Rank::Name,
