@@ -62,7 +62,11 @@ fn draw(args: &Draw) -> u8 {
         Overwrite::Refuse
     };
     if let Err(fault) = disk::write(&args.to, &drawn.bytes, overwrite) {
-        let force = if !args.force && args.to.is_file() { " (--force)" } else { "" };
+        let force = if !args.force && args.to.is_file() {
+            " (--force)"
+        } else {
+            ""
+        };
         return refuse(&format!("{}; {}{force}", fault.what, fault.mend));
     }
     tell(&args.scene, &drawn.faults)

@@ -88,7 +88,10 @@ fn rest_of_line(
         }
     };
     match leg {
-        Leg::Free { rapidity, across: 0.0 } => Ok(Boost::along_x(rapidity)),
+        Leg::Free {
+            rapidity,
+            across: 0.0,
+        } => Ok(Boost::along_x(rapidity)),
         Leg::Free { rapidity, across } => Momentum::longitudinal(1.0, rapidity, across)
             .and_then(|p| p.rest_frame())
             .map_err(|e| fault(id, "line", e.to_string(), "name a slower line")),

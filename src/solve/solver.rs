@@ -228,7 +228,10 @@ fn sound<T, S>(list: &crate::scene::List<T>, solved: Vec<Option<S>>) -> IndexMap
 }
 
 /// A fault of one field, as solving passes it on.
-#[expect(clippy::unnecessary_wraps, reason = "it is always one of the two ways to be left out")]
+#[expect(
+    clippy::unnecessary_wraps,
+    reason = "it is always one of the two ways to be left out"
+)]
 pub(super) fn fault(
     id: &ObjectId,
     field: &str,

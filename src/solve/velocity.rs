@@ -162,6 +162,11 @@ pub fn typed_rapidity(velocity: &Velocity, toward: Option<Toward>) -> Result<f64
     match read(&id, "", velocity, toward) {
         Ok(typing) => Ok(typing.rapidity.value()),
         Err(Some(fault)) => Err(fault),
-        Err(None) => Err(Box::new(Fault::new(id, "", "it does not read", "type a number"))),
+        Err(None) => Err(Box::new(Fault::new(
+            id,
+            "",
+            "it does not read",
+            "type a number",
+        ))),
     }
 }

@@ -78,9 +78,14 @@ fn a_broken_value_is_pointed_at() {
             );
             let (line, column) = place(&text, start);
             let pointed = |said: &String| {
-                let mut parts = said.split(':').skip(1).map_while(|n| n.parse::<usize>().ok());
+                let mut parts = said
+                    .split(':')
+                    .skip(1)
+                    .map_while(|n| n.parse::<usize>().ok());
                 parts.next() == Some(line)
-                    && parts.next().is_some_and(|c| (column..column + BROKEN.len()).contains(&c))
+                    && parts
+                        .next()
+                        .is_some_and(|c| (column..column + BROKEN.len()).contains(&c))
             };
             assert!(
                 lines.iter().any(pointed),

@@ -272,9 +272,18 @@ fn only_gpl(licence: &str) -> bool {
 fn no_crate_is_only_under_a_gpl() {
     let version = Command::new("rustc").arg("-vV").output().unwrap();
     let version = String::from_utf8(version.stdout).unwrap();
-    let host = version.lines().find_map(|l| l.strip_prefix("host: ")).unwrap();
+    let host = version
+        .lines()
+        .find_map(|l| l.strip_prefix("host: "))
+        .unwrap();
     let text = cargo(&[
-        "metadata", "--offline", "--locked", "--format-version", "1", "--filter-platform", host,
+        "metadata",
+        "--offline",
+        "--locked",
+        "--format-version",
+        "1",
+        "--filter-platform",
+        host,
     ]);
     let metadata: serde_json::Value = serde_json::from_str(&text).unwrap();
     let used: BTreeSet<&str> = metadata["resolve"]["nodes"]
