@@ -76,6 +76,13 @@ struct Shown {
     picture: Picture,
 }
 
+/// Whether a frame is painted, or only heeds what was done.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+enum Showing {
+    Painted,
+    Unseen,
+}
+
 impl Shown {
     fn open(
         ctx: &egui::Context,
@@ -119,6 +126,7 @@ impl Shown {
         ctx: &egui::Context,
         event_loop: &ActiveEventLoop,
         ui: &mut impl FnMut(&mut egui::Ui),
+        showing: Showing,
     ) -> Result<bool, String> {
         egui_winit::update_viewport_info(&mut self.info, ctx, &self.window, false);
         let closing = self.info.close_requested();
@@ -142,8 +150,13 @@ impl Shown {
             );
         }
         self.painter.set_textures(&mut output.textures_delta);
-        let primitives = ctx.tessellate(output.shapes, output.pixels_per_point);
-        let painted = self.paint(&primitives, output.pixels_per_point);
+        let painted = match showing {
+            Showing::Painted => {
+                let primitives = ctx.tessellate(output.shapes, output.pixels_per_point);
+                self.paint(&primitives, output.pixels_per_point)
+            }
+            Showing::Unseen => Ok(()),
+        };
         self.painter.free_textures(&mut output.textures_delta);
         painted.map(|()| closing)
     }
@@ -183,10 +196,10 @@ impl<F: FnMut(&mut egui::Ui)> Runner<F> {
         event_loop.exit();
     }
 
-    fn frame(&mut self, event_loop: &ActiveEventLoop) {
+    fn frame(&mut self, event_loop: &ActiveEventLoop, showing: Showing) {
         let Some(shown) = &mut self.shown else { return };
         self.repaint_at = None;
-        match shown.frame(&self.ctx, event_loop, &mut self.ui) {
+        match shown.frame(&self.ctx, event_loop, &mut self.ui, showing) {
             Ok(false) => {}
             Ok(true) => event_loop.exit(),
             Err(fault) => self.fail(event_loop, fault),
@@ -225,8 +238,13 @@ impl<F: FnMut(&mut egui::Ui)> ApplicationHandler<UserEvent> for Runner<F> {
 
     fn window_event(&mut self, event_loop: &ActiveEventLoop, _: WindowId, event: WindowEvent) {
         if event == WindowEvent::RedrawRequested {
-            self.frame(event_loop);
+            self.frame(event_loop, Showing::Painted);
             return;
+        }
+        // A press and a release are each met by a frame of their own, so that a slow frame between them loses no drag.
+        let is_button = matches!(event, WindowEvent::MouseInput { .. });
+        if is_button {
+            self.frame(event_loop, Showing::Unseen);
         }
         let Some(shown) = &mut self.shown else { return };
         if event == WindowEvent::CloseRequested {
@@ -236,6 +254,9 @@ impl<F: FnMut(&mut egui::Ui)> ApplicationHandler<UserEvent> for Runner<F> {
         let response = shown.input.on_window_event(&shown.window, &event);
         if response.repaint {
             shown.window.request_redraw();
+        }
+        if is_button {
+            self.frame(event_loop, Showing::Unseen);
         }
     }
 
