@@ -18,18 +18,19 @@ pub(super) enum Form {
 impl Form {
     /// The form for a column of numbers. `finest` is the number of decimals that an uncertainty allows, if any.
     pub(super) fn of(values: impl Iterator<Item = f64>, finest: Option<usize>) -> Self {
-        let (mut low, mut high) = (i32::MAX, i32::MIN);
-        for value in values.filter(|v| *v != 0.0 && v.is_finite()) {
-            let order = order(value);
-            low = low.min(order);
-            high = high.max(order);
-        }
-        if low > high {
+        let orders: Vec<i32> = values
+            .filter(|v| *v != 0.0 && v.is_finite())
+            .map(order)
+            .collect();
+        let Some(&high) = orders.iter().max() else {
             return Self::Fixed(Decimals(0));
-        }
+        };
         if !(-4..FIGURES).contains(&high) {
             return Self::Scientific;
         }
+        // What is too small to show beside the largest entry (rounding, most often) asks for no decimals.
+        let shown = orders.into_iter().filter(|order| *order > high - FIGURES);
+        let low = shown.min().unwrap_or(high);
         let wanted = DIGITS - 1 - low;
         let room = FIGURES - 1 - high.max(0);
         let decimals = wanted.min(room).max(0);
