@@ -235,7 +235,7 @@ impl Job<'_> {
                     object,
                     "label",
                     format!(
-                        "its label has no free place on panel {letter} of plate {}",
+                        "its label has no free place on panel {letter} of {}",
                         self.plate
                     ),
                     "make the panel wider, show less, or choose a shorter label",
