@@ -102,8 +102,8 @@ pub enum Weight {
     Fault,
     /// The object is used, but the author should know.
     Finding,
-    /// The scene is sound; a drawing of it leaves something out for want of room.
-    Crowding,
+    /// The scene is sound; a drawing of it leaves something out for want of room, or shows it in projection.
+    Remark,
 }
 
 /// What is wrong with one object, in words.
@@ -153,9 +153,9 @@ impl Fault {
         self
     }
 
-    /// The same, as what a drawing has no room for.
-    pub fn crowding(mut self) -> Self {
-        self.weight = Weight::Crowding;
+    /// The same, as a remark on a drawing.
+    pub fn remark(mut self) -> Self {
+        self.weight = Weight::Remark;
         self
     }
 

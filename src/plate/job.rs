@@ -46,6 +46,12 @@ impl Job<'_> {
             .fault(Fault::new(self.plate.clone(), field, what, mend));
     }
 
+    /// A remark that a panel shows something in projection.
+    pub(super) fn projection(&mut self, field: &str, what: String) {
+        let fault = Fault::new(self.plate.clone(), field, what, "say so in the caption");
+        self.names.fault(fault.remark());
+    }
+
     /// A finding of the plate.
     pub(super) fn finding(
         &mut self,
@@ -242,7 +248,7 @@ impl Job<'_> {
                 ),
                 (_, None) => continue,
             };
-            self.names.fault(fault.crowding());
+            self.names.fault(fault.remark());
         }
     }
 

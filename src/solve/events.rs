@@ -3,13 +3,13 @@
 use super::SolvedEvent;
 use super::frames;
 use super::solver::{Solver, Spoiled, fault};
-use crate::fault::ObjectId;
+use crate::fault::{Fault, ObjectId};
 use crate::geometry::{Displacement, GeometryError};
 use crate::quantity::Typed;
 use crate::scene::{Event, When};
 
-pub(super) fn solve(solver: &Solver<'_>, id: &ObjectId) -> Result<SolvedEvent, Spoiled> {
-    let object = solver.scene.events.get(&id.name).ok_or(None)?;
+pub(super) fn solve(solver: &mut Solver<'_>, id: &ObjectId) -> Result<SolvedEvent, Spoiled> {
+    let object = solver.scene.events.get(&id.name).ok_or(None)?.clone();
     let label = object.common.label.clone();
     let derived = |at| SolvedEvent {
         at,
@@ -36,11 +36,22 @@ pub(super) fn solve(solver: &Solver<'_>, id: &ObjectId) -> Result<SolvedEvent, S
         Event::LightFrom { event, meets } => {
             let from = solver.event(event)?.at;
             let world = &solver.line(meets)?.world;
-            Ok(derived(
-                world
-                    .light_from(from)
-                    .map_err(|e| no_event(id, "meets", &e))?,
-            ))
+            let at = world
+                .light_from(from)
+                .map_err(|e| no_event(id, "meets", &e))?;
+            if at == from {
+                let what = format!(
+                    "event {event} lies on line {meets} itself, so the light meets it at once"
+                );
+                let finding = Fault::new(
+                    id.clone(),
+                    "meets",
+                    what,
+                    "name the line that the light goes to",
+                );
+                solver.faults.push(finding.finding());
+            }
+            Ok(derived(at))
         }
     }
 }

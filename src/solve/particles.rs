@@ -8,7 +8,7 @@ use crate::dynamics::{DynamicsError, Momentum};
 use crate::fault::ObjectId;
 use crate::geometry::{Angle, Rapidity};
 use crate::quantity::{Dimension, Number, Quantity, Typed, Unit, species};
-use crate::scene::{Particle, State, Toward, Velocity, When};
+use crate::scene::{Closure, Particle, State, Toward, Velocity, When};
 
 /// A particle's mass: the number, its standard deviation and the half of its last digit, if the scene typed it.
 #[derive(Clone, Debug)]
@@ -40,7 +40,7 @@ pub(super) fn solve(solver: &mut Solver<'_>, id: &ObjectId) -> Result<SolvedPart
             "give one of them",
         )
     })?;
-    let angle = direction(id, form)?;
+    let (angle, degrees) = direction(id, form)?;
     let frame = frames::named(solver, id, &form.when)?;
     let inputs = inputs(solver, id, form)?;
     let make = |nudge: Nudge| {
@@ -53,7 +53,7 @@ pub(super) fn solve(solver: &mut Solver<'_>, id: &ObjectId) -> Result<SolvedPart
     let momentum = make(Nudge::None).map_err(|e| impossible(id, form, &e))?;
     let typed_error = typed_error(&momentum, &mass, &inputs, make);
     let stated = if frame.is_none() {
-        stated(form, &inputs, angle)
+        stated(form, &inputs, (angle, degrees))
     } else {
         Stated::default()
     };
@@ -70,37 +70,45 @@ pub(super) fn solve(solver: &mut Solver<'_>, id: &ObjectId) -> Result<SolvedPart
 
 /// A closing particle that no collision closes.
 fn unclosed(solver: &Solver<'_>, id: &ObjectId) -> Spoiled {
-    let users: Vec<&str> = solver
-        .scene
-        .collisions
-        .iter()
-        .filter(|(_, c)| {
-            c.form
-                .before
-                .iter()
-                .chain(&c.form.after)
-                .any(|name| **name == *id.name)
-        })
-        .map(|(name, _)| &**name)
-        .collect();
-    if users.is_empty() {
-        fault(
+    let holding = solver.scene.collisions.iter().find(|(_, c)| {
+        c.form
+            .before
+            .iter()
+            .chain(&c.form.after)
+            .any(|name| **name == *id.name)
+    });
+    let Some((name, collision)) = holding else {
+        return fault(
             id,
             "state",
             "it is Closing, but stands in no collision",
             "name it in a collision whose closure is Merge or Remainder, or give its state",
-        )
+        );
+    };
+    let form = &collision.form;
+    let unknown: Vec<&str> = form
+        .before
+        .iter()
+        .chain(&form.after)
+        .filter_map(|name| solver.scene.particles.get_full(name.as_str()))
+        .filter(|(i, _, p)| p.form.state == State::Closing && solver.closers[*i].is_none())
+        .map(|(_, name, _)| &**name)
+        .collect();
+    let what = if form.closure == Closure::Given {
+        format!("it is Closing, but the closure Given of collision {name} finds nothing")
     } else {
-        fault(
-            id,
-            "state",
-            format!(
-                "it is Closing, but collision {} cannot find it",
-                users.join(", ")
-            ),
-            "a collision with the closure Merge or Remainder finds one unknown particle",
+        let (count, names) = (unknown.len(), unknown.join(", "));
+        format!(
+            "collision {name} has {count} unknown particles ({names}), and {:?} finds one",
+            form.closure
         )
-    }
+    };
+    fault(
+        id,
+        "state",
+        what,
+        "give the state of all but one of them, and the closure Merge or Remainder",
+    )
 }
 
 /// The mass of a particle by its species or as typed; none where neither is said.
@@ -116,7 +124,7 @@ pub(super) fn mass(
                 id,
                 "mass",
                 "it has a species and a mass",
-                "leave one of them out; a mass of its own goes with no species, or with one of the scene's",
+                "leave one of them out; a mass belongs to the species",
             ));
         }
         (None, None) => return Ok(None),
@@ -169,8 +177,8 @@ fn unknown_species(solver: &Solver<'_>, id: &ObjectId, name: &str) -> Spoiled {
     )
 }
 
-/// Direction of the motion; none where the state says it by components.
-fn direction(id: &ObjectId, form: &Particle) -> Result<Angle, Spoiled> {
+/// Direction of the motion, and the same in degrees as typed.
+fn direction(id: &ObjectId, form: &Particle) -> Result<(Angle, f64), Spoiled> {
     let whole = matches!(
         form.state,
         State::Components { .. } | State::Longitudinal { .. }
@@ -212,10 +220,13 @@ fn direction(id: &ObjectId, form: &Particle) -> Result<Angle, Spoiled> {
     } else {
         0.0
     };
-    match &form.angle {
-        Some(typed) => Ok(Angle::from_degrees(frames::degrees(id, typed)? + turn)),
-        None => Ok(Angle::from_degrees(turn)),
-    }
+    let typed = form
+        .angle
+        .as_ref()
+        .map(|typed| frames::degrees(id, typed))
+        .transpose()?;
+    let degrees = typed.unwrap_or(0.0) + turn;
+    Ok((Angle::from_degrees(degrees), degrees))
 }
 
 /// The typed numbers of a state, read.
@@ -352,11 +363,13 @@ fn typed_error(
 }
 
 /// What was typed and what follows from it without arithmetic, to be shown in the base frame as typed.
-fn stated(form: &Particle, inputs: &Inputs, angle: Angle) -> Stated {
+fn stated(form: &Particle, inputs: &Inputs, (angle, degrees): (Angle, f64)) -> Stated {
     let number = |i: usize| inputs.numbers.get(i).map(|q| q.value.to_f64());
     let mut stated = Stated::default();
-    if form.angle.is_some() {
-        stated.angle = Some(angle.degrees());
+    // A negative size points the other way, and an angle beyond half a turn is another angle.
+    let is_as_typed = number(0).is_none_or(|n| n >= 0.0) && degrees > -180.0 && degrees <= 180.0;
+    if form.angle.is_some() && is_as_typed {
+        stated.angle = Some(degrees);
     }
     let along = (angle.sin() == 0.0).then(|| angle.cos());
     match &form.state {
@@ -387,7 +400,7 @@ fn stated(form: &Particle, inputs: &Inputs, angle: Angle) -> Stated {
 fn impossible(id: &ObjectId, form: &Particle, error: &DynamicsError) -> Spoiled {
     let mend = match &form.state {
         State::Energy(_) => "a total energy is at least the mass",
-        State::Kinetic(_) => "a kinetic energy is not negative",
+        State::Kinetic(_) => "give it in the direction of the motion, which angle or toward turns",
         State::AtRest | State::Velocity(_) => {
             "light needs an energy or a momentum; a mass needs a velocity below that of light"
         }
