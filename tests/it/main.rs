@@ -11,6 +11,7 @@ mod facts;
 mod hostile;
 mod house;
 mod label;
+mod oracle;
 mod outside;
 mod plate;
 mod program;
