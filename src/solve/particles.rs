@@ -40,7 +40,7 @@ pub(super) fn solve(solver: &mut Solver<'_>, id: &ObjectId) -> Result<SolvedPart
             "give one of them",
         )
     })?;
-    let angle = direction(id, form)?;
+    let (angle, degrees) = direction(id, form)?;
     let frame = frames::named(solver, id, &form.when)?;
     let inputs = inputs(solver, id, form)?;
     let make = |nudge: Nudge| {
@@ -53,7 +53,7 @@ pub(super) fn solve(solver: &mut Solver<'_>, id: &ObjectId) -> Result<SolvedPart
     let momentum = make(Nudge::None).map_err(|e| impossible(id, form, &e))?;
     let typed_error = typed_error(&momentum, &mass, &inputs, make);
     let stated = if frame.is_none() {
-        stated(form, &inputs, angle)
+        stated(form, &inputs, angle, degrees)
     } else {
         Stated::default()
     };
@@ -169,8 +169,8 @@ fn unknown_species(solver: &Solver<'_>, id: &ObjectId, name: &str) -> Spoiled {
     )
 }
 
-/// Direction of the motion; none where the state says it by components.
-fn direction(id: &ObjectId, form: &Particle) -> Result<Angle, Spoiled> {
+/// The direction that a state of positive numbers goes, and its degrees where they are those typed.
+fn direction(id: &ObjectId, form: &Particle) -> Result<(Angle, Option<f64>), Spoiled> {
     let whole = matches!(
         form.state,
         State::Components { .. } | State::Longitudinal { .. }
@@ -207,15 +207,15 @@ fn direction(id: &ObjectId, form: &Particle) -> Result<Angle, Spoiled> {
             "leave toward out and give the number its sign",
         ));
     }
-    let turn = if form.toward == Some(Toward::Minus) {
-        180.0
-    } else {
-        0.0
+    let turned = form.toward == Some(Toward::Minus);
+    let turn = if turned { 180.0 } else { 0.0 };
+    let Some(typed) = &form.angle else {
+        return Ok((Angle::from_degrees(turn), None));
     };
-    match &form.angle {
-        Some(typed) => Ok(Angle::from_degrees(frames::degrees(id, typed)? + turn)),
-        None => Ok(Angle::from_degrees(turn)),
-    }
+    let degrees = frames::degrees(id, typed)?;
+    let within = degrees > -180.0 && degrees <= 180.0;
+    let as_typed = (within && !turned).then_some(degrees);
+    Ok((Angle::from_degrees(degrees + turn), as_typed))
 }
 
 /// The typed numbers of a state, read.
@@ -352,12 +352,17 @@ fn typed_error(
 }
 
 /// What was typed and what follows from it without arithmetic, to be shown in the base frame as typed.
-fn stated(form: &Particle, inputs: &Inputs, angle: Angle) -> Stated {
+fn stated(form: &Particle, inputs: &Inputs, angle: Angle, degrees: Option<f64>) -> Stated {
     let number = |i: usize| inputs.numbers.get(i).map(|q| q.value.to_f64());
-    let mut stated = Stated::default();
-    if form.angle.is_some() {
-        stated.angle = Some(angle.degrees());
-    }
+    // A negative number turns the motion round, away from the angle typed.
+    let backward = match inputs.rapidity {
+        Some(rapidity) => rapidity.value() < 0.0,
+        None => number(0).is_some_and(|n| n < 0.0),
+    };
+    let mut stated = Stated {
+        angle: degrees.filter(|_| !backward),
+        ..Stated::default()
+    };
     let along = (angle.sin() == 0.0).then(|| angle.cos());
     match &form.state {
         State::Velocity(velocity) => match velocity {

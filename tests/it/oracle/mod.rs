@@ -17,6 +17,7 @@ mod rebased;
 mod solved;
 mod sums;
 mod text;
+mod typed;
 
 use compare::{Findings, compare, frame_names};
 use kinematics::Frame;
