@@ -233,6 +233,37 @@ fn long_chains_of_constructions_stay_within_their_bound() {
     prove("chain", &text, &["5", "-9"]);
 }
 
+/// Two events given in a frame at rapidity 20 are as far apart as given, though in the base both are nearly null.
+#[test]
+fn events_given_in_a_fast_frame_keep_their_interval() {
+    for eta in ["20", "-35", "300"] {
+        let text = format!(
+            "Scene(format: 1, base: \"hall\", events: {{ \
+             \"a\": At(t: 2, x: 1, frame: \"far\"), \"b\": At(t: 9, x: 4, frame: \"far\"), \
+             \"c\": At(t: 3, x: 5.5, frame: \"far\"), \"d\": At(t: 4, x: 3, frame: \"far\"), \
+             \"o\": At(t: 0.125, x: 0), }}, \
+             frames: {{ \"far\": Moving(velocity: Rapidity({eta})) }})"
+        );
+        let json = program::ledger(&text, &["--frame", "far"]);
+        let rows = json["intervals"].as_array().unwrap();
+        let wanted = [
+            ("a", "b", "timelike", 40.0),
+            ("a", "c", "spacelike", -19.25),
+            ("a", "d", "lightlike", 0.0),
+            ("b", "c", "timelike", 33.75),
+        ];
+        for (from, to, kind, squared) in wanted {
+            let row = rows
+                .iter()
+                .find(|r| r["from"] == from && r["to"] == to)
+                .unwrap();
+            assert_eq!(row["kind"], kind, "{eta}: {row}");
+            let got = row["squared"].as_f64().unwrap();
+            assert!((got - squared).abs() <= 1e-11, "{eta}: {row}");
+        }
+    }
+}
+
 /// What is typed with few digits balances within half a last digit of each number: a kaon at rest gives two pions of
 /// 205.97 MeV/c (497.611 and 139.57039 MeV, Particle Data Group 2026). 206.0 does for two of them, 206.2 does not.
 #[test]
