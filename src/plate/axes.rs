@@ -212,7 +212,9 @@ impl Axes {
             let near = if upright {
                 (p.x - style.centred_number - size.x, p.y - size.y / 2.0 + by)
             } else {
-                (p.x - size.x / 2.0 + by, p.y + below)
+                let half = style.tick / 2.0 + style.stroke.axis / 2.0;
+                let clear = half + style.clear_ink + HAIR;
+                (p.x - size.x / 2.0 + by, p.y + clear.max(below))
             };
             found.push(Candidate {
                 rect: corner(near.0, near.1),
@@ -279,11 +281,13 @@ impl Axes {
         let [past, below] = style.level_title;
         let width = canvas.size(&label).x;
         let height = canvas.size(&label).y;
+        // A title with a raised exponent hangs lower, so that it clears the axis as others do.
+        let raised = step * (label.ink.y1 - USUAL_HEIGHT).max(0.0);
         let mut candidates = Vec::new();
         for i in 0..TITLE_SHIFTS {
             let x = right.x + past - width - step * f64::from(i);
             for (y, cost) in [
-                (right.y + below, 0.0),
+                (right.y + below + raised, 0.0),
                 (right.y - below + height / 2.0, 2.0),
             ] {
                 let rect = on_baseline(canvas, &label, x, y);
@@ -298,8 +302,12 @@ impl Axes {
     }
 }
 
+/// A number under its tick clears it by this much more than it must, mm.
+const HAIR: f64 = 1e-6;
 /// What a number's slide along its axis costs, ems.
 const SLIDE_COST: f64 = 0.1;
+/// How far above its baseline a title without exponents reaches, ems: a solidus.
+const USUAL_HEIGHT: f64 = 0.75;
 /// Places tried for a level axis' title, one em apart.
 const TITLE_SHIFTS: i32 = 8;
 

@@ -342,7 +342,8 @@ fn panel_letter(job: &mut Job<'_>, canvas: &mut Canvas<'_>, letter: char) {
     let label = job.names.word(&format!("({letter})"));
     let size = canvas.size(&label);
     let outer = canvas.window.outer;
-    let corner = Point::new(outer.x0, outer.y0 + canvas.style.panel_letter);
+    let [left, ..] = canvas.style.margins;
+    let corner = Point::new(outer.x0 + left, outer.y0 + canvas.style.panel_letter);
     let rect = Rect::from_origin_size(corner, Size::new(size.x, size.y));
     let seek = Seek::Places(vec![Candidate {
         rect,

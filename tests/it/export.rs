@@ -7,12 +7,12 @@ use conewright::export::{self, Format, Lettering, Options, write};
 use conewright::label::{Label, commands, plain, typeset};
 use conewright::marks::{Cap, Group, Ink, Join, Mark, Paint, Shape, Sheet, Stroke};
 use kurbo::{BezPath, Circle, PathEl, Point, Rect, Shape as _};
-use resvg::{tiny_skia, usvg};
+use resvg::usvg;
 
 use crate::tools::printed;
 
 mod paper;
-mod picture;
+mod png;
 mod svg;
 
 const BLACK: Ink = Ink(0, 0, 0);
