@@ -138,8 +138,8 @@ impl Checks<'_> {
 
     fn frame(&mut self, row: &Value) {
         let w = &self.frame.velocity;
-        let doubt = &self.frame.doubt + few() * self.frame.rapidity().abs();
-        let rapidity = self.frame.rapidity();
+        let doubt = &self.frame.doubt + few() * self.frame.rapidity.abs();
+        let rapidity = self.frame.rapidity.clone();
         let plain = Kind::Plain;
         self.near(
             "frame rapidity",

@@ -114,14 +114,26 @@ pub(crate) struct Frame {
     pub(crate) origin: Event,
     /// How far its rapidity (and, across x, its celerity) may be off.
     pub(crate) doubt: Real,
+    /// Signed along x.
+    pub(crate) rapidity: Real,
+    /// e^rapidity.
+    pub(crate) doppler: Real,
 }
 
 impl Frame {
     pub(crate) fn new(velocity: Vector, origin: Event, doubt: Real) -> Self {
+        let celerity = if velocity.y.is_zero() {
+            velocity.x.clone()
+        } else {
+            velocity.size()
+        };
+        let rapidity = celerity.asinh();
         Self {
             velocity,
             origin,
             doubt,
+            doppler: rapidity.exp(),
+            rapidity,
         }
     }
 
@@ -138,15 +150,6 @@ impl Frame {
         self.velocity.size().is_zero()
     }
 
-    /// Signed along x.
-    pub(crate) fn rapidity(&self) -> Real {
-        if self.is_along_x() {
-            self.velocity.x.asinh()
-        } else {
-            self.velocity.size().asinh()
-        }
-    }
-
     /// A vector as the frame has it; axes unrotated.
     pub(crate) fn see(&self, v: &Vector) -> Vector {
         boosted(v, &self.velocity)
@@ -161,7 +164,7 @@ impl Frame {
 
     /// What every rapidity seen from it is off by at least: its own doubt and the rounding of a sum.
     pub(crate) fn shift_doubt(&self) -> Real {
-        &self.doubt + few() * self.rapidity().abs()
+        &self.doubt + few() * self.rapidity.abs()
     }
 }
 
@@ -257,18 +260,18 @@ impl Event {
 
 /// The doubts of `d` after a boost that made `at` of it.
 fn turned(d: &Event, at: &Vector, frame: &Frame) -> Event {
-    let boost = frame.rapidity();
     if !frame.is_along_x() {
-        let off = (d.doubt() + (eps(16) + &frame.doubt) * d.at.largest()) * boost.exp();
+        let off = (d.doubt() + (eps(16) + &frame.doubt) * d.at.largest()) * &frame.doppler;
         return Event::off_by(at.clone(), &off);
     }
+    let shift = frame.shift_doubt() + eps(4);
     let grow = |before: &Real, after: &Real, doubt: &Real| {
         let factor = if before.is_zero() {
-            boost.abs().exp()
+            frame.rapidity.abs().exp()
         } else {
             (after / before).abs()
         };
-        doubt * factor + after.abs() * (frame.shift_doubt() + eps(4))
+        doubt * factor + after.abs() * &shift
     };
     Event {
         u_doubt: grow(&d.at.u(), &at.u(), &d.u_doubt),

@@ -97,12 +97,12 @@ impl Particle {
         if frame.is_base() {
             return self.clone();
         }
-        self.turned(frame.see(&self.p), frame, frame.rapidity().exp())
+        self.turned(frame.see(&self.p), frame, frame.doppler.clone())
     }
 
     /// The way back: a particle given in a frame, in the base.
     pub(crate) fn unseen(&self, frame: &Frame) -> Self {
-        self.turned(frame.unsee(&self.p), frame, (-frame.rapidity()).exp())
+        self.turned(frame.unsee(&self.p), frame, Real::one() / &frame.doppler)
     }
 
     /// With `k` the factor of p- along x.
@@ -112,7 +112,7 @@ impl Particle {
         }
         // Across x: one doubt for every component.
         let stored = &self.null_doubt.0 + &self.null_doubt.1 + &self.py_doubt;
-        let off = (stored + (eps(32) + &frame.doubt) * &self.p.t) * frame.rapidity().exp();
+        let off = (stored + (eps(32) + &frame.doubt) * &self.p.t) * &frame.doppler;
         let mut seen = Self {
             p,
             py_doubt: off.clone(),
