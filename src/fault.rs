@@ -102,6 +102,8 @@ pub enum Weight {
     Fault,
     /// The object is used, but the author should know.
     Finding,
+    /// The scene is sound; a drawing of it leaves something out for want of room, or shows it in projection.
+    Remark,
 }
 
 /// What is wrong with one object, in words.
@@ -148,6 +150,12 @@ impl Fault {
     /// The same, as a finding.
     pub fn finding(mut self) -> Self {
         self.weight = Weight::Finding;
+        self
+    }
+
+    /// The same, as a remark on a drawing.
+    pub fn remark(mut self) -> Self {
+        self.weight = Weight::Remark;
         self
     }
 

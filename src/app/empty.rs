@@ -25,7 +25,7 @@ pub(super) fn page(ui: &mut Ui, rect: Rect, wishes: &mut Wishes) {
         Type::Title,
         c.text,
     );
-    let words = "Begin with whatever you know best. The rest can be derived from it, in any frame.";
+    let words = "Open a scene to see it from any frame, or drop its file here.";
     text::wrapped(
         ui.painter(),
         pos2(left, top + 24.0),

@@ -150,7 +150,7 @@ fn finding(ui: &mut Ui, index: usize, fault: &Fault, wishes: &mut Wishes) {
     }
     let ink = match fault.weight {
         Weight::Fault => c.fault,
-        Weight::Finding => c.quiet,
+        Weight::Finding | Weight::Remark => c.quiet,
     };
     let y = rect.top() + 10.0;
     icon::paint(

@@ -99,9 +99,12 @@ fn shortcuts(ui: &mut Ui) {
     ui.heading("Shortcuts");
     ui.add_space(8.0);
     let ctx = ui.ctx().clone();
-    let actions = ACTIONS
-        .iter()
-        .filter_map(|a| Some((a.words, ctx.format_shortcut(&a.keys?))));
+    let actions = ACTIONS.iter().filter_map(|a| {
+        Some((
+            a.words,
+            ctx.format_shortcut(&a.keys?).replace("Questionmark", "?"),
+        ))
+    });
     let places = PLACES
         .iter()
         .map(|(what, keys)| (*what, (*keys).to_owned()));

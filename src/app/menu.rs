@@ -41,7 +41,7 @@ fn scene_name(ui: &Ui, rect: Rect, from: f32, context: &Context<'_>) {
     let words = if context.document.path.is_some() {
         "saved"
     } else {
-        "nothing to save"
+        "no scene"
     };
     let state = text::put(
         ui.painter(),

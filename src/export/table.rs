@@ -62,7 +62,36 @@ fn bracketed(unit: &str) -> String {
     }
 }
 
+/// The table with its numbers padded behind, up to the most decimals of their column.
+fn aligned(table: &Table) -> Table {
+    let mut table = table.clone();
+    for (c, column) in table.columns.iter().enumerate() {
+        if column.align == Align::Left {
+            continue;
+        }
+        let numbers = table
+            .rows
+            .iter()
+            .filter_map(|r| r.cells.get(c))
+            .filter(|c| c.value.is_some());
+        let most = numbers.map(|cell| decimals(&cell.text)).max().unwrap_or(0);
+        for cell in table.rows.iter_mut().filter_map(|r| r.cells.get_mut(c)) {
+            let short = most - decimals(&cell.text).min(most);
+            if cell.value.is_some() && !cell.text.contains('e') {
+                cell.text.push_str(&" ".repeat(short));
+            }
+        }
+    }
+    table
+}
+
+/// Characters from the decimal sign on: numbers with fewer are moved left, so that the signs stand in one line.
+fn decimals(text: &str) -> usize {
+    text.find('.').map_or(0, |dot| text.len() - dot)
+}
+
 fn lines(out: &mut String, table: &Table) {
+    let table = &aligned(table);
     let heads: Vec<String> = table.columns.iter().map(head).collect();
     let width = |c: usize| {
         let cells = table

@@ -1,7 +1,8 @@
-//! How many digits a column shows: one number of decimals for all of it, or one power-of-ten form for all of it.
+//! How many digits a column shows: one number of decimals for all of it, or one power-of-ten form for all of it; a
+//! measured number never more than its uncertainty allows.
 
 use crate::num::log10;
-use crate::quantity::{Decimals, fixed, scientific};
+use crate::quantity::{Decimals, decimals_allowed, fixed, scientific};
 
 /// Significant digits that the smallest entry of a column gets.
 const DIGITS: i32 = 6;
@@ -16,25 +17,36 @@ pub(super) enum Form {
 }
 
 impl Form {
-    /// The form for a column of numbers. `finest` is the number of decimals that an uncertainty allows, if any.
-    pub(super) fn of(values: impl Iterator<Item = f64>, finest: Option<usize>) -> Self {
-        let (mut low, mut high) = (i32::MAX, i32::MIN);
-        for value in values.filter(|v| *v != 0.0 && v.is_finite()) {
-            let order = order(value);
-            low = low.min(order);
-            high = high.max(order);
-        }
-        if low > high {
+    /// The form for a column of numbers.
+    pub(super) fn of(values: impl Iterator<Item = f64>) -> Self {
+        let orders: Vec<i32> = values
+            .filter(|v| *v != 0.0 && v.is_finite())
+            .map(order)
+            .collect();
+        let Some(&high) = orders.iter().max() else {
             return Self::Fixed(Decimals(0));
-        }
+        };
         if !(-4..FIGURES).contains(&high) {
             return Self::Scientific;
         }
+        // What is too small to show beside the largest entry (rounding, most often) asks for no decimals.
+        let shown = orders.into_iter().filter(|order| *order > high - FIGURES);
+        let low = shown.min().unwrap_or(high);
         let wanted = DIGITS - 1 - low;
         let room = FIGURES - 1 - high.max(0);
         let decimals = wanted.min(room).max(0);
         let decimals = usize::try_from(decimals).unwrap_or(0);
-        Self::Fixed(Decimals(decimals.min(finest.unwrap_or(usize::MAX))))
+        Self::Fixed(Decimals(decimals))
+    }
+
+    /// A number in this form, or with fewer decimals where its standard deviation allows no more.
+    pub(super) fn measured(self, value: f64, deviation: f64) -> String {
+        match (self, decimals_allowed(deviation)) {
+            (Self::Fixed(Decimals(usual)), Some(Decimals(allowed))) => {
+                fixed(value, Decimals(usual.min(allowed)))
+            }
+            (Self::Fixed(_) | Self::Scientific, _) => self.text(value),
+        }
     }
 
     /// A number in this form.

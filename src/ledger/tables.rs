@@ -5,7 +5,7 @@ use std::collections::BTreeMap;
 use super::digits::Form;
 use super::{CollisionRow, Ledger, ParticleRow, SumRow};
 use crate::fault::{Kind, ObjectId};
-use crate::quantity::{Decimals, decimals_allowed, significant};
+use crate::quantity::significant;
 
 /// How a column's text stands.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
@@ -148,17 +148,7 @@ fn set(name: &'static str, words: &[&str], heads: &[(&str, &str)], drafts: Vec<D
         invariant: head.ends_with('*'),
     }));
     let forms: Vec<Form> = (0..heads.len())
-        .map(|c| {
-            let entries = || drafts.iter().filter_map(move |d| d.numbers.get(c).copied());
-            let finest = entries()
-                .filter_map(|e| match e {
-                    Entry::Measured(_, deviation) => decimals_allowed(deviation),
-                    Entry::Number(_) | Entry::Missing | Entry::Blank => None,
-                })
-                .map(|Decimals(d)| d)
-                .min();
-            Form::of(entries().filter_map(Entry::value), finest)
-        })
+        .map(|c| Form::of(drafts.iter().filter_map(|d| d.numbers.get(c)?.value())))
         .collect();
     let rows = drafts
         .into_iter()
@@ -170,7 +160,8 @@ fn set(name: &'static str, words: &[&str], heads: &[(&str, &str)], drafts: Vec<D
             let numbers = draft.numbers.iter().zip(&forms).map(|(entry, form)| Cell {
                 value: entry.value(),
                 text: match entry {
-                    Entry::Number(value) | Entry::Measured(value, _) => form.text(*value),
+                    Entry::Number(value) => form.text(*value),
+                    Entry::Measured(value, deviation) => form.measured(*value, *deviation),
                     Entry::Missing => NONE.to_owned(),
                     Entry::Blank => String::new(),
                 },

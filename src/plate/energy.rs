@@ -61,13 +61,12 @@ impl Energy {
         let is_projection =
             vectors.iter().any(|v| v.has_across) || sum.as_ref().is_some_and(|s| s.has_across);
         if is_projection {
-            job.finding(
+            job.projection(
                 &field,
                 format!(
                     "panel {} shows E and px alone: momentum across is drawn in projection",
                     letter(index)
                 ),
-                "say so in the caption",
             );
         }
         let energy = job.solved.units.energy.clone();

@@ -46,6 +46,12 @@ impl Job<'_> {
             .fault(Fault::new(self.plate.clone(), field, what, mend));
     }
 
+    /// A remark that a panel shows something in projection.
+    pub(super) fn projection(&mut self, field: &str, what: String) {
+        let fault = Fault::new(self.plate.clone(), field, what, "say so in the caption");
+        self.names.fault(fault.remark());
+    }
+
     /// A finding of the plate.
     pub(super) fn finding(
         &mut self,
@@ -210,32 +216,39 @@ impl Job<'_> {
         None
     }
 
-    /// Findings for labels that found no place.
+    /// Tells of labels that found no place.
     pub(super) fn unplaced(&mut self, index: usize, missing: Vec<(Rank, Option<ObjectId>)>) {
         let letter = letter(index);
+        let plate = self.plate.clone();
+        let panel = format!("panels.{index}");
         for (rank, blame) in missing {
-            match (rank, blame) {
-                (Rank::Title, _) => self.finding(
-                    &format!("panels.{index}"),
+            let fault = match (rank, blame) {
+                (Rank::Title, _) => Fault::new(
+                    plate.clone(),
+                    &panel,
                     format!("an axis' title has no free place on panel {letter}"),
                     "make the panel wider, or show less",
                 ),
-                (_, Some(object)) if object.kind == Kind::Plate => self.finding(
-                    &format!("panels.{index}"),
-                    format!("the words of an axis, a curve or a line of simultaneity have no free place on panel {letter}"),
+                (_, Some(object)) if object.kind == Kind::Plate => Fault::new(
+                    plate.clone(),
+                    &panel,
+                    format!(
+                        "the words of an axis, a curve or a line of simultaneity have no free place on panel {letter}"
+                    ),
                     "make the panel wider, or show less",
                 ),
-                (_, Some(object)) => self.names.fault(
-                    Fault::new(
-                        object,
-                        "label",
-                        format!("its label has no free place on panel {letter} of {}", self.plate),
-                        "make the panel wider, show less, or choose a shorter label",
-                    )
-                    .finding(),
+                (_, Some(object)) => Fault::new(
+                    object,
+                    "label",
+                    format!(
+                        "its label has no free place on panel {letter} of {}",
+                        self.plate
+                    ),
+                    "make the panel wider, show less, or choose a shorter label",
                 ),
-                (_, None) => {}
-            }
+                (_, None) => continue,
+            };
+            self.names.fault(fault.remark());
         }
     }
 

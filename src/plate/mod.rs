@@ -66,6 +66,8 @@ pub struct PanelPlace {
     pub view: View,
     /// The frame it looks from.
     pub viewing: Viewing,
+    /// True where a fault leaves nothing to draw.
+    pub is_blank: bool,
     /// mm from (horizontal, vertical) coordinates in internal units: x right, t (or E) up. An affine map.
     pub from_plane: Affine,
 }
@@ -145,6 +147,7 @@ pub fn lay_out(solved: &Solved, name: &str, plate: &Plate, change: &Override) ->
             field: window.field,
             view: panel.view,
             viewing: panel.viewing.clone(),
+            is_blank: matches!(panel.contents, Contents::Blank),
             from_plane: window.affine(),
         });
         marks.extend(draw(&mut job, panel, window, prepared.len() > 1));

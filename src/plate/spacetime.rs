@@ -38,7 +38,7 @@ pub(super) struct Spacetime {
 /// The origin belongs to the contents unless it is farther from them than so many times their size.
 const ORIGIN_NEAR: f64 = 3.0;
 /// Digits of the time of a line of simultaneity.
-const TIME_DIGITS: usize = 3;
+const TIME_DIGITS: usize = 4;
 
 impl Spacetime {
     /// Gathers what a panel shows. `None` (with a fault) where its frame moves across x.
@@ -72,13 +72,12 @@ impl Spacetime {
         });
         let is_projection = across || tracks.iter().any(|track| track.has_across);
         if is_projection {
-            job.finding(
+            job.projection(
                 &field,
                 format!(
                     "panel {} shows t and x alone: what moves across is drawn in projection",
                     letter(index)
                 ),
-                "say so in the caption, or leave those lines out",
             );
         }
         let units = job.solved.units.clone();

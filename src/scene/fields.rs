@@ -207,6 +207,14 @@ pub(super) fn common<'a>(root: Value<'a>, faults: &mut Faults<'a>) -> Common {
             }),
         };
         match contents {
+            Ok(contents) if key.raw() == "label" && contents.contains(char::is_control) => {
+                let what = "the label holds a control character: in quotes, `\\t`, `\\n` and `\\r` are white space";
+                faults.find(
+                    value.start(),
+                    what,
+                    "double the backslash (\"\\\\tau\"), or write r\"\\tau\"",
+                );
+            }
             Ok(contents) if contents.len() <= limit => *slot = Some(contents),
             Ok(contents) => {
                 let what = format!("it has {} bytes, {limit} are the most", contents.len());

@@ -3,14 +3,14 @@
 use super::SolvedEvent;
 use super::frames;
 use super::solver::{Solver, Spoiled, fault};
-use crate::fault::ObjectId;
+use crate::fault::{Fault, ObjectId};
 use crate::geometry::{Displacement, GeometryError};
 use crate::num::exp;
 use crate::quantity::Typed;
 use crate::scene::{Event, When};
 
-pub(super) fn solve(solver: &Solver<'_>, id: &ObjectId) -> Result<SolvedEvent, Spoiled> {
-    let object = solver.scene.events.get(&id.name).ok_or(None)?;
+pub(super) fn solve(solver: &mut Solver<'_>, id: &ObjectId) -> Result<SolvedEvent, Spoiled> {
+    let object = solver.scene.events.get(&id.name).ok_or(None)?.clone();
     let label = object.common.label.clone();
     let derived = |at: Displacement| SolvedEvent {
         at,
@@ -46,6 +46,18 @@ pub(super) fn solve(solver: &Solver<'_>, id: &ObjectId) -> Result<SolvedEvent, S
             }
             if found.at.v == from.at.v {
                 found.rounding.v = from.rounding.v;
+            }
+            if found.at == from.at {
+                let what = format!(
+                    "event {event} lies on line {meets} itself, so the light meets it at once"
+                );
+                let finding = Fault::new(
+                    id.clone(),
+                    "meets",
+                    what,
+                    "name the line that the light goes to",
+                );
+                solver.faults.push(finding.finding());
             }
             Ok(found)
         }

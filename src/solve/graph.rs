@@ -197,7 +197,7 @@ pub(super) fn missing<'a>(
 ) -> Fault {
     let mend = match nearest(name, known) {
         Some(near) => format!("perhaps \"{near}\" is meant"),
-        None => format!("add a {} of that name, or name another", kind.word()),
+        None => "add one of that name, or name another".to_owned(),
     };
     Fault::new(
         object,

@@ -8,7 +8,7 @@ use crate::dynamics::{DynamicsError, Momentum};
 use crate::fault::ObjectId;
 use crate::geometry::{Angle, Rapidity};
 use crate::quantity::{Dimension, Number, Quantity, Typed, Unit, species};
-use crate::scene::{Particle, State, Toward, Velocity, When};
+use crate::scene::{Closure, Particle, State, Toward, Velocity, When};
 
 /// A particle's mass: the number, its standard deviation and the half of its last digit, if the scene typed it.
 #[derive(Clone, Debug)]
@@ -53,7 +53,7 @@ pub(super) fn solve(solver: &mut Solver<'_>, id: &ObjectId) -> Result<SolvedPart
     let momentum = make(Nudge::None).map_err(|e| impossible(id, form, &e))?;
     let typed_error = typed_error(&momentum, &mass, &inputs, make);
     let stated = if frame.is_none() {
-        stated(form, &inputs, angle, degrees)
+        stated(form, &inputs, (angle, degrees))
     } else {
         Stated::default()
     };
@@ -70,37 +70,45 @@ pub(super) fn solve(solver: &mut Solver<'_>, id: &ObjectId) -> Result<SolvedPart
 
 /// A closing particle that no collision closes.
 fn unclosed(solver: &Solver<'_>, id: &ObjectId) -> Spoiled {
-    let users: Vec<&str> = solver
-        .scene
-        .collisions
-        .iter()
-        .filter(|(_, c)| {
-            c.form
-                .before
-                .iter()
-                .chain(&c.form.after)
-                .any(|name| **name == *id.name)
-        })
-        .map(|(name, _)| &**name)
-        .collect();
-    if users.is_empty() {
-        fault(
+    let holding = solver.scene.collisions.iter().find(|(_, c)| {
+        c.form
+            .before
+            .iter()
+            .chain(&c.form.after)
+            .any(|name| **name == *id.name)
+    });
+    let Some((name, collision)) = holding else {
+        return fault(
             id,
             "state",
             "it is Closing, but stands in no collision",
             "name it in a collision whose closure is Merge or Remainder, or give its state",
-        )
+        );
+    };
+    let form = &collision.form;
+    let unknown: Vec<&str> = form
+        .before
+        .iter()
+        .chain(&form.after)
+        .filter_map(|name| solver.scene.particles.get_full(name.as_str()))
+        .filter(|(i, _, p)| p.form.state == State::Closing && solver.closers[*i].is_none())
+        .map(|(_, name, _)| &**name)
+        .collect();
+    let what = if form.closure == Closure::Given {
+        format!("it is Closing, but the closure Given of collision {name} finds nothing")
     } else {
-        fault(
-            id,
-            "state",
-            format!(
-                "it is Closing, but collision {} cannot find it",
-                users.join(", ")
-            ),
-            "a collision with the closure Merge or Remainder finds one unknown particle",
+        let (count, names) = (unknown.len(), unknown.join(", "));
+        format!(
+            "collision {name} has {count} unknown particles ({names}), and {:?} finds one",
+            form.closure
         )
-    }
+    };
+    fault(
+        id,
+        "state",
+        what,
+        "give the state of all but one of them, and the closure Merge or Remainder",
+    )
 }
 
 /// The mass of a particle by its species or as typed; none where neither is said.
@@ -116,7 +124,7 @@ pub(super) fn mass(
                 id,
                 "mass",
                 "it has a species and a mass",
-                "leave one of them out; a mass of its own goes with no species, or with one of the scene's",
+                "leave one of them out; a mass belongs to the species",
             ));
         }
         (None, None) => return Ok(None),
@@ -169,8 +177,8 @@ fn unknown_species(solver: &Solver<'_>, id: &ObjectId, name: &str) -> Spoiled {
     )
 }
 
-/// The direction that a state of positive numbers goes, and its degrees where they are those typed.
-fn direction(id: &ObjectId, form: &Particle) -> Result<(Angle, Option<f64>), Spoiled> {
+/// Direction of the motion, and the same in degrees as typed.
+fn direction(id: &ObjectId, form: &Particle) -> Result<(Angle, f64), Spoiled> {
     let whole = matches!(
         form.state,
         State::Components { .. } | State::Longitudinal { .. }
@@ -207,15 +215,18 @@ fn direction(id: &ObjectId, form: &Particle) -> Result<(Angle, Option<f64>), Spo
             "leave toward out and give the number its sign",
         ));
     }
-    let turned = form.toward == Some(Toward::Minus);
-    let turn = if turned { 180.0 } else { 0.0 };
-    let Some(typed) = &form.angle else {
-        return Ok((Angle::from_degrees(turn), None));
+    let turn = if form.toward == Some(Toward::Minus) {
+        180.0
+    } else {
+        0.0
     };
-    let degrees = frames::degrees(id, typed)?;
-    let within = degrees > -180.0 && degrees <= 180.0;
-    let as_typed = (within && !turned).then_some(degrees);
-    Ok((Angle::from_degrees(degrees + turn), as_typed))
+    let typed = form
+        .angle
+        .as_ref()
+        .map(|typed| frames::degrees(id, typed))
+        .transpose()?;
+    let degrees = typed.unwrap_or(0.0) + turn;
+    Ok((Angle::from_degrees(degrees), degrees))
 }
 
 /// The typed numbers of a state, read.
@@ -352,17 +363,16 @@ fn typed_error(
 }
 
 /// What was typed and what follows from it without arithmetic, to be shown in the base frame as typed.
-fn stated(form: &Particle, inputs: &Inputs, angle: Angle, degrees: Option<f64>) -> Stated {
+fn stated(form: &Particle, inputs: &Inputs, (angle, degrees): (Angle, f64)) -> Stated {
     let number = |i: usize| inputs.numbers.get(i).map(|q| q.value.to_f64());
-    // A negative number turns the motion round, away from the angle typed.
-    let backward = match inputs.rapidity {
-        Some(rapidity) => rapidity.value() < 0.0,
-        None => number(0).is_some_and(|n| n < 0.0),
-    };
-    let mut stated = Stated {
-        angle: degrees.filter(|_| !backward),
-        ..Stated::default()
-    };
+    let mut stated = Stated::default();
+    // What goes backward (a negative size, a k below 1) points the other way, and an angle beyond half a turn is
+    // another angle.
+    let signed = inputs.rapidity.map(Rapidity::value).or(number(0));
+    let is_as_typed = signed.is_none_or(|n| n >= 0.0) && degrees > -180.0 && degrees <= 180.0;
+    if form.angle.is_some() && is_as_typed {
+        stated.angle = Some(degrees);
+    }
     let along = (angle.sin() == 0.0).then(|| angle.cos());
     match &form.state {
         State::Velocity(velocity) => match velocity {
@@ -392,7 +402,7 @@ fn stated(form: &Particle, inputs: &Inputs, angle: Angle, degrees: Option<f64>) 
 fn impossible(id: &ObjectId, form: &Particle, error: &DynamicsError) -> Spoiled {
     let mend = match &form.state {
         State::Energy(_) => "a total energy is at least the mass",
-        State::Kinetic(_) => "a kinetic energy is not negative",
+        State::Kinetic(_) => "give it in the direction of the motion, which angle or toward turns",
         State::AtRest | State::Velocity(_) => {
             "light needs an energy or a momentum; a mass needs a velocity below that of light"
         }

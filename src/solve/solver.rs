@@ -94,7 +94,10 @@ impl Solver<'_> {
         let id = graph::id_of(self.scene, node);
         let i = node.index;
         match node.kind {
-            Kind::Event => self.events[i] = Some(events::solve(self, &id)?),
+            Kind::Event => {
+                let event = events::solve(self, &id)?;
+                self.events[i] = Some(event);
+            }
             Kind::Line => {
                 let line = lines::solve(self, &id)?;
                 for tick in lines::rapidities(&line) {

@@ -69,12 +69,12 @@ fn typed_of(velocity: &Velocity) -> &Typed {
 
 fn domain(velocity: &Velocity) -> &'static str {
     match velocity {
-        Velocity::Beta(_) => "beta lies between -1 and 1; light is a line of its own",
-        Velocity::Gamma(_) => "gamma is 1 or more",
+        Velocity::Beta(_) => "light is a line of its own, and nothing is faster",
+        Velocity::Gamma(_) => "for 1 / gamma or gamma beta take another form",
         Velocity::Celerity(_) => "the celerity gamma beta is any number up to 1e250",
-        Velocity::Rapidity(_) => "a rapidity lies between -600 and 600",
-        Velocity::Doppler(_) => "k is above 0",
-        Velocity::BehindLight(_) => "1 - beta lies above 0 and at most at 1",
+        Velocity::Rapidity(_) => "choose a slower one",
+        Velocity::Doppler(_) => "k is e to the rapidity: below 1 toward -x",
+        Velocity::BehindLight(_) => "0 would be light, 1 is rest",
     }
 }
 

@@ -3,7 +3,7 @@
 use super::Opened;
 use super::open::place;
 use crate::export::{ExportFault, Format, Options, write};
-use crate::fault::{Fault, nearest};
+use crate::fault::{Fault, Weight, nearest};
 use crate::ledger::{FaultRow, Ledger};
 use crate::plate::{self, Laid, Override};
 use crate::scene::When;
@@ -89,6 +89,19 @@ pub fn draw(opened: &Opened, drawing: &Drawing) -> Result<Drawn, TaskFault> {
         only,
     };
     let laid = lay_out(opened, plate, &change).ok_or_else(|| no_plate(opened, plate))?;
+    if laid.panels.iter().all(|panel| panel.is_blank) {
+        let grave = laid.faults.into_iter().find(|f| f.weight == Weight::Fault);
+        return Err(grave.map_or_else(
+            || TaskFault {
+                what: "there is nothing to draw".to_owned(),
+                mend: "add events, lines or particles".to_owned(),
+            },
+            |fault| TaskFault {
+                what: fault.what,
+                mend: fault.mend,
+            },
+        ));
+    }
     let mut faults = opened.faults.clone();
     faults.extend(laid.faults);
     place(&opened.places, &mut faults);
@@ -165,6 +178,7 @@ fn no_plate(opened: &Opened, plate: Option<&str>) -> TaskFault {
 }
 
 fn panel_index(letter: char, panels: usize) -> Result<usize, TaskFault> {
+    let letter = letter.to_ascii_lowercase();
     let index = usize::try_from(u32::from(letter))
         .unwrap_or(0)
         .wrapping_sub(usize::from(b'a'));

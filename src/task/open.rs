@@ -4,7 +4,7 @@ use std::path::Path;
 use std::sync::Arc;
 
 use crate::disk::{DiskFault, read_text};
-use crate::fault::{Fault, Place};
+use crate::fault::{Fault, Place, Weight};
 use crate::plate::Override;
 use crate::scene::{Places, Scene, Unreadable, read};
 use crate::solve::{Solved, solve};
@@ -37,7 +37,7 @@ impl OpenFault {
     /// One line for people: `file:line:column: what; mend`.
     pub fn line(&self, file: &str) -> String {
         match self {
-            Self::Disk(fault) => format!("{file}: {}; {}", fault.what, fault.mend),
+            Self::Disk(fault) => format!("{}; {}", fault.what, fault.mend),
             Self::Text(Unreadable {
                 place: Some(Place { line, column }),
                 what,
@@ -83,13 +83,15 @@ pub fn open_text(text: &str) -> Result<Opened, Unreadable> {
     })
 }
 
-/// All faults and findings of a scene, those of its plates included, in the order of the file.
+/// All faults and findings of a scene, those of its plates included, in the order of the file. Remarks on
+/// a plate are made when it is drawn.
 pub fn audit(opened: &Opened) -> Vec<Fault> {
     let mut faults = opened.faults.clone();
     for name in opened.scene.plates.keys() {
         let laid = super::lay_out(opened, Some(name), &Override::default());
         faults.extend(laid.into_iter().flat_map(|laid| laid.faults));
     }
+    faults.retain(|fault| fault.weight != Weight::Remark);
     place(&opened.places, &mut faults);
     faults.dedup();
     faults

@@ -215,6 +215,17 @@ fn paths_named_for_developers_exist() {
     }
 }
 
+#[test]
+fn the_scene_in_the_readme_is_the_one_that_is_shipped() {
+    let readme = fs::read_to_string(root().join("README.md")).unwrap();
+    let scene = fs::read_to_string(root().join("scenes/tug-and-beacon.ron")).unwrap();
+    assert!(readme.contains(&format!("```ron\n{scene}```")));
+    for (at, _) in readme.match_indices("](screenshots/") {
+        let path: String = readme[at + 2..].chars().take_while(|c| *c != ')').collect();
+        assert!(root().join(&path).exists(), "README.md shows {path}");
+    }
+}
+
 fn cargo(args: &[&str]) -> String {
     let out = Command::new(env!("CARGO"))
         .args(args)
