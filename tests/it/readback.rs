@@ -16,7 +16,7 @@ use resvg::usvg::roxmltree;
 const BOUND: f64 = 0.002 + 0.5e-4 * std::f64::consts::SQRT_2;
 /// Most cubic pieces of one curve in one field.
 const MOST_PIECES: usize = 8;
-/// Points compared on each written piece, and on each true curve by each coordinate.
+/// Points compared on each true curve by each coordinate; on each written piece, half as many.
 const POINTS: usize = 20;
 
 /// A random generator (Marsaglia 2003, xorshift).
@@ -64,23 +64,22 @@ impl Branch {
             _ => Point::new(-p.y, p.x),
         }
     }
-    /// Its distance from a point of the plane, by Newton's method for the foot of the perpendicular.
+    /// Its distance from a point of the plane. The foot (a, h) has (a - x) + (h - y) a/h = 0; for x above 0 the left
+    /// side is convex in a where y is above 0 and rises where it is not, so it has one root, found by bisection.
     fn distance(self, p: Point) -> f64 {
-        let at = self.own(p);
+        let (x, y) = (self.own(p).x.abs(), self.own(p).y);
         let along = |across: f64| self.size.hypot(across);
-        let mut across = at.x;
-        for _ in 0..60 {
+        let (mut low, mut high) = (0.0, f64::midpoint(x, y.max(0.0)));
+        for _ in 0..50 {
+            let across = f64::midpoint(low, high);
             let here = along(across);
-            let slope = across / here;
-            let bend = self.size / here * (self.size / here) / here;
-            let first = (across - at.x) + (here - at.y) * slope;
-            let step = first / (here - at.y).mul_add(bend, 1.0 + slope * slope).max(0.5);
-            across -= step;
-            if step.abs() <= 1e-15 * here {
-                break;
+            if (across - x) + (here - y) * (across / here) < 0.0 {
+                low = across;
+            } else {
+                high = across;
             }
         }
-        (across - at.x).hypot(along(across) - at.y)
+        (low - x).hypot(along(low) - y)
     }
     /// Points of it inside a rectangle of the plane, evenly across and evenly along.
     fn inside(self, plane: Rect) -> Vec<Point> {
@@ -144,7 +143,7 @@ fn farthest_off(pieces: &[CubicBez], branch: Branch, panel: &PanelPlace) -> f64 
     let (scale, back) = (panel.from_plane.as_coeffs()[0], panel.from_plane.inverse());
     let points = pieces
         .iter()
-        .flat_map(|piece| (0..=POINTS).map(|i| piece.eval(i as f64 / POINTS as f64)));
+        .flat_map(|piece| (0..=10).map(|i| piece.eval(f64::from(i) / 10.0)));
     points
         .map(|p| branch.distance(back * p) * scale)
         .fold(0.0, f64::max)
@@ -185,11 +184,11 @@ fn window(draws: &mut Draws, round: usize) -> (Rect, f64) {
     };
     let (p, energy) = (mass * rapidity.sinh(), mass * rapidity.cosh());
     let half = mass * draws.power_of_ten(-1.0, 2.0) * (0.3 * rapidity.abs()).exp();
+    let upright = half * draws.between(0.4, 1.5);
     let (p, energy) = (
         p + half * draws.between(-0.8, 0.8),
-        energy + half * draws.between(-0.8, 0.8),
+        energy + upright * draws.between(-0.8, 0.8),
     );
-    let upright = half * draws.between(0.4, 1.5);
     (
         Rect::new(p - half, energy - upright, p + half, energy + upright),
         mass,
@@ -260,7 +259,11 @@ fn compare_shells(draws: &mut Draws, round: usize) -> usize {
             pieces.len()
         );
         let off = farthest_off(&pieces, branch, &panel);
-        assert!(off <= BOUND, "round {round}, q{i}: {off} mm off\n{text}");
+        assert!(
+            off <= BOUND,
+            "round {round}, q{i}: {off} mm off of {size}, {} pieces\n{text}",
+            pieces.len()
+        );
         let missing = farthest_missing(&truth, &pieces, &panel);
         assert!(
             missing <= BOUND,
@@ -291,7 +294,7 @@ fn rounds(count: usize, seed: u64, round: fn(&mut Draws, usize) -> usize) -> usi
 #[test]
 fn mass_shells_as_written_are_the_true_curves() {
     let shown = rounds(320, 0x5eed_0011, compare_shells);
-    assert!(shown >= 8_000, "only {shown} shells were in their fields");
+    assert!(shown >= 8_500, "only {shown} shells were in their fields");
 }
 
 /// A spacetime panel of whole light seconds with all its hyperbolas, and with the axes of one frame where there is one.
@@ -414,7 +417,7 @@ fn compare_arcs(draws: &mut Draws, round: usize) -> usize {
             if let Some(rapidity) = frame {
                 carried(&mut truth, branch, rapidity, plane);
             }
-            let pieces = drawn.get(&(turns, count)).unwrap_or(&const { Vec::new() });
+            let pieces = drawn.get(&(turns, count)).map_or(&[][..], Vec::as_slice);
             let missing = farthest_missing(&truth, pieces, &panel);
             assert!(
                 missing <= BOUND,
@@ -442,6 +445,6 @@ fn carried(truth: &mut Vec<Point>, branch: Branch, rapidity: f64, plane: Rect) {
 
 #[test]
 fn calibration_arcs_as_written_are_the_true_curves() {
-    let drawn = rounds(150, 0x5eed_0012, compare_arcs);
-    assert!(drawn >= 2_000, "only {drawn} arcs were drawn");
+    let drawn = rounds(400, 0x5eed_0012, compare_arcs);
+    assert!(drawn >= 1_500, "only {drawn} arcs were drawn");
 }

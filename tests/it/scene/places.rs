@@ -177,14 +177,14 @@ proptest! {
     #[test]
     fn a_character_within_a_string_is_found_behind_escapes(units in written(), n in 1..12_usize) {
         let contents: String = units.iter().map(|(_, text)| *text).collect();
-        let text = with(&format!("events: {{ \"a\": At(t: 0, x: 0, label: \"{contents}\") }}"));
+        let text = with(&format!("events: {{ \"a\": At(t: 0, x: 0, note: \"{contents}\") }}"));
         let reading = sound(&text);
         let meant: String = units.iter().map(|(c, _)| *c).collect();
-        prop_assert_eq!(reading.scene.events["a"].common.label.as_deref(), Some(&*meant));
+        prop_assert_eq!(reading.scene.events["a"].common.note.as_deref(), Some(&*meant));
         let n = n.min(units.len());
         let before: usize = units[..n].iter().map(|(_, text)| text.chars().count()).sum();
         let expected = further(place_of(&text, &format!("\"{contents}\") }}"), 0), 1 + before);
-        prop_assert_eq!(reading.places.find(&id(Kind::Event, "a"), "label", n), Some(expected));
+        prop_assert_eq!(reading.places.find(&id(Kind::Event, "a"), "note", n), Some(expected));
     }
 }
 
@@ -198,4 +198,16 @@ fn a_character_within_a_raw_string_is_found() {
     assert_eq!(places.find(&event, "label", 4), Some(further(label, 7)));
     let x = place_of(&text, "12.5", 0);
     assert_eq!(places.find(&event, "x", 3), Some(further(x, 3)));
+}
+
+#[test]
+fn a_label_whose_backslash_was_eaten_is_pointed_at() {
+    let text = with("events: { \"a\": At(t: 0, x: 0, label: \"\\tau\") }");
+    let reading = conewright::scene::read(&text).unwrap();
+    let [fault] = &reading.faults[..] else {
+        panic!("{:?}", reading.faults)
+    };
+    assert!(fault.what.contains("control character"), "{fault:?}");
+    assert_eq!(fault.place, Some(place_of(&text, "\"\\tau\"", 0)));
+    assert!(reading.scene.events.contains_key("a"));
 }
