@@ -5,14 +5,16 @@ use super::frames;
 use super::solver::{Solver, Spoiled, fault};
 use crate::fault::{Fault, ObjectId};
 use crate::geometry::{Displacement, GeometryError};
+use crate::num::exp;
 use crate::quantity::Typed;
 use crate::scene::{Event, When};
 
 pub(super) fn solve(solver: &mut Solver<'_>, id: &ObjectId) -> Result<SolvedEvent, Spoiled> {
     let object = solver.scene.events.get(&id.name).ok_or(None)?.clone();
     let label = object.common.label.clone();
-    let derived = |at| SolvedEvent {
+    let derived = |at: Displacement| SolvedEvent {
         at,
+        rounding: everywhere(DERIVED * largest(at)),
         exact: None,
         stated: None,
         label: label.clone(),
@@ -34,12 +36,18 @@ pub(super) fn solve(solver: &mut Solver<'_>, id: &ObjectId) -> Result<SolvedEven
             Ok(derived(a.meeting(b).map_err(|e| no_event(id, "of", &e))?))
         }
         Event::LightFrom { event, meets } => {
-            let from = solver.event(event)?.at;
+            let from = solver.event(event)?;
             let world = &solver.line(meets)?.world;
-            let at = world
-                .light_from(from)
-                .map_err(|e| no_event(id, "meets", &e))?;
-            if at == from {
+            let met = world.light_from(from.at);
+            let mut found = derived(met.map_err(|e| no_event(id, "meets", &e))?);
+            // The null coordinate that the light keeps is as good as that of the event it leaves from.
+            if found.at.u == from.at.u {
+                found.rounding.u = from.rounding.u;
+            }
+            if found.at.v == from.at.v {
+                found.rounding.v = from.rounding.v;
+            }
+            if found.at == from.at {
                 let what = format!(
                     "event {event} lies on line {meets} itself, so the light meets it at once"
                 );
@@ -51,7 +59,7 @@ pub(super) fn solve(solver: &mut Solver<'_>, id: &ObjectId) -> Result<SolvedEven
                 );
                 solver.faults.push(finding.finding());
             }
-            Ok(derived(at))
+            Ok(found)
         }
     }
 }
@@ -92,6 +100,7 @@ fn at(
         let stated = Some((t.to_f64(), x.to_f64()));
         return Ok(SolvedEvent {
             at: given,
+            rounding: scaled(given, f64::EPSILON),
             exact: Some((t, way)),
             stated,
             label: None,
@@ -99,12 +108,35 @@ fn at(
     };
     let outside = |e: GeometryError| fault(id, "frame", e.to_string(), "choose a slower frame");
     let moved = frame.boost.inverse().apply(given).map_err(outside)?;
+    let turn = frame.boost.rapidity().value().abs();
+    let rounding = if frame.boost.is_along_x() {
+        scaled(moved, (turn + 8.0) * f64::EPSILON)
+    } else {
+        everywhere(16.0 * f64::EPSILON * largest(given) * exp(turn))
+    };
+    let at = moved + frame.origin;
     Ok(SolvedEvent {
-        at: moved + frame.origin,
+        at,
+        rounding: rounding + frame.origin_rounding + scaled(at, f64::EPSILON),
         exact: None,
         stated: None,
         label: None,
     })
+}
+
+/// Relative rounding of a derived event's coordinates: 8 units in the last place of the largest one.
+const DERIVED: f64 = 8.0 * f64::EPSILON;
+
+fn everywhere(bound: f64) -> Displacement {
+    Displacement::new(bound, bound, bound)
+}
+
+fn scaled(d: Displacement, k: f64) -> Displacement {
+    Displacement::new(k * d.u.abs(), k * d.v.abs(), k * d.y.abs())
+}
+
+fn largest(d: Displacement) -> f64 {
+    d.u.abs().max(d.v.abs()).max(d.y.abs())
 }
 
 fn in_range(component: f64) -> bool {

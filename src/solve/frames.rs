@@ -34,6 +34,7 @@ pub(super) fn solve(solver: &mut Solver<'_>, id: &ObjectId) -> Result<SolvedFram
     Ok(SolvedFrame {
         boost,
         origin: event.map_or_else(Displacement::default, |e| e.at),
+        origin_rounding: event.map_or_else(Displacement::default, |e| e.rounding),
         origin_exact: event.and_then(|e| e.exact.clone()),
         origin_name: origin.map(Into::into),
         label: object.common.label.clone(),
@@ -162,6 +163,7 @@ pub(super) fn named(
             Ok(Some(SolvedFrame {
                 boost: Boost::along_x(rapidity),
                 origin: Displacement::default(),
+                origin_rounding: Displacement::default(),
                 origin_exact: None,
                 origin_name: None,
                 label: None,

@@ -366,8 +366,10 @@ fn typed_error(
 fn stated(form: &Particle, inputs: &Inputs, (angle, degrees): (Angle, f64)) -> Stated {
     let number = |i: usize| inputs.numbers.get(i).map(|q| q.value.to_f64());
     let mut stated = Stated::default();
-    // A negative size points the other way, and an angle beyond half a turn is another angle.
-    let is_as_typed = number(0).is_none_or(|n| n >= 0.0) && degrees > -180.0 && degrees <= 180.0;
+    // What goes backward (a negative size, a k below 1) points the other way, and an angle beyond half a turn is
+    // another angle.
+    let signed = inputs.rapidity.map(Rapidity::value).or(number(0));
+    let is_as_typed = signed.is_none_or(|n| n >= 0.0) && degrees > -180.0 && degrees <= 180.0;
     if form.angle.is_some() && is_as_typed {
         stated.angle = Some(degrees);
     }

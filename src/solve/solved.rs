@@ -51,6 +51,9 @@ pub struct Stated {
 pub struct SolvedEvent {
     /// From the base frame's origin, in time units.
     pub at: Displacement,
+    /// How far u, v and y may be off for rounding, in time units. An event given in a fast frame keeps the digits of
+    /// each null component, however large the other one is.
+    pub rounding: Displacement,
     /// t and x (in time units) before any rounding, for an event typed in the base frame.
     pub exact: Option<(Number, Number)>,
     /// t in time units and x in length units as typed, for an event typed in the base frame.
@@ -121,6 +124,8 @@ pub struct SolvedFrame {
     pub boost: Boost,
     /// The event that is (0, 0) in it, from the base frame's origin.
     pub origin: Displacement,
+    /// How far that may be off for rounding.
+    pub origin_rounding: Displacement,
     /// The same before any rounding, for an event typed in the base frame.
     pub origin_exact: Option<(Number, Number)>,
     /// The event's name, where it has one of its own.

@@ -6,9 +6,6 @@ use crate::geometry::{Boost, Displacement, Rapidity, Separation};
 use crate::quantity::{Dimension, Unit, read};
 use crate::scene::When;
 
-/// Relative rounding of a derived event's coordinates: 8 units in the last place of the largest one used.
-const DERIVED: f64 = 8.0 * f64::EPSILON;
-
 impl SolvedCollision {
     /// After less before: E, px, py.
     pub fn difference(&self) -> [f64; 3] {
@@ -81,10 +78,8 @@ impl Solved {
         if a.exact.is_some() && b.exact.is_some() {
             return (d, d.separation());
         }
-        let largest = [a.at.u, a.at.v, b.at.u, b.at.v]
-            .iter()
-            .fold(0.0f64, |m, c| m.max(c.abs()));
-        let bound = DERIVED * largest * (d.u.abs() + d.v.abs() + 2.0 * d.y.abs());
+        let off = a.rounding + b.rounding;
+        let bound = d.u.abs() * off.v + d.v.abs() * off.u + 2.0 * d.y.abs() * off.y;
         (d, d.separation_within(bound))
     }
 

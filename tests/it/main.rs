@@ -13,6 +13,7 @@ mod hostile;
 mod house;
 mod label;
 mod lettering;
+mod oracle;
 mod outside;
 mod picture;
 mod plate;
