@@ -63,9 +63,9 @@ pub(super) fn canvas(
     bar(ui, rect, &lie, context, wishes);
 }
 
-/// Four corners just inside the active panel's edge.
+/// Four corners on the active panel's edge, clear of the panel's letter.
 fn brackets(painter: &egui::Painter, panel: Rect) {
-    let inner = panel.shrink(6.0);
+    let inner = panel.shrink(FOCUS / 2.0);
     let stroke = Stroke::new(FOCUS, ON_PAPER);
     for (x, y) in [(-1.0, -1.0), (1.0, -1.0), (1.0, 1.0), (-1.0, 1.0)] {
         let corner = pos2(
