@@ -94,7 +94,9 @@ fn drawn(scene: &Path) -> Vec<Figure> {
             for ending in ["svg", "pdf", "png", "tex"] {
                 let (scene, to) = (scene.to_str().unwrap(), figure.path(ending));
                 let (to, dpi) = (to.to_str().unwrap(), DPI.to_string());
-                let ran = run(&["draw", scene, "--plate", plate, "--dpi", &dpi, "--force", "--to", to]);
+                let ran = run(&[
+                    "draw", scene, "--plate", plate, "--dpi", &dpi, "--force", "--to", to,
+                ]);
                 assert_eq!(ran.code, 0, "{}: {}", figure.name, ran.err);
             }
             figure
@@ -108,14 +110,20 @@ fn every_pdf_is_sound() {
         let Some(mut qpdf) = tool("qpdf") else { return };
         let said = printed(qpdf.arg("--check").arg(figure.path("pdf")));
         let is_clean = said.contains("No syntax or stream encoding errors");
-        assert!(is_clean && !said.contains("WARNING"), "{}: {said}", figure.name);
+        assert!(
+            is_clean && !said.contains("WARNING"),
+            "{}: {said}",
+            figure.name
+        );
     }
 }
 
 #[test]
 fn every_pdf_embeds_all_its_fonts_and_none_is_type_3() {
     for figure in figures() {
-        let Some(mut fonts) = tool("pdffonts") else { return };
+        let Some(mut fonts) = tool("pdffonts") else {
+            return;
+        };
         let said = printed(fonts.arg(figure.path("pdf")));
         let rows: Vec<Vec<&str>> = said
             .lines()
@@ -128,7 +136,11 @@ fn every_pdf_embeds_all_its_fonts_and_none_is_type_3() {
             // Name, type, encoding, then: emb sub uni object generation.
             let (kind, last) = row.split_at(row.len() - 5);
             assert_eq!(last[..3], ["yes", "yes", "yes"], "{}: {said}", figure.name);
-            assert!(!kind.join(" ").contains("Type 3"), "{}: {said}", figure.name);
+            assert!(
+                !kind.join(" ").contains("Type 3"),
+                "{}: {said}",
+                figure.name
+            );
         }
     }
 }
@@ -136,13 +148,25 @@ fn every_pdf_embeds_all_its_fonts_and_none_is_type_3() {
 #[test]
 fn every_pdf_has_the_width_its_author_wrote() {
     for figure in figures() {
-        let Some(mut info) = tool("pdfinfo") else { return };
+        let Some(mut info) = tool("pdfinfo") else {
+            return;
+        };
         let said = printed(info.arg(figure.path("pdf")));
-        let size = said.lines().find_map(|line| line.strip_prefix("Page size:")).unwrap();
-        let sides: Vec<f64> = size.split_whitespace().filter_map(|s| s.parse().ok()).collect();
+        let size = said
+            .lines()
+            .find_map(|line| line.strip_prefix("Page size:"))
+            .unwrap();
+        let sides: Vec<f64> = size
+            .split_whitespace()
+            .filter_map(|s| s.parse().ok())
+            .collect();
         // Points of 1/72 inch; pdfinfo prints six digits.
         for (side, mm) in sides.iter().zip([figure.width, figure.sheet.height]) {
-            assert!((side / 72.0 * 25.4 - mm).abs() < 1e-3, "{}: {size}", figure.name);
+            assert!(
+                (side / 72.0 * 25.4 - mm).abs() < 1e-3,
+                "{}: {size}",
+                figure.name
+            );
         }
         assert_eq!(sides.len(), 2, "{}: {size}", figure.name);
     }
@@ -160,7 +184,9 @@ fn counted<'a>(texts: impl IntoIterator<Item = &'a str>) -> BTreeMap<char, usize
 /// What pdftotext finds in a PDF in the order of its content, spaces left out.
 fn found(figure: &Figure) -> Option<String> {
     let mut reader = tool("pdftotext")?;
-    Some(without_spaces(&printed(reader.arg("-raw").arg(figure.path("pdf")).arg("-"))))
+    Some(without_spaces(&printed(
+        reader.arg("-raw").arg(figure.path("pdf")).arg("-"),
+    )))
 }
 
 #[test]
@@ -173,26 +199,40 @@ fn every_label_is_found_in_the_pdf_by_its_letters() {
         for label in &labels {
             // A fraction's bar is ink, no letter.
             for part in label.split('/').filter(|part| !part.is_empty()) {
-                assert!(found.contains(part), "{}: {part} of {label} in {found}", figure.name);
+                assert!(
+                    found.contains(part),
+                    "{}: {part} of {label} in {found}",
+                    figure.name
+                );
             }
         }
         let wanted = counted(labels.iter().map(String::as_str));
         let there = counted([&*found]);
         for (letter, count) in wanted.iter().filter(|(letter, _)| **letter != '/') {
             let seen = there.get(letter).copied().unwrap_or(0);
-            assert!(seen >= *count, "{}: {count} of {letter} in {found}", figure.name);
+            assert!(
+                seen >= *count,
+                "{}: {count} of {letter} in {found}",
+                figure.name
+            );
         }
     }
 }
 
 #[test]
 fn scripts_bars_and_fractions_are_found_as_unicode_has_them() {
-    let figure = figures().iter().find(|figure| figure.name == SCRIPTS).unwrap();
+    let figure = figures()
+        .iter()
+        .find(|figure| figure.name == SCRIPTS)
+        .unwrap();
     let Some(found) = found(figure) else { return };
     // Unicode 15: prime, Greek capital lambda, minus sign. An event and a particle are labelled p_a'.
     assert!(found.matches("pa\u{2032}").count() >= 2, "{found}");
     assert!(found.contains('\u{39B}'), "{found}");
-    assert!(found.contains("p\u{2212}") && found.contains("p+"), "{found}");
+    assert!(
+        found.contains("p\u{2212}") && found.contains("p+"),
+        "{found}"
+    );
     // One event's label, and the title of the upright axis.
     assert!(found.matches("ct/m").count() >= 2, "{found}");
 }
@@ -206,16 +246,29 @@ fn every_tikz_picture_is_set_at_its_size_without_a_warning() {
              \\box0\n\\end{{document}}\n",
             figure.path("tex").display()
         );
-        let Some(log) = latex_log(&document) else { return };
+        let Some(log) = latex_log(&document) else {
+            return;
+        };
         let signs = ["Warning", "Missing", "Overfull", "Underfull"];
-        let said: Vec<&str> =
-            log.lines().filter(|line| signs.iter().any(|sign| line.contains(sign))).collect();
+        let said: Vec<&str> = log
+            .lines()
+            .filter(|line| signs.iter().any(|sign| line.contains(sign)))
+            .collect();
         assert!(said.is_empty(), "{}: {said:?}", figure.name);
-        let sides = log.lines().find_map(|line| line.strip_prefix("SIDES ")).unwrap();
-        let sides = sides.split_whitespace().map(|s| s.trim_end_matches("pt").parse::<f64>().unwrap());
+        let sides = log
+            .lines()
+            .find_map(|line| line.strip_prefix("SIDES "))
+            .unwrap();
+        let sides = sides
+            .split_whitespace()
+            .map(|s| s.trim_end_matches("pt").parse::<f64>().unwrap());
         // TeX's points: 72.27 in an inch (The TeXbook, chapter 10).
         for (side, mm) in sides.zip([figure.width, figure.sheet.height]) {
-            assert!((side / 72.27 * 25.4 - mm).abs() < 0.01, "{}: {side} pt, {mm} mm", figure.name);
+            assert!(
+                (side / 72.27 * 25.4 - mm).abs() < 0.01,
+                "{}: {side} pt, {mm} mm",
+                figure.name
+            );
         }
     }
 }
@@ -224,15 +277,24 @@ fn every_tikz_picture_is_set_at_its_size_without_a_warning() {
 fn every_png_has_the_dots_and_the_size_asked_for() {
     for figure in figures() {
         let bytes = figure.bytes("png");
-        let reader = png::Decoder::new(std::io::Cursor::new(&bytes)).read_info().unwrap();
+        let reader = png::Decoder::new(std::io::Cursor::new(&bytes))
+            .read_info()
+            .unwrap();
         let info = reader.info();
         let dims = info.pixel_dims.unwrap();
         assert!(matches!(dims.unit, png::Unit::Meter));
         // 254 dots in 25.4 mm.
         assert_eq!((dims.xppu, dims.yppu), (10_000, 10_000), "{}", figure.name);
-        for (dots, mm) in [(info.width, figure.width), (info.height, figure.sheet.height)] {
+        for (dots, mm) in [
+            (info.width, figure.width),
+            (info.height, figure.sheet.height),
+        ] {
             let stated = f64::from(dots) / f64::from(dims.xppu) * 1000.0;
-            assert!((stated - mm).abs() <= 0.05 + 1e-9, "{}: {stated} mm of {mm} mm", figure.name);
+            assert!(
+                (stated - mm).abs() <= 0.05 + 1e-9,
+                "{}: {stated} mm of {mm} mm",
+                figure.name
+            );
         }
     }
 }
@@ -243,14 +305,36 @@ fn every_svg_is_read_at_its_size_in_mm() {
         let source = figure.svg();
         let document = usvg::roxmltree::Document::parse(&source).unwrap();
         let root = document.root_element();
-        let side = |name: &str| root.attribute(name).and_then(|s| s.strip_suffix("mm")?.parse::<f64>().ok());
+        let side = |name: &str| {
+            root.attribute(name)
+                .and_then(|s| s.strip_suffix("mm")?.parse::<f64>().ok())
+        };
         let (width, height) = (side("width").unwrap(), side("height").unwrap());
-        assert!((width - figure.width).abs() < 1e-4, "{}: {width} mm", figure.name);
-        assert!((height - figure.sheet.height).abs() < 1e-4, "{}: {height} mm", figure.name);
-        let options = usvg::Options { dpi: 25.4, ..Default::default() };
+        assert!(
+            (width - figure.width).abs() < 1e-4,
+            "{}: {width} mm",
+            figure.name
+        );
+        assert!(
+            (height - figure.sheet.height).abs() < 1e-4,
+            "{}: {height} mm",
+            figure.name
+        );
+        let options = usvg::Options {
+            dpi: 25.4,
+            ..Default::default()
+        };
         let size = usvg::Tree::from_str(&source, &options).unwrap().size();
-        assert!((f64::from(size.width()) - width).abs() < 1e-4, "{}", figure.name);
-        assert!((f64::from(size.height()) - height).abs() < 1e-4, "{}", figure.name);
+        assert!(
+            (f64::from(size.width()) - width).abs() < 1e-4,
+            "{}",
+            figure.name
+        );
+        assert!(
+            (f64::from(size.height()) - height).abs() < 1e-4,
+            "{}",
+            figure.name
+        );
     }
 }
 
