@@ -123,10 +123,9 @@ impl Hyperbola {
         path
     }
 
-    /// One cubic: ends and end directions of the curve, handles 4/3 tanh(h/4) of the derivative by rapidity, so that
-    /// the middle lies on the curve (in the frame of its middle it is symmetric, and a boost is linear).
+    /// One cubic: ends and end directions of the curve.
     fn cubic(&self, from: f64, to: f64) -> [Point; 4] {
-        let handle = 4.0 / 3.0 * tanh((to - from) / 4.0) * self.size;
+        let handle = handle(to - from) * self.size;
         let (a, b) = (self.at(from), self.at(to));
         let lean = |rapidity: f64, by: f64| {
             let start = self.place(0.0, 0.0);
@@ -176,7 +175,7 @@ impl Hyperbola {
         let h = to - from;
         let middle = f64::midpoint(from, to);
         let (c, s) = (cosh(h / 2.0), sinh(h / 2.0));
-        let handle = 4.0 / 3.0 * tanh(h / 4.0);
+        let handle = handle(h);
         let (along, across) = (handle.mul_add(-s, c), handle.mul_add(c, -s));
         let (shrink, grow) = (exp(-middle), exp(middle));
         let mut worst = 0.0_f64;
@@ -194,6 +193,13 @@ impl Hyperbola {
         }
         worst * self.size
     }
+}
+
+/// The handles of a piece that spans `h` of rapidity, in units of the derivative by rapidity: 4/3 tanh(h/4) puts the
+/// middle on the curve (in the frame of its middle it is symmetric, and a boost is linear), but no handle reaches past
+/// where the end tangents meet, so that a long piece stays between them and its chord.
+fn handle(h: f64) -> f64 {
+    (4.0 / 3.0 * tanh(h / 4.0)).min(tanh(h / 2.0))
 }
 
 /// Enough to fix a length on paper.

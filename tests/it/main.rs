@@ -6,6 +6,7 @@ mod cli;
 mod core;
 #[cfg(feature = "window")]
 mod desk;
+mod draws;
 mod examples;
 mod export;
 mod facts;

@@ -3,14 +3,21 @@
 //! A mass shell is E^2 - p^2 = m^2 and a calibration arc is |t^2 - x^2| = s^2, in every frame. Both are compared in mm
 //! on paper, both ways: what is written lies on the true curve, and what of the true curve lies in the field is written.
 
+#![expect(
+    clippy::disallowed_methods,
+    reason = "the truth is computed by other functions than the program's"
+)]
+
 use std::collections::BTreeMap;
 use std::fmt::Write as _;
 
 use conewright::export::{Format, Options, write};
 use conewright::plate::{Override, PanelPlace};
 use conewright::task;
-use kurbo::{BezPath, CubicBez, ParamCurve, ParamCurveNearest, PathSeg, Point, Rect, Shape as _};
+use kurbo::{BezPath, CubicBez, ParamCurve, ParamCurveNearest, PathSeg, Point, Rect, Shape};
 use resvg::usvg::roxmltree;
+
+use crate::draws::Draws;
 
 /// The promised 0.002 mm, and the rounding of both coordinates to four decimals.
 const BOUND: f64 = 0.002 + 0.5e-4 * std::f64::consts::SQRT_2;
@@ -19,22 +26,8 @@ const MOST_PIECES: usize = 8;
 /// Points compared on each true curve by each coordinate; on each written piece, half as many.
 const POINTS: usize = 20;
 
-/// A random generator (Marsaglia 2003, xorshift).
-struct Draws(u64);
-
-impl Draws {
-    fn part(&mut self) -> f64 {
-        self.0 ^= self.0 << 13;
-        self.0 ^= self.0 >> 7;
-        self.0 ^= self.0 << 17;
-        (self.0 >> 11) as f64 / (1_u64 << 53) as f64
-    }
-    fn between(&mut self, low: f64, high: f64) -> f64 {
-        low + (high - low) * self.part()
-    }
-    fn power_of_ten(&mut self, low: f64, high: f64) -> f64 {
-        10_f64.powf(self.between(low, high))
-    }
+fn power_of_ten(draws: &mut Draws, low: f64, high: f64) -> f64 {
+    10_f64.powf(draws.between(low, high))
 }
 
 /// One branch of along^2 - across^2 = size^2, along > 0, where (x, y) of the plane are (across, along), or turned.
@@ -83,7 +76,10 @@ impl Branch {
     }
     /// Points of it inside a rectangle of the plane, evenly across and evenly along.
     fn inside(self, plane: Rect) -> Vec<Point> {
-        let (a, b) = (self.own(plane.origin()), self.own(Point::new(plane.x1, plane.y1)));
+        let (a, b) = (
+            self.own(plane.origin()),
+            self.own(Point::new(plane.x1, plane.y1)),
+        );
         let mut found = Vec::new();
         for i in 0..=POINTS {
             let part = i as f64 / POINTS as f64;
@@ -95,7 +91,11 @@ impl Branch {
                 found.extend([Point::new(across, along), Point::new(-across, along)]);
             }
         }
-        found.into_iter().map(|p| self.plane(p)).filter(|p| plane.contains(*p)).collect()
+        found
+            .into_iter()
+            .map(|p| self.plane(p))
+            .filter(|p| plane.contains(*p))
+            .collect()
     }
 }
 
@@ -108,7 +108,10 @@ fn written(text: &str) -> (BTreeMap<String, Vec<BezPath>>, PanelPlace) {
     let document = roxmltree::Document::parse(&source).unwrap();
     let mut paths: BTreeMap<String, Vec<BezPath>> = BTreeMap::new();
     for group in document.descendants().filter(|node| node.has_tag_name("g")) {
-        let title = group.first_element_child().and_then(|title| title.text()).unwrap();
+        let title = group
+            .first_element_child()
+            .and_then(|title| title.text())
+            .unwrap();
         let strokes = group.children().filter(|node| node.has_attribute("stroke"));
         let read = strokes.map(|node| BezPath::from_svg(node.attribute("d").unwrap()).unwrap());
         paths.entry(title.to_owned()).or_default().extend(read);
@@ -121,25 +124,42 @@ fn cubics(paths: &[BezPath]) -> Vec<CubicBez> {
         PathSeg::Cubic(cubic) => cubic,
         other => panic!("a hyperbola is written as cubics, not as {other:?}"),
     };
-    paths.iter().flat_map(BezPath::segments).map(cubic).collect()
+    paths
+        .iter()
+        .flat_map(BezPath::segments)
+        .map(cubic)
+        .collect()
 }
 
 /// The farthest that points of the pieces are from the true curve, mm.
 fn farthest_off(pieces: &[CubicBez], branch: Branch, panel: &PanelPlace) -> f64 {
     let (scale, back) = (panel.from_plane.as_coeffs()[0], panel.from_plane.inverse());
-    let points = pieces.iter().flat_map(|piece| (0..=10).map(|i| piece.eval(f64::from(i) / 10.0)));
-    points.map(|p| branch.distance(back * p) * scale).fold(0.0, f64::max)
+    let points = pieces
+        .iter()
+        .flat_map(|piece| (0..=10).map(|i| piece.eval(f64::from(i) / 10.0)));
+    points
+        .map(|p| branch.distance(back * p) * scale)
+        .fold(0.0, f64::max)
 }
 
 /// The farthest that some points of the plane are from what is written, mm.
 fn farthest_missing(truth: &[Point], pieces: &[CubicBez], panel: &PanelPlace) -> f64 {
-    let boxes: Vec<Rect> =
-        pieces.iter().map(|piece| piece.bounding_box().inflate(2.0 * BOUND, 2.0 * BOUND)).collect();
+    let boxes: Vec<Rect> = pieces
+        .iter()
+        .map(|piece| piece.bounding_box().inflate(2.0 * BOUND, 2.0 * BOUND))
+        .collect();
     let nearest = |p: Point| {
-        let near = pieces.iter().zip(&boxes).filter(|(_, reach)| reach.contains(p));
-        near.map(|(piece, _)| piece.nearest(p, 1e-6).distance_sq.sqrt()).fold(f64::INFINITY, f64::min)
+        let near = pieces
+            .iter()
+            .zip(&boxes)
+            .filter(|(_, reach)| reach.contains(p));
+        near.map(|(piece, _)| piece.nearest(p, 1e-6).distance_sq.sqrt())
+            .fold(f64::INFINITY, f64::min)
     };
-    truth.iter().map(|p| nearest(panel.from_plane * *p)).fold(0.0, f64::max)
+    truth
+        .iter()
+        .map(|p| nearest(panel.from_plane * *p))
+        .fold(0.0, f64::max)
 }
 
 /// What of the plane the panel's field shows.
@@ -149,13 +169,23 @@ fn plane_of(panel: &PanelPlace) -> Rect {
 
 /// A window of the plane at a rapidity on a shell of some mass: near its vertex or up to rapidity 20, tight or wide.
 fn window(draws: &mut Draws, round: usize) -> (Rect, f64) {
-    let mass = draws.power_of_ten(-6.0, 3.0);
-    let rapidity = if round.is_multiple_of(3) { 0.0 } else { draws.between(-20.0, 20.0) };
+    let mass = power_of_ten(draws, -6.0, 3.0);
+    let rapidity = if round.is_multiple_of(3) {
+        0.0
+    } else {
+        draws.between(-20.0, 20.0)
+    };
     let (p, energy) = (mass * rapidity.sinh(), mass * rapidity.cosh());
-    let half = mass * draws.power_of_ten(-1.0, 2.0) * (0.3 * rapidity.abs()).exp();
+    let half = mass * power_of_ten(draws, -1.0, 2.0) * (0.3 * rapidity.abs()).exp();
     let upright = half * draws.between(0.4, 1.5);
-    let (p, energy) = (p + half * draws.between(-0.8, 0.8), energy + upright * draws.between(-0.8, 0.8));
-    (Rect::new(p - half, energy - upright, p + half, energy + upright), mass)
+    let (p, energy) = (
+        p + half * draws.between(-0.8, 0.8),
+        energy + upright * draws.between(-0.8, 0.8),
+    );
+    (
+        Rect::new(p - half, energy - upright, p + half, energy + upright),
+        mass,
+    )
 }
 
 /// A mass whose shell goes through the window, or a small one whose shell is nearly light.
@@ -165,7 +195,11 @@ fn mass_in(draws: &mut Draws, window: Rect) -> f64 {
         let energy = draws.between(window.y0, window.y1);
         let mass = ((energy - p) * (energy + p)).sqrt();
         if energy > 0.0 && mass > 0.0 {
-            return if draws.part() < 0.2 { mass * draws.power_of_ten(-6.0, 0.0) } else { mass };
+            return if draws.part() < 0.2 {
+                mass * power_of_ten(draws, -6.0, 0.0)
+            } else {
+                mass
+            };
         }
     }
 }
@@ -175,7 +209,10 @@ fn shells_scene(masses: &[f64], window: Rect, draws: &mut Draws) -> String {
     let mut particles = String::new();
     for (i, mass) in masses.iter().enumerate() {
         let rapidity = draws.between(-20.0, 20.0);
-        let _ = write!(particles, "\"q{i}\": (mass: \"{mass:e}\", state: Rapidity({rapidity:?})), ");
+        let _ = write!(
+            particles,
+            "\"q{i}\": (mass: \"{mass:e}\", state: Rapidity({rapidity:?})), "
+        );
     }
     format!(
         r#"Scene(format: 1, base: "b", units: (energy: "GeV"), particles: {{ {particles} }},
@@ -184,7 +221,10 @@ fn shells_scene(masses: &[f64], window: Rect, draws: &mut Draws) -> String {
             range: (px: ("{:e}", "{:e}"), energy: ("{:e}", "{:e}")))]) }})"#,
         draws.between(-20.0, 20.0),
         draws.between(40.0, 180.0),
-        window.x0, window.x1, window.y0, window.y1,
+        window.x0,
+        window.x1,
+        window.y0,
+        window.y1,
     )
 }
 
@@ -200,13 +240,28 @@ fn compare_shells(draws: &mut Draws, round: usize) -> usize {
     let mut shown = 0;
     for (i, &size) in masses.iter().enumerate() {
         let branch = Branch { size, turns: 0 };
-        let pieces = cubics(paths.get(&format!("shell of particle q{i}")).map_or(&[][..], Vec::as_slice));
+        let pieces = cubics(
+            paths
+                .get(&format!("shell of particle q{i}"))
+                .map_or(&[][..], Vec::as_slice),
+        );
         let truth = branch.inside(plane);
-        assert!(pieces.len() <= MOST_PIECES, "round {round}, q{i}: {} pieces\n{text}", pieces.len());
+        assert!(
+            pieces.len() <= MOST_PIECES,
+            "round {round}, q{i}: {} pieces\n{text}",
+            pieces.len()
+        );
         let off = farthest_off(&pieces, branch, &panel);
-        assert!(off <= BOUND, "round {round}, q{i}: {off} mm off of {size}, {} pieces\n{text}", pieces.len());
+        assert!(
+            off <= BOUND,
+            "round {round}, q{i}: {off} mm off of {size}, {} pieces\n{text}",
+            pieces.len()
+        );
         let missing = farthest_missing(&truth, &pieces, &panel);
-        assert!(missing <= BOUND, "round {round}, q{i}: {missing} mm from what is written\n{text}");
+        assert!(
+            missing <= BOUND,
+            "round {round}, q{i}: {missing} mm from what is written\n{text}"
+        );
         shown += usize::from(!truth.is_empty());
     }
     shown
@@ -217,11 +272,14 @@ fn rounds(count: usize, seed: u64, round: fn(&mut Draws, usize) -> usize) -> usi
     std::thread::scope(|scope| {
         let half = |seed: u64| {
             move || {
-                let mut draws = Draws(seed);
+                let mut draws = Draws::new(seed);
                 (0..count / 2).map(|i| round(&mut draws, i)).sum::<usize>()
             }
         };
-        let (one, two) = (scope.spawn(half(seed)), scope.spawn(half(seed ^ 0x9E37_79B9_7F4A_7C15)));
+        let (one, two) = (
+            scope.spawn(half(seed)),
+            scope.spawn(half(seed ^ 0x9E37_79B9_7F4A_7C15)),
+        );
         one.join().unwrap() + two.join().unwrap()
     })
 }
@@ -234,11 +292,22 @@ fn mass_shells_as_written_are_the_true_curves() {
 
 /// A spacetime panel of whole light seconds with all its hyperbolas, and with the axes of one frame where there is one.
 fn arcs_scene(draws: &mut Draws, frame: Option<f64>) -> String {
-    let half = draws.power_of_ten(-4.0, 6.0);
-    let (x, t) = (half * draws.between(-2.0, 2.0), half * draws.between(-2.0, 2.0));
-    let (x, t) = if frame.is_some() { (x / 4.0, t / 4.0) } else { (x, t) };
+    let half = power_of_ten(draws, -4.0, 6.0);
+    let (x, t) = (
+        half * draws.between(-2.0, 2.0),
+        half * draws.between(-2.0, 2.0),
+    );
+    let (x, t) = if frame.is_some() {
+        (x / 4.0, t / 4.0)
+    } else {
+        (x, t)
+    };
     let upright = half * draws.between(0.4, 1.5);
-    let axes = if frame.is_some() { "axes: [\"f\"]," } else { "" };
+    let axes = if frame.is_some() {
+        "axes: [\"f\"],"
+    } else {
+        ""
+    };
     format!(
         r#"Scene(format: 1, base: "b", units: (time: "s"),
         frames: {{ "f": Moving(velocity: Rapidity({:?})), "g": Moving(velocity: Rapidity({:?})) }},
@@ -248,7 +317,10 @@ fn arcs_scene(draws: &mut Draws, frame: Option<f64>) -> String {
         draws.between(-20.0, 20.0),
         draws.between(40.0, 180.0),
         if frame.is_some() { "b" } else { "g" },
-        x - half, x + half, t - upright, t + upright,
+        x - half,
+        x + half,
+        t - upright,
+        t + upright,
     )
 }
 
@@ -257,20 +329,28 @@ fn unit(axes: &[BezPath], panel: &PanelPlace) -> f64 {
     let back = panel.from_plane.inverse();
     let mut places: Vec<f64> = axes
         .iter()
-        .map(|path| path.bounding_box())
+        .map(Shape::bounding_box)
         .filter(|tick| tick.width() < 1e-6 && tick.height() < 3.0)
         .map(|tick| (back * tick.center()).x)
         .collect();
     places.sort_by(f64::total_cmp);
     let gaps = places.windows(2).map(|pair| pair[1] - pair[0]);
     let gap = gaps.fold(f64::INFINITY, f64::min);
+    assert!(gap.is_finite(), "an axis needs two ticks: {places:?}");
     // Ticks stand at 1, 2 or 5 times a power of ten.
     let power = 10_f64.powf(gap.log10().floor());
-    [1.0, 2.0, 5.0, 10.0].map(|m| m * power).into_iter().min_by(|a, b| (a - gap).abs().total_cmp(&(b - gap).abs())).unwrap()
+    [1.0, 2.0, 5.0, 10.0]
+        .map(|m| m * power)
+        .into_iter()
+        .min_by(|a, b| (a - gap).abs().total_cmp(&(b - gap).abs()))
+        .unwrap()
 }
 
-/// The hyperbola of whole units that a written path is nearest to.
-fn branch_of(path: &BezPath, unit: f64, panel: &PanelPlace) -> Branch {
+/// Most arcs of one branch.
+const MOST_ARCS: u32 = 60;
+
+/// The hyperbola of whole units that a written path is nearest to, and how many units that is.
+fn branch_of(path: &BezPath, unit: f64, panel: &PanelPlace) -> (u32, Branch) {
     let first = path.segments().next().unwrap();
     let p = panel.from_plane.inverse() * first.end();
     let square = (p.y - p.x) * (p.y + p.x);
@@ -280,7 +360,13 @@ fn branch_of(path: &BezPath, unit: f64, panel: &PanelPlace) -> Branch {
         (true, false, _) => 2,
         (false, _, false) => 3,
     };
-    Branch { size: (square.abs().sqrt() / unit).round() * unit, turns }
+    let size = square.abs().sqrt();
+    let off = |count: u32| (f64::from(count) * unit - size).abs();
+    let count = (1..=MOST_ARCS)
+        .min_by(|a, b| off(*a).total_cmp(&off(*b)))
+        .unwrap();
+    let size = f64::from(count) * unit;
+    (count, Branch { size, turns })
 }
 
 /// Compares the arcs of one scene; gives back how many there are.
@@ -292,29 +378,51 @@ fn compare_arcs(draws: &mut Draws, round: usize) -> usize {
     let arcs = paths.get("calibration hyperbolas").unwrap_or(&none);
     let unit = unit(&paths["axes"], &panel);
     let plane = plane_of(&panel);
-    let mut drawn: BTreeMap<(u8, u64), Vec<CubicBez>> = BTreeMap::new();
+    let mut drawn: BTreeMap<(u8, u32), Vec<CubicBez>> = BTreeMap::new();
     for path in arcs {
-        let branch = branch_of(path, unit, &panel);
+        let (count, branch) = branch_of(path, unit, &panel);
         let pieces = cubics(std::slice::from_ref(path));
         let off = farthest_off(&pieces, branch, &panel);
-        assert!(branch.size > 0.0 && off <= BOUND, "round {round}: {off} mm off {branch:?}\n{text}");
-        drawn.entry((branch.turns, (branch.size / unit).round() as u64)).or_default().extend(pieces);
+        assert!(
+            off <= BOUND,
+            "round {round}: {off} mm off {branch:?}\n{text}"
+        );
+        drawn
+            .entry((branch.turns, count))
+            .or_default()
+            .extend(pieces);
     }
     for (arc, pieces) in &drawn {
-        assert!(pieces.len() <= MOST_PIECES, "round {round}: {} pieces of {arc:?}\n{text}", pieces.len());
+        assert!(
+            pieces.len() <= MOST_PIECES,
+            "round {round}: {} pieces of {arc:?}\n{text}",
+            pieces.len()
+        );
     }
-    let far = [plane.x0, plane.x1, plane.y0, plane.y1].into_iter().fold(0.0, |m: f64, v| m.max(v.abs()));
-    let turns: &[u8] = if frame.is_some() { &[0, 1] } else { &[0, 1, 2, 3] };
-    for count in 1..=(far / unit).floor().min(60.0) as u64 {
+    let far = [plane.x0, plane.x1, plane.y0, plane.y1]
+        .into_iter()
+        .fold(0.0, |m: f64, v| m.max(v.abs()));
+    let turns: &[u8] = if frame.is_some() {
+        &[0, 1]
+    } else {
+        &[0, 1, 2, 3]
+    };
+    for count in (1..=MOST_ARCS).take_while(|count| f64::from(*count) * unit <= far) {
         for &turns in turns {
-            let branch = Branch { size: count as f64 * unit, turns };
+            let branch = Branch {
+                size: f64::from(count) * unit,
+                turns,
+            };
             let mut truth = branch.inside(plane);
             if let Some(rapidity) = frame {
                 carried(&mut truth, branch, rapidity, plane);
             }
             let pieces = drawn.get(&(turns, count)).map_or(&[][..], Vec::as_slice);
             let missing = farthest_missing(&truth, pieces, &panel);
-            assert!(missing <= BOUND, "round {round}: {missing} mm from what is written of {branch:?}\n{text}");
+            assert!(
+                missing <= BOUND,
+                "round {round}: {missing} mm from what is written of {branch:?}\n{text}"
+            );
         }
     }
     drawn.len()
