@@ -83,10 +83,7 @@ impl Branch {
     }
     /// Points of it inside a rectangle of the plane, evenly across and evenly along.
     fn inside(self, plane: Rect) -> Vec<Point> {
-        let (a, b) = (
-            self.own(plane.origin()),
-            self.own(Point::new(plane.x1, plane.y1)),
-        );
+        let (a, b) = (self.own(plane.origin()), self.own(Point::new(plane.x1, plane.y1)));
         let mut found = Vec::new();
         for i in 0..=POINTS {
             let part = i as f64 / POINTS as f64;
@@ -98,11 +95,7 @@ impl Branch {
                 found.extend([Point::new(across, along), Point::new(-across, along)]);
             }
         }
-        found
-            .into_iter()
-            .map(|p| self.plane(p))
-            .filter(|p| plane.contains(*p))
-            .collect()
+        found.into_iter().map(|p| self.plane(p)).filter(|p| plane.contains(*p)).collect()
     }
 }
 
@@ -115,10 +108,7 @@ fn written(text: &str) -> (BTreeMap<String, Vec<BezPath>>, PanelPlace) {
     let document = roxmltree::Document::parse(&source).unwrap();
     let mut paths: BTreeMap<String, Vec<BezPath>> = BTreeMap::new();
     for group in document.descendants().filter(|node| node.has_tag_name("g")) {
-        let title = group
-            .first_element_child()
-            .and_then(|title| title.text())
-            .unwrap();
+        let title = group.first_element_child().and_then(|title| title.text()).unwrap();
         let strokes = group.children().filter(|node| node.has_attribute("stroke"));
         let read = strokes.map(|node| BezPath::from_svg(node.attribute("d").unwrap()).unwrap());
         paths.entry(title.to_owned()).or_default().extend(read);
@@ -131,42 +121,25 @@ fn cubics(paths: &[BezPath]) -> Vec<CubicBez> {
         PathSeg::Cubic(cubic) => cubic,
         other => panic!("a hyperbola is written as cubics, not as {other:?}"),
     };
-    paths
-        .iter()
-        .flat_map(BezPath::segments)
-        .map(cubic)
-        .collect()
+    paths.iter().flat_map(BezPath::segments).map(cubic).collect()
 }
 
 /// The farthest that points of the pieces are from the true curve, mm.
 fn farthest_off(pieces: &[CubicBez], branch: Branch, panel: &PanelPlace) -> f64 {
     let (scale, back) = (panel.from_plane.as_coeffs()[0], panel.from_plane.inverse());
-    let points = pieces
-        .iter()
-        .flat_map(|piece| (0..=10).map(|i| piece.eval(f64::from(i) / 10.0)));
-    points
-        .map(|p| branch.distance(back * p) * scale)
-        .fold(0.0, f64::max)
+    let points = pieces.iter().flat_map(|piece| (0..=10).map(|i| piece.eval(f64::from(i) / 10.0)));
+    points.map(|p| branch.distance(back * p) * scale).fold(0.0, f64::max)
 }
 
 /// The farthest that some points of the plane are from what is written, mm.
 fn farthest_missing(truth: &[Point], pieces: &[CubicBez], panel: &PanelPlace) -> f64 {
-    let boxes: Vec<Rect> = pieces
-        .iter()
-        .map(|piece| piece.bounding_box().inflate(2.0 * BOUND, 2.0 * BOUND))
-        .collect();
+    let boxes: Vec<Rect> =
+        pieces.iter().map(|piece| piece.bounding_box().inflate(2.0 * BOUND, 2.0 * BOUND)).collect();
     let nearest = |p: Point| {
-        let near = pieces
-            .iter()
-            .zip(&boxes)
-            .filter(|(_, reach)| reach.contains(p));
-        near.map(|(piece, _)| piece.nearest(p, 1e-6).distance_sq.sqrt())
-            .fold(f64::INFINITY, f64::min)
+        let near = pieces.iter().zip(&boxes).filter(|(_, reach)| reach.contains(p));
+        near.map(|(piece, _)| piece.nearest(p, 1e-6).distance_sq.sqrt()).fold(f64::INFINITY, f64::min)
     };
-    truth
-        .iter()
-        .map(|p| nearest(panel.from_plane * *p))
-        .fold(0.0, f64::max)
+    truth.iter().map(|p| nearest(panel.from_plane * *p)).fold(0.0, f64::max)
 }
 
 /// What of the plane the panel's field shows.
@@ -177,22 +150,12 @@ fn plane_of(panel: &PanelPlace) -> Rect {
 /// A window of the plane at a rapidity on a shell of some mass: near its vertex or up to rapidity 20, tight or wide.
 fn window(draws: &mut Draws, round: usize) -> (Rect, f64) {
     let mass = draws.power_of_ten(-6.0, 3.0);
-    let rapidity = if round.is_multiple_of(3) {
-        0.0
-    } else {
-        draws.between(-20.0, 20.0)
-    };
+    let rapidity = if round.is_multiple_of(3) { 0.0 } else { draws.between(-20.0, 20.0) };
     let (p, energy) = (mass * rapidity.sinh(), mass * rapidity.cosh());
     let half = mass * draws.power_of_ten(-1.0, 2.0) * (0.3 * rapidity.abs()).exp();
     let upright = half * draws.between(0.4, 1.5);
-    let (p, energy) = (
-        p + half * draws.between(-0.8, 0.8),
-        energy + upright * draws.between(-0.8, 0.8),
-    );
-    (
-        Rect::new(p - half, energy - upright, p + half, energy + upright),
-        mass,
-    )
+    let (p, energy) = (p + half * draws.between(-0.8, 0.8), energy + upright * draws.between(-0.8, 0.8));
+    (Rect::new(p - half, energy - upright, p + half, energy + upright), mass)
 }
 
 /// A mass whose shell goes through the window, or a small one whose shell is nearly light.
@@ -202,11 +165,7 @@ fn mass_in(draws: &mut Draws, window: Rect) -> f64 {
         let energy = draws.between(window.y0, window.y1);
         let mass = ((energy - p) * (energy + p)).sqrt();
         if energy > 0.0 && mass > 0.0 {
-            return if draws.part() < 0.2 {
-                mass * draws.power_of_ten(-6.0, 0.0)
-            } else {
-                mass
-            };
+            return if draws.part() < 0.2 { mass * draws.power_of_ten(-6.0, 0.0) } else { mass };
         }
     }
 }
@@ -216,10 +175,7 @@ fn shells_scene(masses: &[f64], window: Rect, draws: &mut Draws) -> String {
     let mut particles = String::new();
     for (i, mass) in masses.iter().enumerate() {
         let rapidity = draws.between(-20.0, 20.0);
-        let _ = write!(
-            particles,
-            "\"q{i}\": (mass: \"{mass:e}\", state: Rapidity({rapidity:?})), "
-        );
+        let _ = write!(particles, "\"q{i}\": (mass: \"{mass:e}\", state: Rapidity({rapidity:?})), ");
     }
     format!(
         r#"Scene(format: 1, base: "b", units: (energy: "GeV"), particles: {{ {particles} }},
@@ -228,10 +184,7 @@ fn shells_scene(masses: &[f64], window: Rect, draws: &mut Draws) -> String {
             range: (px: ("{:e}", "{:e}"), energy: ("{:e}", "{:e}")))]) }})"#,
         draws.between(-20.0, 20.0),
         draws.between(40.0, 180.0),
-        window.x0,
-        window.x1,
-        window.y0,
-        window.y1,
+        window.x0, window.x1, window.y0, window.y1,
     )
 }
 
@@ -247,28 +200,13 @@ fn compare_shells(draws: &mut Draws, round: usize) -> usize {
     let mut shown = 0;
     for (i, &size) in masses.iter().enumerate() {
         let branch = Branch { size, turns: 0 };
-        let pieces = cubics(
-            paths
-                .get(&format!("shell of particle q{i}"))
-                .map_or(&[][..], Vec::as_slice),
-        );
+        let pieces = cubics(paths.get(&format!("shell of particle q{i}")).map_or(&[][..], Vec::as_slice));
         let truth = branch.inside(plane);
-        assert!(
-            pieces.len() <= MOST_PIECES,
-            "round {round}, q{i}: {} pieces\n{text}",
-            pieces.len()
-        );
+        assert!(pieces.len() <= MOST_PIECES, "round {round}, q{i}: {} pieces\n{text}", pieces.len());
         let off = farthest_off(&pieces, branch, &panel);
-        assert!(
-            off <= BOUND,
-            "round {round}, q{i}: {off} mm off of {size}, {} pieces\n{text}",
-            pieces.len()
-        );
+        assert!(off <= BOUND, "round {round}, q{i}: {off} mm off of {size}, {} pieces\n{text}", pieces.len());
         let missing = farthest_missing(&truth, &pieces, &panel);
-        assert!(
-            missing <= BOUND,
-            "round {round}, q{i}: {missing} mm from what is written\n{text}"
-        );
+        assert!(missing <= BOUND, "round {round}, q{i}: {missing} mm from what is written\n{text}");
         shown += usize::from(!truth.is_empty());
     }
     shown
@@ -283,10 +221,7 @@ fn rounds(count: usize, seed: u64, round: fn(&mut Draws, usize) -> usize) -> usi
                 (0..count / 2).map(|i| round(&mut draws, i)).sum::<usize>()
             }
         };
-        let (one, two) = (
-            scope.spawn(half(seed)),
-            scope.spawn(half(seed ^ 0x9E37_79B9_7F4A_7C15)),
-        );
+        let (one, two) = (scope.spawn(half(seed)), scope.spawn(half(seed ^ 0x9E37_79B9_7F4A_7C15)));
         one.join().unwrap() + two.join().unwrap()
     })
 }
@@ -300,21 +235,10 @@ fn mass_shells_as_written_are_the_true_curves() {
 /// A spacetime panel of whole light seconds with all its hyperbolas, and with the axes of one frame where there is one.
 fn arcs_scene(draws: &mut Draws, frame: Option<f64>) -> String {
     let half = draws.power_of_ten(-4.0, 6.0);
-    let (x, t) = (
-        half * draws.between(-2.0, 2.0),
-        half * draws.between(-2.0, 2.0),
-    );
-    let (x, t) = if frame.is_some() {
-        (x / 4.0, t / 4.0)
-    } else {
-        (x, t)
-    };
+    let (x, t) = (half * draws.between(-2.0, 2.0), half * draws.between(-2.0, 2.0));
+    let (x, t) = if frame.is_some() { (x / 4.0, t / 4.0) } else { (x, t) };
     let upright = half * draws.between(0.4, 1.5);
-    let axes = if frame.is_some() {
-        "axes: [\"f\"],"
-    } else {
-        ""
-    };
+    let axes = if frame.is_some() { "axes: [\"f\"]," } else { "" };
     format!(
         r#"Scene(format: 1, base: "b", units: (time: "s"),
         frames: {{ "f": Moving(velocity: Rapidity({:?})), "g": Moving(velocity: Rapidity({:?})) }},
@@ -324,10 +248,7 @@ fn arcs_scene(draws: &mut Draws, frame: Option<f64>) -> String {
         draws.between(-20.0, 20.0),
         draws.between(40.0, 180.0),
         if frame.is_some() { "b" } else { "g" },
-        x - half,
-        x + half,
-        t - upright,
-        t + upright,
+        x - half, x + half, t - upright, t + upright,
     )
 }
 
@@ -345,11 +266,7 @@ fn unit(axes: &[BezPath], panel: &PanelPlace) -> f64 {
     let gap = gaps.fold(f64::INFINITY, f64::min);
     // Ticks stand at 1, 2 or 5 times a power of ten.
     let power = 10_f64.powf(gap.log10().floor());
-    [1.0, 2.0, 5.0, 10.0]
-        .map(|m| m * power)
-        .into_iter()
-        .min_by(|a, b| (a - gap).abs().total_cmp(&(b - gap).abs()))
-        .unwrap()
+    [1.0, 2.0, 5.0, 10.0].map(|m| m * power).into_iter().min_by(|a, b| (a - gap).abs().total_cmp(&(b - gap).abs())).unwrap()
 }
 
 /// The hyperbola of whole units that a written path is nearest to.
@@ -363,10 +280,7 @@ fn branch_of(path: &BezPath, unit: f64, panel: &PanelPlace) -> Branch {
         (true, false, _) => 2,
         (false, _, false) => 3,
     };
-    Branch {
-        size: (square.abs().sqrt() / unit).round() * unit,
-        turns,
-    }
+    Branch { size: (square.abs().sqrt() / unit).round() * unit, turns }
 }
 
 /// Compares the arcs of one scene; gives back how many there are.
@@ -383,46 +297,24 @@ fn compare_arcs(draws: &mut Draws, round: usize) -> usize {
         let branch = branch_of(path, unit, &panel);
         let pieces = cubics(std::slice::from_ref(path));
         let off = farthest_off(&pieces, branch, &panel);
-        assert!(
-            branch.size > 0.0 && off <= BOUND,
-            "round {round}: {off} mm off {branch:?}\n{text}"
-        );
-        drawn
-            .entry((branch.turns, (branch.size / unit).round() as u64))
-            .or_default()
-            .extend(pieces);
+        assert!(branch.size > 0.0 && off <= BOUND, "round {round}: {off} mm off {branch:?}\n{text}");
+        drawn.entry((branch.turns, (branch.size / unit).round() as u64)).or_default().extend(pieces);
     }
     for (arc, pieces) in &drawn {
-        assert!(
-            pieces.len() <= MOST_PIECES,
-            "round {round}: {} pieces of {arc:?}\n{text}",
-            pieces.len()
-        );
+        assert!(pieces.len() <= MOST_PIECES, "round {round}: {} pieces of {arc:?}\n{text}", pieces.len());
     }
-    let far = [plane.x0, plane.x1, plane.y0, plane.y1]
-        .into_iter()
-        .fold(0.0, |m: f64, v| m.max(v.abs()));
-    let turns: &[u8] = if frame.is_some() {
-        &[0, 1]
-    } else {
-        &[0, 1, 2, 3]
-    };
+    let far = [plane.x0, plane.x1, plane.y0, plane.y1].into_iter().fold(0.0, |m: f64, v| m.max(v.abs()));
+    let turns: &[u8] = if frame.is_some() { &[0, 1] } else { &[0, 1, 2, 3] };
     for count in 1..=(far / unit).floor().min(60.0) as u64 {
         for &turns in turns {
-            let branch = Branch {
-                size: count as f64 * unit,
-                turns,
-            };
+            let branch = Branch { size: count as f64 * unit, turns };
             let mut truth = branch.inside(plane);
             if let Some(rapidity) = frame {
                 carried(&mut truth, branch, rapidity, plane);
             }
             let pieces = drawn.get(&(turns, count)).map_or(&[][..], Vec::as_slice);
             let missing = farthest_missing(&truth, pieces, &panel);
-            assert!(
-                missing <= BOUND,
-                "round {round}: {missing} mm from what is written of {branch:?}\n{text}"
-            );
+            assert!(missing <= BOUND, "round {round}: {missing} mm from what is written of {branch:?}\n{text}");
         }
     }
     drawn.len()
