@@ -22,7 +22,8 @@ impl Lot {
     }
 
     fn one_of<'a>(&mut self, choices: &[&'a str]) -> &'a str {
-        choices[self.below(choices.len() as u64) as usize]
+        let count = u64::try_from(choices.len()).unwrap();
+        choices[usize::try_from(self.below(count)).unwrap()]
     }
 
     /// Between two numbers, with so many decimals.
@@ -33,7 +34,7 @@ impl Lot {
 
     /// Of a size between two powers of ten, either sign.
     fn of_size(&mut self, low: i64, high: i64) -> String {
-        let exponent = low + self.below((high - low + 1) as u64) as i64;
+        let exponent = low + self.below((high - low + 1).cast_unsigned()).cast_signed();
         let sign = self.one_of(&["", "-"]);
         format!(
             "{sign}{}.{}e{exponent}",
@@ -194,7 +195,7 @@ fn pair(lot: &mut Lot, pace: Pace) -> String {
         ),
         _ => pace.velocity(lot),
     };
-    let mass = lot.of_size(-4, 3).replace("-", "").replace('e', "e-");
+    let mass = lot.of_size(-4, 3).replace('-', "").replace('e', "e-");
     format!(
         "\"a\": (mass: {mass}, state: {state}),\n\"part\": (mass: \"{mass}*0.3\", state: {state}),\n"
     )

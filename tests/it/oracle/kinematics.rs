@@ -99,8 +99,9 @@ impl Vector {
 pub(crate) fn direction(degrees: &Real) -> (Real, Real) {
     let quarters = (degrees.f64() / 90.0).round();
     if (Real::of(quarters) * Real::int(90) - degrees).is_zero() {
-        let table = [(1, 0), (0, 1), (-1, 0), (0, -1)];
-        let (cos, sin) = table[quarters.rem_euclid(4.0) as usize];
+        let quarters = quarters.rem_euclid(4.0);
+        let table = [(0.0, 1, 0), (1.0, 0, 1), (2.0, -1, 0), (3.0, 0, -1)];
+        let (_, cos, sin) = table.into_iter().find(|row| row.0 == quarters).unwrap();
         return (Real::int(cos), Real::int(sin));
     }
     let (sin, cos) = (degrees * Real::pi() / Real::int(180)).sin_cos();

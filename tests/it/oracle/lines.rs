@@ -63,7 +63,7 @@ impl Line {
         }
     }
 
-    pub(crate) fn broken(events: Vec<Event>) -> Self {
+    pub(crate) fn broken(events: &[Event]) -> Self {
         let mut pieces: Vec<Piece> = Vec::new();
         let mut reading = Real::zero();
         for pair in events.windows(2) {

@@ -179,12 +179,12 @@ impl Checks<'_> {
                 energy,
                 (&t.y, &(seen.py_doubt() + &allowed)),
             );
-            let masses = self.masses_doubt(base);
+            let masses = masses_doubt(base);
             self.near(
                 &what("mass_sum"),
                 &row["mass_sum"],
                 energy,
-                (&base.mass_sum, &masses),
+                (&base.masses, &masses),
             );
             self.near(
                 &what("invariant_mass"),
@@ -196,15 +196,10 @@ impl Checks<'_> {
         let what = |field: &str| format!("collision {name} {field}");
         let root_s = (&before.0.mass(), &before.0.mass_doubt());
         self.near(&what("root_s"), &row["root_s"], energy, root_s);
-        let q = &before.0.mass_sum - &after.0.mass_sum;
-        let off = self.masses_doubt(&before.0) + self.masses_doubt(&after.0);
+        let q = &before.0.masses - &after.0.masses;
+        let off = masses_doubt(&before.0) + masses_doubt(&after.0);
         self.near(&what("q_value"), &row["q_value"], energy, (&q, &off));
         self.difference(name, row, &before, &after);
-    }
-
-    /// Masses as typed are right to their last place, those found by a closure to their doubt.
-    fn masses_doubt(&self, sum: &Sum) -> Real {
-        sum.masses_doubt() + eps(4) * &sum.mass_sum
     }
 
     fn difference(&mut self, name: &str, row: &Value, before: &(Sum, Sum), after: &(Sum, Sum)) {
@@ -235,4 +230,9 @@ impl Checks<'_> {
                 .push(format!("collision {name} balanced: {}", row["balanced"]));
         }
     }
+}
+
+/// Masses as typed are right to their last place, those found by a closure to their doubt.
+fn masses_doubt(sum: &Sum) -> Real {
+    sum.masses_doubt() + eps(4) * &sum.masses
 }

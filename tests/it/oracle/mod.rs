@@ -63,7 +63,7 @@ fn prove(name: &str, text: &str, rapidities: &[&str]) -> (f64, usize) {
         all.push(seen(name, text, &oracle, &oracle.frame(&frame), &options));
     }
     for eta in rapidities {
-        let frame = oracle.at_rapidity(&Real::decimal(eta));
+        let frame = Oracle::at_rapidity(&Real::decimal(eta));
         all.push(seen(name, text, &oracle, &frame, &["--rapidity", eta]));
     }
     let used = all.iter().map(|found| found.nearest.0).fold(0.0, f64::max);

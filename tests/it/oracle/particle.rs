@@ -97,18 +97,18 @@ impl Particle {
         if frame.is_base() {
             return self.clone();
         }
-        self.turned(frame.see(&self.p), frame, frame.doppler.clone())
+        self.turned(frame.see(&self.p), frame, &frame.doppler)
     }
 
     /// The way back: a particle given in a frame, in the base.
     pub(crate) fn unseen(&self, frame: &Frame) -> Self {
-        self.turned(frame.unsee(&self.p), frame, Real::one() / &frame.doppler)
+        self.turned(frame.unsee(&self.p), frame, &(Real::one() / &frame.doppler))
     }
 
     /// With `k` the factor of p- along x.
-    fn turned(&self, p: Vector, frame: &Frame, k: Real) -> Self {
+    fn turned(&self, p: Vector, frame: &Frame, k: &Real) -> Self {
         if frame.is_along_x() {
-            return self.shifted(p, frame, &k);
+            return self.shifted(p, frame, k);
         }
         // Across x: one doubt for every component.
         let stored = &self.null_doubt.0 + &self.null_doubt.1 + &self.py_doubt;

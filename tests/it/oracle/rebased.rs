@@ -4,9 +4,9 @@ use super::compare::frame_names;
 use super::kinematics::{Frame, Vector};
 use super::number::Kind;
 use super::real::Real;
+use super::seen;
 use super::solved::Oracle;
 use super::text::Tree;
-use super::{Oracle as Scene, seen};
 
 /// Digits with which coordinates and states are written anew.
 const DIGITS: usize = 40;
@@ -185,16 +185,16 @@ impl Writer<'_> {
 }
 
 fn says_the_same(rapidity: &str) {
-    let old = Scene::of(RELAY);
+    let old = Oracle::of(RELAY);
     let rapidity = Real::decimal(rapidity);
-    let base = old.at_rapidity(&rapidity);
+    let base = Oracle::at_rapidity(&rapidity);
     let writer = Writer {
         old: &old,
         rapidity,
         base,
     };
     let anew = writer.scene();
-    let new = Scene::of(&anew);
+    let new = Oracle::of(&anew);
     for frame in frame_names(&old) {
         let options = ["--frame", frame.as_str()];
         let here = seen("old", RELAY, &old, &old.frame(&frame), &options).numbers;

@@ -82,12 +82,12 @@ impl Oracle {
     fn beside(&self, tree: &Tree) -> Frame {
         match (tree.get("frame"), tree.get("rapidity")) {
             (Some(name), _) => self.frame(name.str()),
-            (None, Some(eta)) => self.at_rapidity(&self.number(eta, Kind::Plain)),
+            (None, Some(eta)) => Self::at_rapidity(&self.number(eta, Kind::Plain)),
             (None, None) => Frame::base(),
         }
     }
 
-    pub(crate) fn at_rapidity(&self, eta: &Real) -> Frame {
+    pub(crate) fn at_rapidity(eta: &Real) -> Frame {
         let along = (Real::one(), Real::zero());
         Frame::new(Vector::moving(eta, &along), Event::origin(), Real::zero())
     }
@@ -154,7 +154,7 @@ impl Oracle {
             let line = match tree.name() {
                 "Free" => {
                     let rapidity = self.velocity(tree.need("velocity"), tree.get("toward"));
-                    let motion = self.moving(&rapidity, &Real::zero(), Real::one());
+                    let motion = Self::moving(&rapidity, &Real::zero(), Real::one());
                     let motion = motion.unseen(&self.beside(tree));
                     Line::straight(anchor("through"), motion)
                 }
@@ -174,7 +174,8 @@ impl Oracle {
                 }
                 "Broken" => {
                     let through = tree.need("through").items();
-                    Line::broken(through.iter().map(|name| self.event(name.str())).collect())
+                    let events = through.iter().map(|name| self.event(name.str()));
+                    Line::broken(&events.collect::<Vec<_>>())
                 }
                 other => panic!("no line: {other}"),
             };
@@ -187,15 +188,15 @@ impl Oracle {
     }
 
     /// Something of a mass and a total rapidity in a direction.
-    fn moving(&self, rapidity: &Real, degrees: &Real, mass: Real) -> Particle {
+    fn moving(rapidity: &Real, degrees: &Real, mass: Real) -> Particle {
         let way = direction(degrees);
         let p = Vector::moving(rapidity, &way).times(&mass);
         let along_x = way.1.is_zero();
-        self.stored(p, mass, along_x)
+        Self::stored(p, mass, along_x)
     }
 
     /// With the doubts of storing mass, rapidity and py.
-    fn stored(&self, p: Vector, mass: Real, along_x: bool) -> Particle {
+    fn stored(p: Vector, mass: Real, along_x: bool) -> Particle {
         let slanted = if along_x { Real::zero() } else { p.size() };
         let py_doubt = few() * (p.y.abs() + slanted.clone());
         if mass.is_zero() && p.y.is_zero() {
@@ -246,10 +247,10 @@ impl Oracle {
         let of_size = |p: Real| {
             let e = (p.squared() + mass.squared()).sqrt();
             let v = Vector::new(e, &p * &way.0, p * &way.1);
-            self.stored(v, mass.clone(), way.1.is_zero())
+            Self::stored(v, mass.clone(), way.1.is_zero())
         };
         match state.name() {
-            "AtRest" => self.moving(&Real::zero(), &degrees, mass),
+            "AtRest" => Self::moving(&Real::zero(), &degrees, mass),
             "Kinetic" => {
                 let kinetic = energy("");
                 of_size((&kinetic * (&kinetic + Real::int(2) * &mass)).sqrt())
@@ -262,16 +263,16 @@ impl Oracle {
             "Components" => {
                 let (px, py) = (momentum("px"), momentum("py"));
                 let e = (px.squared() + py.squared() + mass.squared()).sqrt();
-                self.stored(Vector::new(e, px, py), mass, true)
+                Self::stored(Vector::new(e, px, py), mass, true)
             }
             "Longitudinal" => {
                 let y = self.number(state.need("rapidity"), Kind::Plain);
                 let py = momentum("py");
                 let transverse = (mass.squared() + py.squared()).sqrt();
                 let p = Vector::new(&transverse * y.cosh(), &transverse * y.sinh(), py);
-                self.stored(p, mass, true)
+                Self::stored(p, mass, true)
             }
-            _ => self.moving(&self.velocity(state, None), &degrees, mass),
+            _ => Self::moving(&self.velocity(state, None), &degrees, mass),
         }
     }
 
@@ -290,7 +291,7 @@ impl Oracle {
                     let degrees = tree
                         .get("angle")
                         .map_or_else(Real::zero, |a| self.number(a, Kind::Angle));
-                    let motion = self.moving(&rapidity, &degrees, Real::one());
+                    let motion = Self::moving(&rapidity, &degrees, Real::one());
                     motion.unseen(&self.beside(tree))
                 }
                 "RestOf" => match (tree.get("line"), tree.get("particle")) {

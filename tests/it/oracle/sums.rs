@@ -15,7 +15,7 @@ pub(crate) fn promised() -> Real {
 pub(crate) struct Sum {
     parts: Vec<Particle>,
     pub(crate) total: Vector,
-    pub(crate) mass_sum: Real,
+    pub(crate) masses: Real,
     /// Sum of E, and of |px| + |py|.
     pub(crate) scale: Real,
 }
@@ -34,7 +34,7 @@ impl Sum {
                     y
                 }
             }),
-            mass_sum: add(&|p| p.mass.clone()),
+            masses: add(&|p| p.mass.clone()),
             scale: add(&|p| p.p.t.clone() + p.p.x.abs() + p.p.y.abs()),
             parts: parts.to_vec(),
         }

@@ -11,11 +11,11 @@ pub(crate) enum Tree {
     /// A bare number or word.
     Word(String),
     /// `[a, b]`, or `(a, b)` without a name.
-    List(Vec<Tree>),
+    List(Vec<Self>),
     /// `{"name": form}`.
-    Map(Vec<(String, Tree)>),
+    Map(Vec<(String, Self)>),
     /// `Name(field: value)`, `(field: value)` or `Name(value)`, whose one field is named "".
-    Form(String, Vec<(String, Tree)>),
+    Form(String, Vec<(String, Self)>),
 }
 
 impl Tree {

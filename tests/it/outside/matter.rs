@@ -1,6 +1,7 @@
 //! Collisions and decays.
 
 use std::collections::BTreeMap;
+use std::fmt::Write as _;
 
 use serde_json::Value;
 
@@ -132,7 +133,7 @@ fn closed(before: &str, after: &str) -> String {
         let named: Vec<String> = forms
             .enumerate()
             .map(|(i, form)| {
-                particles.push_str(&format!("\"{prefix}{i}\": {form}, "));
+                let _ = write!(particles, "\"{prefix}{i}\": {form}, ");
                 format!("\"{prefix}{i}\"")
             })
             .collect();
