@@ -18,7 +18,7 @@ pub struct Parsed {
     /// How the desk is painted; by OpenGL where it works, else in software
     #[arg(long, value_enum)]
     pub paint: Option<Paint>,
-    /// Something else than the desk
+    /// Something other than the desk
     #[command(subcommand)]
     pub command: Option<Command>,
 }

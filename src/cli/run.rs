@@ -54,7 +54,10 @@ fn draw(args: &Draw) -> u8 {
     };
     let drawn = match task::draw(&opened, &drawing) {
         Ok(drawn) => drawn,
-        Err(fault) => return refuse(&format!("{}: {fault}", args.scene.display())),
+        Err(fault) => {
+            tell(&args.scene, &fault.faults);
+            return refuse(&format!("{}: {fault}", args.scene.display()));
+        }
     };
     let overwrite = if args.force {
         Overwrite::Replace
@@ -85,7 +88,19 @@ fn ledger(args: &LedgerArgs) -> u8 {
         Form::Json => export::json(&ledger),
     };
     print(&bytes);
-    tell(&args.scene, &opened.faults)
+    let told = tell(&args.scene, &opened.faults);
+    // The rest are faults of the frame: what cannot be seen from it.
+    let unseen = ledger.faults.get(opened.faults.len()..).unwrap_or_default();
+    for row in unseen {
+        say(&format!(
+            "{}: {}: {}; {}",
+            args.scene.display(),
+            row.object,
+            row.what,
+            row.mend
+        ));
+    }
+    if unseen.is_empty() { told } else { FAULTS }
 }
 
 fn audit(args: &Audit) -> u8 {

@@ -18,8 +18,8 @@ impl Angle {
     /// Along +x.
     pub const ZERO: Self = Self(DVec2::X);
 
-    /// From degrees (finite), counter-clockwise from +x. Multiples of 30 and 45 degrees have the sines and cosines
-    /// that are exact or equal exact or equal, others to one unit in the last place.
+    /// From degrees (finite), counter-clockwise from +x. Multiples of 30 and 45 degrees have exact sines and
+    /// cosines where these are rational, and equal ones where they are equal; others to one unit in the last place.
     pub fn from_degrees(degrees: f64) -> Self {
         // The remainder and the part beyond the nearest quarter turn are exact.
         let turn = degrees % 360.0;

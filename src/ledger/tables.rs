@@ -378,15 +378,12 @@ fn collision_rows(
         object: Some(object.clone()),
         words: vec![String::new(), "difference".to_owned()],
         numbers: vec![
-            d.energy.into(),
-            d.momentum[0].into(),
-            d.momentum[1].into(),
+            within(d.energy, collision),
+            within(d.momentum[0], collision),
+            within(d.momentum[1], collision),
             (-collision.q_value).into(),
             Entry::Blank,
-        ]
-        .into_iter()
-        .map(|e: Entry| within(e, collision))
-        .collect(),
+        ],
         is_sum: true,
         rule_above: false,
     });
@@ -394,12 +391,13 @@ fn collision_rows(
 }
 
 /// A difference within rounding of the sums is shown as 0, so that it does not widen its column.
-fn within(entry: Entry, collision: &CollisionRow) -> Entry {
-    let rounding = 1e-12 * (collision.before.energy.abs() + collision.after.energy.abs());
-    match entry {
-        Entry::Number(value) if value.abs() <= rounding => Entry::Number(0.0),
-        Entry::Number(_) | Entry::Measured(..) | Entry::Missing | Entry::Blank => entry,
-    }
+fn within(difference: f64, collision: &CollisionRow) -> Entry {
+    let rounding = 1e-12 * (collision.before.energy + collision.after.energy);
+    Entry::Number(if difference.abs() <= rounding {
+        0.0
+    } else {
+        difference
+    })
 }
 
 fn collision_notes(ledger: &Ledger, collision: &CollisionRow) -> Vec<String> {
@@ -413,7 +411,7 @@ fn collision_notes(ledger: &Ledger, collision: &CollisionRow) -> Vec<String> {
     ];
     let (kept, lost): (Vec<_>, Vec<_>) = parts
         .into_iter()
-        .partition(|(_, off)| off.abs() <= collision.tolerance);
+        .partition(|(_, off)| collision.balanced || off.abs() <= collision.tolerance);
     let names = |list: &[(&str, f64)]| list.iter().map(|p| p.0).collect::<Vec<_>>().join(", ");
     let mut notes = Vec::new();
     if lost.is_empty() {

@@ -300,8 +300,17 @@ pub enum FramePart {
     /// The frame in which the total momentum of a collision or of some particles is 0.
     CentreOfMomentum {
         /// A collision's name, or particles.
-        of: Result<String, Vec<String>>,
+        of: Whole,
     },
+}
+
+/// Whose total momentum.
+#[derive(Clone, Debug, PartialEq, Eq)]
+pub enum Whole {
+    /// All that goes into a collision.
+    Collision(String),
+    /// Some particles.
+    Particles(Vec<String>),
 }
 
 /// Whose rest frame.

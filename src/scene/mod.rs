@@ -15,7 +15,7 @@ mod values;
 pub use document::{
     Arrows, Closure, Collision, Common, Event, Frame, FramePart, Line, LineOrParticle, List,
     Object, Panel, Particle, Plate, Range, Scene, SpeciesEntry, State, TimeAxis, Toward, Units,
-    Velocity, View, When,
+    Velocity, View, When, Whole,
 };
 pub use places::Places;
 pub use reading::{Reading, Unreadable, read};

@@ -1,18 +1,15 @@
 //! What is looked at once everything is solved: trims of lines, and events that lie beyond them.
 
-use std::collections::BTreeSet;
 use std::sync::Arc;
 
-use super::graph::{missing, names};
-use super::solver::{Solver, fault};
+use super::solver::Solver;
 use crate::fault::{Fault, Kind, ObjectId};
 use crate::geometry::Displacement;
 use crate::scene::{Event, Line};
 
 /// Sets the ends of lines, and tells of ends that do not lie on their line and of events beyond them.
-pub(super) fn trims(solver: &mut Solver<'_>, unread: &[ObjectId]) {
+pub(super) fn trims(solver: &mut Solver<'_>) {
     let scene = solver.scene;
-    let unread: BTreeSet<&ObjectId> = unread.iter().collect();
     for (i, (name, object)) in scene.lines.iter().enumerate() {
         let id = ObjectId {
             kind: Kind::Line,
@@ -27,17 +24,20 @@ pub(super) fn trims(solver: &mut Solver<'_>, unread: &[ObjectId]) {
                 through.last().map(String::as_str),
             ),
         };
-        let from = end(solver, &id, i, ("from", from), &unread);
-        let until = end(solver, &id, i, ("until", until), &unread);
+        let from = end(solver, &id, i, ("from", from));
+        let mut until = end(solver, &id, i, ("until", until));
         if let (Some((_, a)), Some((_, b))) = (&from, &until)
             && b.t() < a.t()
         {
-            solver.faults.push(Fault::new(
+            let what = "it would end before it begins, so it runs on without end";
+            let finding = Fault::new(
                 id,
                 "until",
-                "it ends before it begins",
+                what,
                 "exchange from and until, or name other events",
-            ));
+            );
+            solver.faults.push(finding.finding());
+            until = None;
         }
         if let Some(line) = &mut solver.lines[i] {
             (line.from, line.until) = (from, until);
@@ -65,34 +65,19 @@ fn end(
     id: &ObjectId,
     line: usize,
     (field, name): (&str, Option<&str>),
-    unread: &BTreeSet<&ObjectId>,
 ) -> Option<(Arc<str>, Displacement)> {
     let name = name?;
-    let Some(index) = solver.scene.events.get_index_of(name) else {
-        if !unread.contains(&ObjectId::new(Kind::Event, name))
-            && field != "through"
-            && solver.lines[line].is_some()
-        {
-            let fault = missing(
-                id.clone(),
-                field,
-                Kind::Event,
-                name,
-                names(solver.scene, Kind::Event),
-            );
-            solver.faults.push(fault);
-        }
-        return None;
-    };
+    let index = solver.scene.events.get_index_of(name)?;
     let at = solver.events[index].as_ref()?.at;
     let (off, bound) = solver.lines[line].as_ref()?.world.distance(at);
     if off > bound {
         let unit = &solver.units.solved.time.symbol;
         let off = crate::quantity::significant(off, 3);
-        let what = format!("event {name} does not lie on it (it is {off} {unit} off)");
-        solver
-            .faults
-            .extend(fault(id, field, what, "name an event on the line").map(|f| *f));
+        let what = format!(
+            "event {name} does not lie on it (it is {off} {unit} off), so it has no such end"
+        );
+        let finding = Fault::new(id.clone(), field, what, "name an event on the line");
+        solver.faults.push(finding.finding());
         return None;
     }
     Some((name.into(), at))

@@ -2,13 +2,14 @@
 
 use super::particles;
 use super::solver::{Solver, Spoiled, fault};
+use super::views::rounding;
 use super::{SolvedCollision, SolvedParticle};
 use crate::dynamics::{Momentum, Total, remainder};
 use crate::fault::{Fault, Kind, ObjectId};
 use crate::scene::{Closure, Collision};
 
-/// Rounding allowed of a sum, relative to the sum of absolute terms.
-const ROUNDING: f64 = 1e-12;
+/// Rounding allowed of a mass that a balance gives, relative to the mass of all it is found from.
+const MASS_ROUNDING: f64 = 1e-9;
 
 /// The collision, and the particle its closure has found.
 pub(super) fn solve(
@@ -46,8 +47,14 @@ pub(super) fn solve(
                 before.push(momentum);
             }
             let own = ObjectId::new(Kind::Particle, name);
-            compare_mass(solver, &own, *particle, &momentum)?;
-            Some((*particle, particles::closed(solver, &own, momentum)?))
+            let closed = particles::closed(solver, &own, momentum, typed_error)?;
+            compare_mass(
+                solver,
+                &own,
+                (*particle, &closed),
+                &Total::of(if stands_after { &before } else { &after }),
+            )?;
+            Some((*particle, closed))
         }
     };
     if let (None, true) = (&found, form.closure != Closure::Given) {
@@ -59,10 +66,9 @@ pub(super) fn solve(
         ));
     }
     let (total_before, total_after) = (Total::of(&before), Total::of(&after));
-    let scale = |t: &Total| t.energy_scale + t.momentum_scale;
     // What a closure has found balances by construction: typed digits move it along.
-    let tolerance = ROUNDING * (scale(&total_before) + scale(&total_after))
-        + typed_error * f64::from(u8::from(found.is_none()));
+    let typed_error = if found.is_some() { 0.0 } else { typed_error };
+    let tolerance = rounding(&total_before, &total_after) + typed_error;
     let names = |list: &[String]| list.iter().map(|n| n.as_str().into()).collect();
     let collision = SolvedCollision {
         before: names(&form.before),
@@ -71,6 +77,7 @@ pub(super) fn solve(
         at: form.at.as_deref().map(Into::into),
         total_before,
         total_after,
+        typed_error,
         tolerance,
         label: object.common.label.clone(),
     };
@@ -146,11 +153,13 @@ fn find(
 }
 
 /// A finding where a closing particle's stated mass is not the one the balance gives.
+/// A finding where a closing particle's stated mass is not the one the balance gives, within three standard deviations,
+/// rounding, and what typed digits do to a mass: its square moves by twice the energy times their error.
 fn compare_mass(
     solver: &mut Solver<'_>,
     id: &ObjectId,
-    particle: usize,
-    found: &Momentum,
+    (particle, found): (usize, &SolvedParticle),
+    whole: &Total,
 ) -> Result<(), Spoiled> {
     let Some((_, object)) = solver.scene.particles.get_index(particle) else {
         return Ok(());
@@ -158,26 +167,31 @@ fn compare_mass(
     let Some(stated) = particles::mass(solver, id, &object.form)? else {
         return Ok(());
     };
-    let off = found.mass() - stated.to_f64();
-    let allowed = 3.0 * stated.uncertainty.unwrap_or(0.0) + 1e-9 * found.energy();
-    if off.abs() > allowed {
-        let unit = solver.units.mass().symbol;
-        let finding = Fault::new(
-            id.clone(),
-            if object.form.species.is_some() {
-                "species"
-            } else {
-                "mass"
-            },
-            format!(
-                "its mass by the balance is {} {unit}, {} more than stated",
-                crate::quantity::significant(found.mass(), 7),
-                crate::quantity::significant(off, 3),
-            ),
-            "leave the mass to the closure, or mend the other particles",
-        );
-        solver.faults.push(finding.finding());
+    let mass = found.momentum.mass();
+    let (off, sum) = (mass - stated.to_f64(), mass + stated.to_f64());
+    let known = 3.0 * stated.uncertainty.unwrap_or(0.0) + MASS_ROUNDING * whole.invariant_mass;
+    let typed = 4.0 * found.momentum.energy() * found.typed_error;
+    if off.abs() * sum <= known * sum + typed {
+        return Ok(());
     }
+    let unit = solver.units.mass().symbol;
+    let field = if object.form.species.is_some() {
+        "species"
+    } else {
+        "mass"
+    };
+    let finding = Fault::new(
+        id.clone(),
+        field,
+        format!(
+            "its mass by the balance is {} {unit}, {} {} than stated",
+            crate::quantity::significant(mass, 7),
+            crate::quantity::significant(off.abs(), 3),
+            if off > 0.0 { "more" } else { "less" },
+        ),
+        "leave the mass to the closure, or mend the other particles",
+    );
+    solver.faults.push(finding.finding());
     Ok(())
 }
 

@@ -86,7 +86,7 @@ fn at(
     let way = x.over(&units.light_way);
     let (u, v) = (t.minus(&way).to_f64(), t.plus(&way).to_f64());
     let given = Displacement::new(u, v, 0.0);
-    if let Some(far) = [u, v].into_iter().find(|c| !in_range(*c)) {
+    if let Some(far) = [u, v].into_iter().find(|c| !crate::num::in_range(*c)) {
         let what = format!("its coordinates leave the range 1e-150 to 1e150 ({far:e})");
         return Err(fault(
             id,
@@ -137,8 +137,4 @@ fn scaled(d: Displacement, k: f64) -> Displacement {
 
 fn largest(d: Displacement) -> f64 {
     d.u.abs().max(d.v.abs()).max(d.y.abs())
-}
-
-fn in_range(component: f64) -> bool {
-    component == 0.0 || (1e-150..=1e150).contains(&component.abs())
 }

@@ -7,7 +7,7 @@ use crate::dynamics::{Momentum, Total};
 use crate::fault::ObjectId;
 use crate::geometry::{Angle, Boost, Displacement, Leg, Rapidity};
 use crate::quantity::{Dimension, Typed, Unit};
-use crate::scene::{FramePart, LineOrParticle, Toward, Velocity, When};
+use crate::scene::{FramePart, LineOrParticle, Toward, Velocity, When, Whole};
 
 pub(super) fn solve(solver: &mut Solver<'_>, id: &ObjectId) -> Result<SolvedFrame, Spoiled> {
     let object = solver.scene.frames.get(&id.name).ok_or(None)?.clone();
@@ -105,14 +105,10 @@ fn rest_of_line(
     }
 }
 
-fn centre(
-    solver: &Solver<'_>,
-    id: &ObjectId,
-    of: &Result<String, Vec<String>>,
-) -> Result<Boost, Spoiled> {
+fn centre(solver: &Solver<'_>, id: &ObjectId, of: &Whole) -> Result<Boost, Spoiled> {
     let total = match of {
-        Ok(collision) => solver.collision(collision)?.total_before,
-        Err(particles) => {
+        Whole::Collision(name) => solver.collision(name)?.total_before,
+        Whole::Particles(particles) => {
             let parts: Result<Vec<Momentum>, Spoiled> = particles
                 .iter()
                 .map(|name| Ok(solver.particle(name)?.momentum))

@@ -5,7 +5,7 @@ use std::collections::BTreeSet;
 use std::sync::Arc;
 
 use crate::fault::{Fault, Kind, ObjectId, nearest};
-use crate::scene::{Event, FramePart, Line, LineOrParticle, Scene, State, When};
+use crate::scene::{Event, FramePart, Line, LineOrParticle, Scene, State, When, Whole};
 
 /// The kinds that take part in solving, in the order of their node numbers.
 const KINDS: [Kind; 5] = [
@@ -15,6 +15,10 @@ const KINDS: [Kind; 5] = [
     Kind::Collision,
     Kind::Frame,
 ];
+
+/// So many missing names are answered with the nearest one, each looked for among so many.
+const SUGGESTED: usize = 20;
+const MOST_KNOWN: usize = 10_000;
 
 /// One object as a node: its kind and its index in the scene's list of that kind.
 #[derive(Clone, Copy, Debug, PartialEq, Eq, PartialOrd, Ord)]
@@ -82,6 +86,11 @@ impl Order {
             });
             for (kind, name, field) in references {
                 order.follow(scene, node, &unread, (kind, &name, &field));
+            }
+            for (field, name) in places_named(scene, node) {
+                if index_of(scene, Kind::Event, name).is_none() {
+                    order.follow(scene, node, &unread, (Kind::Event, name, field));
+                }
             }
         }
         order.sort(scene);
@@ -188,7 +197,7 @@ impl Order {
 }
 
 /// The fault of a name that is not there.
-pub(super) fn missing<'a>(
+fn missing<'a>(
     object: ObjectId,
     field: &str,
     kind: Kind,
@@ -231,7 +240,7 @@ pub(super) fn index_of(scene: &Scene, kind: Kind, name: &str) -> Option<usize> {
 }
 
 /// All names of a kind.
-pub(super) fn names(scene: &Scene, kind: Kind) -> Box<dyn Iterator<Item = &str> + '_> {
+fn names(scene: &Scene, kind: Kind) -> Box<dyn Iterator<Item = &str> + '_> {
     match kind {
         Kind::Event => Box::new(scene.events.keys().map(|n| &**n)),
         Kind::Line => Box::new(scene.lines.keys().map(|n| &**n)),
@@ -309,6 +318,32 @@ fn collect(scene: &Scene, node: Node, closers: &[Option<usize>], sink: Sink<'_>)
             }),
         Kind::Scene | Kind::Species | Kind::Plate => {}
     }
+}
+
+/// Events that an object names without depending on them: they must be there, no more.
+fn places_named(scene: &Scene, node: Node) -> Vec<(&'static str, &str)> {
+    let named = match node.kind {
+        Kind::Line => scene
+            .lines
+            .get_index(node.index)
+            .map(|(_, o)| match &o.form {
+                Line::Free { from, until, .. }
+                | Line::Light { from, until, .. }
+                | Line::Follows { from, until, .. } => vec![("from", from), ("until", until)],
+                Line::Broken { .. } => Vec::new(),
+            }),
+        Kind::Collision => scene
+            .collisions
+            .get_index(node.index)
+            .map(|(_, o)| vec![("at", &o.form.at)]),
+        Kind::Event | Kind::Particle | Kind::Frame | Kind::Scene | Kind::Species | Kind::Plate => {
+            None
+        }
+    };
+    let named = named.unwrap_or_default().into_iter();
+    named
+        .filter_map(|(field, name)| Some((field, name.as_deref()?)))
+        .collect()
 }
 
 fn frame_name(scene: &Scene, when: &When, sink: Sink<'_>) {
@@ -417,8 +452,12 @@ fn frame(scene: &Scene, part: &FramePart, sink: Sink<'_>) {
             }
         }
         FramePart::RestOf(LineOrParticle::Particle(name)) => sink(Kind::Particle, name, "particle"),
-        FramePart::CentreOfMomentum { of: Ok(collision) } => sink(Kind::Collision, collision, "of"),
-        FramePart::CentreOfMomentum { of: Err(particles) } => {
+        FramePart::CentreOfMomentum {
+            of: Whole::Collision(collision),
+        } => sink(Kind::Collision, collision, "of"),
+        FramePart::CentreOfMomentum {
+            of: Whole::Particles(particles),
+        } => {
             for (i, name) in particles.iter().enumerate() {
                 sink(Kind::Particle, name, &format!("of.{i}"));
             }

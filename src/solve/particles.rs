@@ -5,9 +5,9 @@ use super::solver::{Solver, Spoiled, fault};
 use super::velocity;
 use super::{SolvedParticle, Stated};
 use crate::dynamics::{DynamicsError, Momentum};
-use crate::fault::ObjectId;
+use crate::fault::{Fault, Kind, ObjectId};
 use crate::geometry::{Angle, Rapidity};
-use crate::quantity::{Dimension, Number, Quantity, Typed, Unit, species};
+use crate::quantity::{Dimension, Number, Quantity, Typed, Unit, read, species};
 use crate::scene::{Closure, Particle, State, Toward, Velocity, When};
 
 /// A particle's mass: the number, its standard deviation and the half of its last digit, if the scene typed it.
@@ -66,6 +66,27 @@ pub(super) fn solve(solver: &mut Solver<'_>, id: &ObjectId) -> Result<SolvedPart
         typed_error,
         label: object.common.label.clone().or(mass.label),
     })
+}
+
+/// Faults of the scene's own species: their masses and mean lives must read.
+pub(super) fn species_faults(solver: &Solver<'_>) -> Vec<Fault> {
+    let mut faults = Vec::new();
+    for (name, object) in &solver.scene.species {
+        let id = ObjectId {
+            kind: Kind::Species,
+            name: name.clone(),
+        };
+        let mut check = |field: &str, typed: &Typed, unit: &Unit| {
+            if let Err(Some(fault)) = Solver::quantity(&id, field, typed, unit) {
+                faults.push(*fault);
+            }
+        };
+        check("mass", &object.form.mass, &solver.units.mass());
+        if let Some(life) = &object.form.mean_life {
+            check("mean_life", life, &Unit::base(Dimension::Time));
+        }
+    }
+    faults
 }
 
 /// A closing particle that no collision closes.
@@ -131,7 +152,8 @@ pub(super) fn mass(
         (None, Some(typed)) => (Solver::quantity(id, "mass", typed, &unit)?, true, None),
         (Some(name), None) => {
             if let Some(own) = solver.scene.species.get(name.as_str()) {
-                let quantity = Solver::quantity(id, "species", &own.form.mass, &unit)?;
+                // A fault of the species is told of it once, for all its particles.
+                let quantity = read(&own.form.mass, &unit).map_err(|_told| None)?;
                 (quantity, true, own.common.label.clone())
             } else if let Some(known) = species(name) {
                 let text = Typed::Text(format!("{} MeV/c^2", known.mass));
@@ -143,7 +165,7 @@ pub(super) fn mass(
         }
     };
     let mass = quantity.value.to_f64();
-    if mass < 0.0 || (mass != 0.0 && !(1e-150..=1e150).contains(&mass)) {
+    if mass < 0.0 || !crate::num::in_range(mass) {
         let what = format!("its mass is {mass}");
         return Err(fault(
             id,
@@ -236,7 +258,7 @@ struct Inputs {
     numbers: Vec<Quantity>,
     /// The rapidity of a velocity.
     rapidity: Option<Rapidity>,
-    finding: Option<crate::fault::Fault>,
+    finding: Option<Fault>,
 }
 
 fn inputs(solver: &Solver<'_>, id: &ObjectId, form: &Particle) -> Result<Inputs, Spoiled> {
@@ -419,6 +441,7 @@ pub(super) fn closed(
     solver: &Solver<'_>,
     id: &ObjectId,
     momentum: Momentum,
+    typed_error: f64,
 ) -> Result<SolvedParticle, Spoiled> {
     let object = solver.scene.particles.get(&id.name).ok_or(None)?;
     let form = &object.form;
@@ -436,7 +459,7 @@ pub(super) fn closed(
         species: form.species.clone(),
         mass_uncertainty: None,
         stated: Stated::default(),
-        typed_error: 0.0,
+        typed_error,
         label: object
             .common
             .label

@@ -37,6 +37,8 @@ pub fn solve(scene: &Scene, unread: &[ObjectId]) -> Solved {
         faults,
         span: (0.0, 0.0),
     };
+    let of_species = particles::species_faults(&solver);
+    solver.faults.extend(of_species);
     let nodes = std::mem::take(&mut order.nodes);
     for node in nodes {
         if order.out.contains(&node) {
@@ -51,7 +53,7 @@ pub fn solve(scene: &Scene, unread: &[ObjectId]) -> Solved {
             order.out.insert(node);
         }
     }
-    checks::trims(&mut solver, unread);
+    checks::trims(&mut solver);
     let out = order.out.iter().map(|&node| graph::id_of(scene, node));
     let left_out = out.chain(unread.iter().cloned()).collect();
     solver.finish(left_out)
@@ -100,31 +102,28 @@ impl Solver<'_> {
             }
             Kind::Line => {
                 let line = lines::solve(self, &id)?;
-                for tick in lines::rapidities(&line) {
-                    self.widen(&id, tick.0)?;
-                }
+                self.widen(&id, lines::rapidities(&line).into_iter().map(|tick| tick.0))?;
                 self.lines[i] = Some(line);
             }
             Kind::Particle => {
                 // A closing particle's vector has been put here by its collision.
                 if self.particles[i].is_none() {
                     let particle = particles::solve(self, &id)?;
-                    if let Some(rapidity) = particle.momentum.rapidity() {
-                        self.widen(&id, rapidity)?;
-                    }
+                    self.widen(&id, particle.momentum.rapidity())?;
                     self.particles[i] = Some(particle);
                 }
             }
             Kind::Collision => {
                 let (collision, closed) = collisions::solve(self, &id, i)?;
                 if let Some((particle, solved)) = closed {
+                    self.widen(&id, solved.momentum.rapidity())?;
                     self.particles[particle] = Some(solved);
                 }
                 self.collisions[i] = Some(collision);
             }
             Kind::Frame => {
                 let frame = frames::solve(self, &id)?;
-                self.widen(&id, frame.boost.rapidity().value())?;
+                self.widen(&id, [frame.boost.rapidity().value()])?;
                 self.frames[i] = Some(frame);
             }
             Kind::Scene | Kind::Species | Kind::Plate => {}
@@ -132,18 +131,23 @@ impl Solver<'_> {
         Ok(())
     }
 
-    /// Takes a rapidity into the scene's span, which must stay narrow enough for exact numbers.
-    fn widen(&mut self, id: &ObjectId, rapidity: f64) -> Result<(), Spoiled> {
-        let (low, high) = (self.span.0.min(rapidity), self.span.1.max(rapidity));
-        if high - low > WIDEST {
-            return Err(Some(Box::new(Fault::new(
-                id.clone(),
-                "",
-                format!("its rapidity {rapidity} is more than {WIDEST} from another thing's"),
-                "keep all rapidities of a scene within 600 of one another",
-            ))));
+    /// Takes rapidities into the scene's span, which must stay narrow enough for exact numbers.
+    fn widen(
+        &mut self,
+        id: &ObjectId,
+        rapidities: impl IntoIterator<Item = f64>,
+    ) -> Result<(), Spoiled> {
+        let mut span = self.span;
+        for rapidity in rapidities {
+            span = (span.0.min(rapidity), span.1.max(rapidity));
+            if span.1 - span.0 > WIDEST {
+                let what =
+                    format!("its rapidity {rapidity} is more than {WIDEST} from another thing's");
+                let mend = "keep all rapidities of a scene within 600 of one another";
+                return Err(fault(id, "", what, mend));
+            }
         }
-        self.span = (low, high);
+        self.span = span;
         Ok(())
     }
 
@@ -280,7 +284,12 @@ pub(super) fn ticks(solved: &Solved) -> Vec<RapidityTick> {
     };
     for (name, line) in &solved.lines {
         for (rapidity, celerity) in lines::rapidities(line) {
-            add(Kind::Line, name, rapidity, celerity / celerity.hypot_one());
+            add(
+                Kind::Line,
+                name,
+                rapidity,
+                celerity / crate::num::hypot(1.0, celerity),
+            );
         }
     }
     for (name, particle) in &solved.particles {
@@ -299,15 +308,4 @@ pub(super) fn ticks(solved: &Solved) -> Vec<RapidityTick> {
         add(Kind::Frame, name, rapidity, across);
     }
     ticks
-}
-
-trait HypotOne {
-    /// The root of 1 + the square.
-    fn hypot_one(self) -> Self;
-}
-
-impl HypotOne for f64 {
-    fn hypot_one(self) -> Self {
-        crate::num::hypot(1.0, self)
-    }
 }

@@ -2,15 +2,32 @@
 
 use super::solver::{difference, exact_difference, ticks};
 use super::{RapidityTick, Solved, SolvedCollision, SolvedEvent, SolvedFrame, Viewing};
+use crate::dynamics::Total;
 use crate::geometry::{Boost, Displacement, Rapidity, Separation};
 use crate::quantity::{Dimension, Unit, read};
 use crate::scene::When;
+
+/// Rounding allowed of a sum, relative to the sum of absolute terms.
+const ROUNDING: f64 = 1e-12;
+
+/// The rounding allowed of the difference of two sums.
+pub(super) fn rounding(before: &Total, after: &Total) -> f64 {
+    let scale = |t: &Total| t.energy_scale + t.momentum_scale;
+    ROUNDING * (scale(before) + scale(after))
+}
 
 impl SolvedCollision {
     /// After less before: E, px, py.
     pub fn difference(&self) -> [f64; 3] {
         let (a, b) = (&self.total_after, &self.total_before);
         [a.energy - b.energy, a.px - b.px, a.py - b.py]
+    }
+
+    /// The tolerance as a frame has it, from the sums seen there: a boost stretches an error of the base frame by at
+    /// most e to its rapidity.
+    pub fn tolerance_in(&self, boost: Boost, before: &Total, after: &Total) -> f64 {
+        let stretch = crate::num::exp(boost.rapidity().value().abs());
+        rounding(before, after) + self.typed_error * stretch
     }
 
     /// Whether E, px and py agree within the tolerance.

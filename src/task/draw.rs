@@ -3,7 +3,7 @@
 use super::Opened;
 use super::open::place;
 use crate::export::{ExportFault, Format, Options, write};
-use crate::fault::{Fault, Weight, nearest};
+use crate::fault::{Fault, nearest};
 use crate::ledger::{FaultRow, Ledger};
 use crate::plate::{self, Laid, Override};
 use crate::scene::When;
@@ -33,21 +33,30 @@ pub struct Drawn {
 }
 
 /// Why nothing was made.
-#[derive(Clone, Debug, PartialEq, Eq, thiserror::Error)]
+#[derive(Clone, Debug, PartialEq, thiserror::Error)]
 #[error("{what}; {mend}")]
 pub struct TaskFault {
     /// What is wrong.
     pub what: String,
     /// What would mend it.
     pub mend: String,
+    /// The faults of the scene that are behind it, placed.
+    pub faults: Vec<Fault>,
+}
+
+impl TaskFault {
+    fn new(what: impl Into<String>, mend: impl Into<String>) -> Self {
+        Self {
+            what: what.into(),
+            mend: mend.into(),
+            faults: Vec::new(),
+        }
+    }
 }
 
 impl From<ExportFault> for TaskFault {
     fn from(fault: ExportFault) -> Self {
-        Self {
-            what: fault.what,
-            mend: fault.mend,
-        }
+        Self::new(fault.what, fault.mend)
     }
 }
 
@@ -89,22 +98,18 @@ pub fn draw(opened: &Opened, drawing: &Drawing) -> Result<Drawn, TaskFault> {
         only,
     };
     let laid = lay_out(opened, plate, &change).ok_or_else(|| no_plate(opened, plate))?;
-    if laid.panels.iter().all(|panel| panel.is_blank) {
-        let grave = laid.faults.into_iter().find(|f| f.weight == Weight::Fault);
-        return Err(grave.map_or_else(
-            || TaskFault {
-                what: "there is nothing to draw".to_owned(),
-                mend: "add events, lines or particles".to_owned(),
-            },
-            |fault| TaskFault {
-                what: fault.what,
-                mend: fault.mend,
-            },
-        ));
-    }
     let mut faults = opened.faults.clone();
     faults.extend(laid.faults);
     place(&opened.places, &mut faults);
+    if laid.panels.iter().all(|panel| panel.is_blank) {
+        let mend = if faults.is_empty() {
+            "add events, lines or particles"
+        } else {
+            "mend what is listed of it"
+        };
+        let blank = TaskFault::new("nothing of the plate can be drawn", mend);
+        return Err(TaskFault { faults, ..blank });
+    }
     let bytes = write(&laid.sheet, drawing.format, &drawing.options)?;
     Ok(Drawn { bytes, faults })
 }
@@ -136,21 +141,21 @@ fn fault_row(fault: &Fault) -> FaultRow {
 fn viewing(opened: &Opened, when: &When) -> Result<crate::solve::Viewing, TaskFault> {
     let solved = &opened.solved;
     solved.viewing(when).ok_or_else(|| match when {
-        When::Frame(name) if opened.scene.frames.contains_key(name.as_str()) => TaskFault {
-            what: format!("frame \"{name}\" is at fault"),
-            mend: "mend what is listed of it first".to_owned(),
-        },
+        When::Frame(name) if opened.scene.frames.contains_key(name.as_str()) => TaskFault::new(
+            format!("frame \"{name}\" is at fault"),
+            "mend what is listed of it first".to_owned(),
+        ),
         When::Frame(name) => {
             let known = solved.frames.keys().map(|n| &**n).chain([&*solved.base]);
-            TaskFault {
-                what: format!("there is no frame named \"{name}\""),
-                mend: offer(name, known),
-            }
+            TaskFault::new(
+                format!("there is no frame named \"{name}\""),
+                offer(name, known),
+            )
         }
-        When::Base | When::Rapidity(_) => TaskFault {
-            what: "that is no rapidity".to_owned(),
-            mend: "give a number between -600 and 600".to_owned(),
-        },
+        When::Base | When::Rapidity(_) => TaskFault::new(
+            "that is no rapidity".to_owned(),
+            "give a number between -600 and 600".to_owned(),
+        ),
     })
 }
 
@@ -171,10 +176,10 @@ fn panel_count(opened: &Opened, plate: Option<&str>) -> Result<usize, TaskFault>
 fn no_plate(opened: &Opened, plate: Option<&str>) -> TaskFault {
     let name = plate.unwrap_or_default();
     let known = opened.scene.plates.keys().map(|n| &**n);
-    TaskFault {
-        what: format!("there is no plate named \"{name}\""),
-        mend: offer(name, known),
-    }
+    TaskFault::new(
+        format!("there is no plate named \"{name}\""),
+        offer(name, known),
+    )
 }
 
 fn panel_index(letter: char, panels: usize) -> Result<usize, TaskFault> {
@@ -186,14 +191,15 @@ fn panel_index(letter: char, panels: usize) -> Result<usize, TaskFault> {
         return Ok(index);
     }
     let last = char::from(b'a' + u8::try_from(panels.saturating_sub(1).min(25)).unwrap_or(0));
-    Err(TaskFault {
-        what: format!("the plate has no panel \"{letter}\""),
-        mend: if panels < 2 {
-            "it has only a".to_owned()
-        } else {
-            format!("it has a to {last}")
-        },
-    })
+    let mend = if panels < 2 {
+        "it has only a".to_owned()
+    } else {
+        format!("it has a to {last}")
+    };
+    Err(TaskFault::new(
+        format!("the plate has no panel \"{letter}\""),
+        mend,
+    ))
 }
 
 fn offer<'a>(name: &str, known: impl Iterator<Item = &'a str> + Clone) -> String {

@@ -5,7 +5,7 @@ use crate::scene::faults::Faults;
 use crate::scene::fields::Form;
 use crate::scene::tree::{Shape, Value};
 use crate::scene::values::{number, text, texts, unknown};
-use crate::scene::{Frame, FramePart, LineOrParticle};
+use crate::scene::{Frame, FramePart, LineOrParticle, Whole};
 
 /// The forms of a frame.
 const FORMS: [&str; 3] = ["Moving", "RestOf", "CentreOfMomentum"];
@@ -75,13 +75,10 @@ fn rest_of<'a>(
 }
 
 /// The name of a collision, or a list of particles.
-fn name_or_names<'a>(
-    value: Value<'a>,
-    faults: &mut Faults<'a>,
-) -> Option<Result<String, Vec<String>>> {
+fn name_or_names<'a>(value: Value<'a>, faults: &mut Faults<'a>) -> Option<Whole> {
     if value.shape() == Shape::Square {
-        texts(value, faults).map(Err)
+        texts(value, faults).map(Whole::Particles)
     } else {
-        text(value, faults).map(Ok)
+        text(value, faults).map(Whole::Collision)
     }
 }
