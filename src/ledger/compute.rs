@@ -211,7 +211,7 @@ fn collisions(solved: &Solved, from: &Viewing) -> Vec<CollisionRow> {
                 momentum: [after.px - before.px, after.py - before.py],
             },
             balanced: collision.balanced(),
-            tolerance: collision.tolerance_in(from.boost, &before, &after),
+            tolerance: collision.tolerance,
             root_s: collision.total_before.invariant_mass,
             q_value: q_value(solved, collision),
             going_in: names(&collision.before),

@@ -152,7 +152,7 @@ pub struct CollisionRow {
     pub difference: DifferenceRow,
     /// Within the tolerance.
     pub balanced: bool,
-    /// How far the components may differ.
+    /// How far the components may differ in the base frame; there it is decided whether they balance.
     pub tolerance: f64,
     /// Invariant mass before.
     pub root_s: f64,

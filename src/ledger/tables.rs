@@ -409,12 +409,11 @@ fn collision_notes(ledger: &Ledger, collision: &CollisionRow) -> Vec<String> {
         ("px", d.momentum[0]),
         ("py", d.momentum[1]),
     ];
-    let (kept, lost): (Vec<_>, Vec<_>) = parts
-        .into_iter()
-        .partition(|(_, off)| collision.balanced || off.abs() <= collision.tolerance);
+    let is_kept = |off: f64| collision.balanced || off.abs() <= collision.tolerance;
+    let (kept, lost): (Vec<_>, Vec<_>) = parts.into_iter().partition(|(_, off)| is_kept(*off));
     let names = |list: &[(&str, f64)]| list.iter().map(|p| p.0).collect::<Vec<_>>().join(", ");
     let mut notes = Vec::new();
-    if lost.is_empty() {
+    if collision.balanced {
         notes.push(format!(
             "{}: conserved (the same before and after): {}, within {allowed} {unit}.",
             collision.name,
@@ -426,7 +425,7 @@ fn collision_notes(ledger: &Ledger, collision: &CollisionRow) -> Vec<String> {
             .map(|(name, off)| format!("{name} by {}", significant(*off, 6)))
             .collect();
         notes.push(format!(
-            "{}: does not balance: {} {unit}, where {allowed} is allowed.",
+            "{}: does not balance: off {} {unit}, where the base frame allows {allowed}.",
             collision.name,
             off.join(", "),
         ));

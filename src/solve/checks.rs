@@ -25,11 +25,11 @@ pub(super) fn trims(solver: &mut Solver<'_>) {
             ),
         };
         let from = end(solver, &id, i, ("from", from));
-        let mut until = end(solver, &id, i, ("until", until));
+        let until = end(solver, &id, i, ("until", until));
         if let (Some((_, a)), Some((_, b))) = (&from, &until)
             && b.t() < a.t()
         {
-            let what = "it would end before it begins, so it runs on without end";
+            let what = "it ends before it begins";
             let finding = Fault::new(
                 id,
                 "until",
@@ -37,7 +37,6 @@ pub(super) fn trims(solver: &mut Solver<'_>) {
                 "exchange from and until, or name other events",
             );
             solver.faults.push(finding.finding());
-            until = None;
         }
         if let Some(line) = &mut solver.lines[i] {
             (line.from, line.until) = (from, until);

@@ -77,7 +77,6 @@ pub(super) fn solve(
         at: form.at.as_deref().map(Into::into),
         total_before,
         total_after,
-        typed_error,
         tolerance,
         label: object.common.label.clone(),
     };

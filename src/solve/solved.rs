@@ -111,10 +111,8 @@ pub struct SolvedCollision {
     pub total_before: Total,
     /// Sum after.
     pub total_after: Total,
-    /// How far half a last typed digit of each number moves the sums, energy units; 0 where a closure has found a
-    /// particle, since the balance then holds whatever was typed.
-    pub typed_error: f64,
-    /// How far E, px and py may differ, energy units, and still balance: rounding, and the typed error.
+    /// How far E, px and py may differ in the base frame, energy units, and still balance: rounding, and half a last
+    /// typed digit of each number where no closure has found a particle.
     pub tolerance: f64,
     /// Its label.
     pub label: Option<String>,

@@ -23,13 +23,6 @@ impl SolvedCollision {
         [a.energy - b.energy, a.px - b.px, a.py - b.py]
     }
 
-    /// The tolerance as a frame has it, from the sums seen there: a boost stretches an error of the base frame by at
-    /// most e to its rapidity.
-    pub fn tolerance_in(&self, boost: Boost, before: &Total, after: &Total) -> f64 {
-        let stretch = crate::num::exp(boost.rapidity().value().abs());
-        rounding(before, after) + self.typed_error * stretch
-    }
-
     /// Whether E, px and py agree within the tolerance.
     pub fn balanced(&self) -> bool {
         self.difference().iter().all(|d| d.abs() <= self.tolerance)

@@ -226,6 +226,43 @@ fn frame_and_rapidity_say_the_same() {
 }
 
 #[test]
+fn what_a_frame_cannot_see_is_said() {
+    let far = SMALL.replace("At(t: 1, x: \"1/4\")", "At(t: 1e149, x: 0)");
+    let (_folder, scene) = written(&far);
+    let ran = run(&["ledger", &scene, "--rapidity", "10"]);
+    assert_eq!(ran.code, 1);
+    assert!(
+        ran.err.contains("event here") && ran.err.contains("range"),
+        "{}",
+        ran.err
+    );
+}
+
+#[test]
+fn a_plate_with_nothing_to_draw_is_not_written() {
+    let across = SMALL.replace(
+        "Moving(velocity: Beta(\"3/5\"))",
+        "Moving(velocity: Beta(\"3/5\"), angle: 90)",
+    );
+    let (folder, scene) = written(&across);
+    let to = folder.path().join("f.png");
+    let args = [
+        "draw",
+        &scene,
+        "--panel",
+        "A",
+        "--frame",
+        "skiff",
+        "--to",
+        to.to_str().unwrap(),
+    ];
+    let ran = run(&args);
+    assert_eq!(ran.code, 2, "{}", ran.err);
+    assert!(ran.err.contains("takes a boost along x"), "{}", ran.err);
+    assert!(!to.exists());
+}
+
+#[test]
 fn the_ledger_as_text_has_units_in_its_heads() {
     let (_folder, scene) = written(SMALL);
     let ran = run(&["ledger", &scene]);

@@ -358,3 +358,45 @@ fn an_event_beyond_its_line_is_a_finding() {
         "{lines:?}"
     );
 }
+
+#[test]
+fn events_that_are_only_named_must_be_there() {
+    for (from, to, gone) in [
+        ("at: \"noon\"", "at: \"nowhere\"", "collision strike"),
+        ("until: \"noon\"", "until: \"nowhere\"", "line cart"),
+    ] {
+        let (fallen, lines) = fallen(from, to);
+        assert!(fallen.contains(gone), "{fallen:?}");
+        assert_eq!(lines.len(), 1, "{lines:?}");
+        assert!(lines[0].contains("no event named \"nowhere\""), "{lines:?}");
+    }
+}
+
+#[test]
+fn typed_digits_are_carried_through_a_closure() {
+    // 939.5 is typed to 0.05; what is merged carries that on to where it is checked.
+    let scene = |out: &str| {
+        format!(
+            r#"Scene(format: 1, base: "hall", units: (energy: "MeV"),
+    particles: {{
+        "a": (mass: "939.5", state: AtRest),
+        "b": (mass: "1.0", state: AtRest),
+        "ab": (state: Closing),
+        "out": (mass: "{out}", state: AtRest),
+    }},
+    collisions: {{
+        "merge": (before: ["a", "b"], after: ["ab"], closure: Merge),
+        "check": (before: ["ab"], after: ["out"], closure: Given),
+    }},
+)"#
+        )
+    };
+    assert_eq!(audit(&scene("940.6")).0, 0);
+    assert_eq!(audit(&scene("940.7")).0, 1);
+}
+
+#[test]
+fn a_species_of_the_scene_is_at_fault_itself() {
+    let (_, lines) = fallen("mass: \"620 MeV\"", "mass: \"620 ns\"");
+    assert!(lines[0].contains("species Q"), "{lines:?}");
+}

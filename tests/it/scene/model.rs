@@ -6,7 +6,7 @@ use conewright::quantity::Typed;
 use conewright::scene::{
     Arrows, Closure, Collision, Common, Event, Frame, FramePart, Line, LineOrParticle, List,
     Object, Panel, Particle, Plate, Range, Scene, SpeciesEntry, State, TimeAxis, Toward, Units,
-    Velocity, View, When, read,
+    Velocity, View, When, Whole, read,
 };
 use proptest::prelude::*;
 
@@ -151,7 +151,7 @@ fn relay() -> Scene {
         line: "courier".to_owned(),
         at: Some("turn".to_owned()),
     };
-    let of = Ok("strike".to_owned());
+    let of = Whole::Collision("strike".to_owned());
     Scene {
         format: 1,
         title: "Relay and courier".to_owned(),
@@ -352,7 +352,7 @@ fn the_other_forms_read() {
         when: When::Frame("g".to_owned()),
     };
     assert_eq!(scene.frames["f"].form.part, moving);
-    let of = Err(names(&["x", "y"]));
+    let of = Whole::Particles(names(&["x", "y"]));
     assert_eq!(
         scene.frames["i"].form.part,
         FramePart::CentreOfMomentum { of }
