@@ -112,7 +112,7 @@ fn sane(id: &ObjectId, form: &Collision) -> Result<(), Spoiled> {
 fn closing(solver: &Solver<'_>, form: &Collision, index: usize) -> Option<(usize, String)> {
     form.before.iter().chain(&form.after).find_map(|name| {
         let particle = solver.scene.particles.get_index_of(name.as_str())?;
-        (solver.closers[particle] == Some(index)).then(|| (particle, name.clone()))
+        (solver.closers[particle].by == Some(index)).then(|| (particle, name.clone()))
     })
 }
 

@@ -64,7 +64,7 @@ impl Order {
     }
 
     /// Orders the objects of a scene. `closers` gives the collision that closes each particle, where one does.
-    pub(super) fn of(scene: &Scene, closers: &[Option<usize>], unread: &[ObjectId]) -> Self {
+    pub(super) fn of(scene: &Scene, closers: &[Closer], unread: &[ObjectId]) -> Self {
         let counts = KINDS.map(|k| count(scene, k));
         let mut starts = [0; 6];
         for k in 0..KINDS.len() {
@@ -77,7 +77,7 @@ impl Order {
             starts,
             faults: Vec::new(),
         };
-        let unread: BTreeSet<&ObjectId> = unread.iter().collect();
+        let all_unread: BTreeSet<&ObjectId> = unread.iter().collect();
         for number in 0..order.needs.len() {
             let node = order.node(number);
             let mut references = Vec::new();
@@ -85,11 +85,12 @@ impl Order {
                 references.push((kind, name.to_owned(), field.to_owned()));
             });
             for (kind, name, field) in references {
-                order.follow(scene, node, &unread, (kind, &name, &field));
+                order.follow(scene, node, &all_unread, (kind, &name, &field));
             }
             for (field, name) in places_named(scene, node) {
-                if index_of(scene, Kind::Event, name).is_none() {
-                    order.follow(scene, node, &unread, (Kind::Event, name, field));
+                let is_unread = all_unread.contains(&ObjectId::new(Kind::Event, name));
+                if !is_unread && index_of(scene, Kind::Event, name).is_none() {
+                    order.follow(scene, node, &all_unread, (Kind::Event, name, field));
                 }
             }
         }
@@ -115,8 +116,13 @@ impl Order {
             return;
         }
         let object = id_of(scene, node);
-        self.faults
-            .push(missing(object, field, kind, name, names(scene, kind)));
+        let count = if self.faults.len() < SUGGESTED {
+            MOST_KNOWN
+        } else {
+            0
+        };
+        let known = names(scene, kind).take(count);
+        self.faults.push(missing(object, field, kind, name, known));
     }
 
     /// Kahn's order; what remains hangs on a cycle.
@@ -281,7 +287,7 @@ pub(super) fn id_of(scene: &Scene, node: Node) -> ObjectId {
 type Sink<'a> = &'a mut dyn FnMut(Kind, &str, &str);
 
 /// Every name a node depends on: kind, name, field.
-fn collect(scene: &Scene, node: Node, closers: &[Option<usize>], sink: Sink<'_>) {
+fn collect(scene: &Scene, node: Node, closers: &[Closer], sink: Sink<'_>) {
     let index = node.index;
     match node.kind {
         Kind::Event => scene
@@ -300,7 +306,9 @@ fn collect(scene: &Scene, node: Node, closers: &[Option<usize>], sink: Sink<'_>)
             .into_iter()
             .for_each(|(_, o)| {
                 frame_name(scene, &o.form.when, sink);
-                if let Some((name, _)) = closers[index].and_then(|c| scene.collisions.get_index(c))
+                if let Some((name, _)) = closers[index]
+                    .by
+                    .and_then(|c| scene.collisions.get_index(c))
                 {
                     sink(Kind::Collision, name, "state");
                 }
@@ -417,7 +425,7 @@ fn line(scene: &Scene, form: &Line, sink: Sink<'_>) {
 }
 
 /// A collision depends on all its particles but the one it closes.
-fn collision(scene: &Scene, index: usize, closers: &[Option<usize>], sink: Sink<'_>) {
+fn collision(scene: &Scene, index: usize, closers: &[Closer], sink: Sink<'_>) {
     let Some((_, object)) = scene.collisions.get_index(index) else {
         return;
     };
@@ -429,7 +437,7 @@ fn collision(scene: &Scene, index: usize, closers: &[Option<usize>], sink: Sink<
             let closes = scene
                 .particles
                 .get_index_of(name.as_str())
-                .is_some_and(|p| closers[p] == Some(index));
+                .is_some_and(|p| closers[p].by == Some(index));
             if !closes {
                 sink(Kind::Particle, name, &format!("{side}.{i}"));
             }
@@ -465,10 +473,19 @@ fn frame(scene: &Scene, part: &FramePart, sink: Sink<'_>) {
     }
 }
 
+/// What collisions have to do with a particle that is Closing.
+#[derive(Clone, Copy, Debug, Default, PartialEq, Eq)]
+pub(super) struct Closer {
+    /// The collision that finds it.
+    pub(super) by: Option<usize>,
+    /// The first one that names it.
+    pub(super) first: Option<usize>,
+}
+
 /// Which collision closes each closing particle: a collision whose rule can close one thing and that has exactly one
 /// particle still unknown closes it, again and again, in the scene's order.
-pub(super) fn closers(scene: &Scene) -> Vec<Option<usize>> {
-    let mut closed_by = vec![None; scene.particles.len()];
+pub(super) fn closers(scene: &Scene) -> Vec<Closer> {
+    let mut closers = vec![Closer::default(); scene.particles.len()];
     let unknown = |p: usize| {
         scene
             .particles
@@ -487,6 +504,7 @@ pub(super) fn closers(scene: &Scene) -> Vec<Option<usize>> {
             {
                 set.insert(p);
                 users[p].push(c);
+                closers[p].first = closers[p].first.or(Some(c));
             }
         }
         open.push(set);
@@ -502,7 +520,7 @@ pub(super) fn closers(scene: &Scene) -> Vec<Option<usize>> {
         .collect();
     while let Some(c) = ready.pop_first() {
         let Some(&p) = open[c].first() else { continue };
-        closed_by[p] = Some(c);
+        closers[p].by = Some(c);
         for &user in &users[p] {
             open[user].remove(&p);
             if open[user].len() == 1 && can_close(user) {
@@ -512,5 +530,5 @@ pub(super) fn closers(scene: &Scene) -> Vec<Option<usize>> {
             }
         }
     }
-    closed_by
+    closers
 }

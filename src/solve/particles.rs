@@ -91,13 +91,9 @@ pub(super) fn species_faults(solver: &Solver<'_>) -> Vec<Fault> {
 
 /// A closing particle that no collision closes.
 fn unclosed(solver: &Solver<'_>, id: &ObjectId) -> Spoiled {
-    let holding = solver.scene.collisions.iter().find(|(_, c)| {
-        c.form
-            .before
-            .iter()
-            .chain(&c.form.after)
-            .any(|name| **name == *id.name)
-    });
+    let index = solver.scene.particles.get_index_of(&id.name);
+    let first = index.and_then(|i| solver.closers[i].first);
+    let holding = first.and_then(|c| solver.scene.collisions.get_index(c));
     let Some((name, collision)) = holding else {
         return fault(
             id,
@@ -112,7 +108,7 @@ fn unclosed(solver: &Solver<'_>, id: &ObjectId) -> Spoiled {
         .iter()
         .chain(&form.after)
         .filter_map(|name| solver.scene.particles.get_full(name.as_str()))
-        .filter(|(i, _, p)| p.form.state == State::Closing && solver.closers[*i].is_none())
+        .filter(|(i, _, p)| p.form.state == State::Closing && solver.closers[*i].by.is_none())
         .map(|(_, name, _)| &**name)
         .collect();
     let what = if form.closure == Closure::Given {

@@ -67,7 +67,7 @@ pub(super) type Spoiled = Option<Box<Fault>>;
 pub(super) struct Solver<'a> {
     pub(super) scene: &'a Scene,
     pub(super) units: ReadUnits,
-    pub(super) closers: Vec<Option<usize>>,
+    pub(super) closers: Vec<graph::Closer>,
     pub(super) events: Vec<Option<SolvedEvent>>,
     pub(super) lines: Vec<Option<SolvedLine>>,
     pub(super) particles: Vec<Option<SolvedParticle>>,

@@ -203,7 +203,7 @@ fn a_character_within_a_raw_string_is_found() {
 #[test]
 fn a_label_whose_backslash_was_eaten_is_pointed_at() {
     let text = with("events: { \"a\": At(t: 0, x: 0, label: \"\\tau\") }");
-    let reading = conewright::scene::read(&text).unwrap();
+    let reading = read(&text).unwrap();
     let [fault] = &reading.faults[..] else {
         panic!("{:?}", reading.faults)
     };
