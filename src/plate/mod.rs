@@ -24,6 +24,8 @@ mod whole;
 mod window;
 mod words;
 
+use std::collections::BTreeSet;
+
 use kurbo::{Affine, Point, Rect, Size};
 
 use self::canvas::{Canvas, Rank, Seek, Wish};
@@ -117,6 +119,11 @@ impl Contents {
 pub fn lay_out(solved: &Solved, name: &str, plate: &Plate, change: &Override) -> Laid {
     let mut job = Job {
         solved,
+        left_out: solved
+            .left_out
+            .iter()
+            .map(|id| (id.kind, &*id.name))
+            .collect(),
         plate: ObjectId::new(Kind::Plate, name),
         style: Style::new(USUAL_TEXT),
         names: Names::default(),
@@ -194,15 +201,16 @@ pub fn everything(solved: &Solved) -> Plate {
 }
 
 fn inks(solved: &Solved, plate: &Plate) -> Inks {
-    Inks::of(solved, |name| {
-        plate.panels.iter().any(|panel| match panel.view {
-            View::Spacetime => panel
-                .lines
-                .as_ref()
-                .is_none_or(|list| list.iter().any(|n| n == name)),
-            View::EnergyMomentum => false,
-        })
-    })
+    let mut named = BTreeSet::new();
+    let mut has_all = false;
+    for panel in &plate.panels {
+        match (panel.view, &panel.lines) {
+            (View::Spacetime, Some(list)) => named.extend(list.iter().map(String::as_str)),
+            (View::Spacetime, None) => has_all = true,
+            (View::EnergyMomentum, _) => {}
+        }
+    }
+    Inks::of(solved, |name| has_all || named.contains(name))
 }
 
 fn text_size(job: &mut Job<'_>, plate: &Plate) -> f64 {

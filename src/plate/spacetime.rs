@@ -236,7 +236,7 @@ fn events(
     panel: &Panel,
     from: &Viewing,
 ) -> Vec<(ObjectId, Point)> {
-    let known = job.solved.events.keys().cloned().collect();
+    let known = &job.solved.events;
     let field = format!("panels.{index}.events");
     let names = job.chosen(panel.events.as_deref(), Kind::Event, &field, known);
     points(job, names, from)
@@ -274,13 +274,13 @@ fn named_points(
     field: &str,
     from: &Viewing,
 ) -> Vec<(ObjectId, Point)> {
-    let known = job.solved.events.keys().cloned().collect();
+    let known = &job.solved.events;
     let names = job.chosen(Some(names), Kind::Event, field, known);
     points(job, names, from)
 }
 
 fn tracks(job: &mut Job<'_>, index: usize, panel: &Panel, from: &Viewing) -> Vec<Track> {
-    let known = job.solved.lines.keys().cloned().collect();
+    let known = &job.solved.lines;
     let names = job.chosen(
         panel.lines.as_deref(),
         Kind::Line,
