@@ -211,22 +211,32 @@ impl Job<'_> {
         let plate = self.plate.clone();
         let panel = format!("panels.{index}");
         for (rank, blame) in missing {
-            let fault = match (rank, blame) {
-                (Rank::Title, _) => Fault::new(
+            let is_title = match rank {
+                Rank::Title => true,
+                Rank::Number
+                | Rank::Symbol
+                | Rank::Event
+                | Rank::Name
+                | Rank::Curve
+                | Rank::Word => false,
+            };
+            let wider = "make the panel wider, or show less";
+            let fault = match blame {
+                _ if is_title => Fault::new(
                     plate.clone(),
                     &panel,
                     format!("an axis' title has no free place on panel {letter}"),
-                    "make the panel wider, or show less",
+                    wider,
                 ),
-                (_, Some(object)) if object.kind == Kind::Plate => Fault::new(
+                Some(object) if object.kind == Kind::Plate => Fault::new(
                     plate.clone(),
                     &panel,
                     format!(
                         "the words of an axis, a curve or a line of simultaneity have no free place on panel {letter}"
                     ),
-                    "make the panel wider, or show less",
+                    wider,
                 ),
-                (_, Some(object)) => Fault::new(
+                Some(object) => Fault::new(
                     object,
                     "label",
                     format!(
@@ -235,7 +245,7 @@ impl Job<'_> {
                     ),
                     "make the panel wider, show less, or choose a shorter label",
                 ),
-                (_, None) => continue,
+                None => continue,
             };
             self.names.fault(fault.remark());
         }
