@@ -198,7 +198,7 @@ impl Places {
                     if beyond(piece, rect, least) {
                         continue;
                     }
-                    least = least.min(distance(piece, rect) - piece.half);
+                    least = least.min(between(piece.a, piece.b, rect) - piece.half);
                     if least <= 0.0 {
                         return 0.0;
                     }
@@ -342,9 +342,8 @@ fn cross(a: Point, b: Point, p: Point, q: Point) -> bool {
     side(a, b, p) * side(a, b, q) < 0.0 && side(p, q, a) * side(p, q, b) < 0.0
 }
 
-/// From a segment's middle line to a box; 0 where they meet.
-fn distance(piece: &Piece, r: Rect) -> f64 {
-    let (a, b) = (piece.a, piece.b);
+/// From a segment to a box; 0 where they meet.
+pub(super) fn between(a: Point, b: Point, r: Rect) -> f64 {
     if super::clip::span(a, b - a, (0.0, 1.0), r).is_some() {
         return 0.0;
     }

@@ -222,7 +222,7 @@ impl Style {
             clear_ink: 0.45 * k,
             clear_label: 0.9 * k,
             clear_edge: 0.1 * k,
-            letter: [1.45 * k, 0.2 * k, 4.0 * k],
+            letter: [1.45 * k, 0.2 * k, 6.0 * k],
             name: [1.2 * k, 1.7 * k, 4.2 * k],
             name_below_end: 2.8 * k,
             name_step: 1.6 * k,
