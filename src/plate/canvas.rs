@@ -337,10 +337,11 @@ impl<'a> Canvas<'a> {
     fn around(&self, p: Point, size: Vec2) -> Option<Rect> {
         let [nearest, step, farthest] = self.style.letter;
         let strokes = self.places.strokes_through(p, self.style.event);
-        let turn = |w: usize| std::f64::consts::TAU * w as f64 / WAYS as f64;
+        let turn = |w: usize| TAU * w as f64 / WAYS as f64;
         let ways: Vec<(Vec2, f64)> = (0..WAYS)
-            .map(|w| {
-                let angle = turn(w);
+            .map(turn)
+            .chain(between(&strokes))
+            .map(|angle| {
                 let away = strokes
                     .iter()
                     .map(|d| apart(angle, *d))
@@ -393,10 +394,30 @@ const TIE: f64 = 0.05;
 /// What the worst direction costs, ems.
 const ORDER_WORTH: f64 = 0.6;
 
+/// The directions half-way between neighbours of some, in order.
+fn between(strokes: &[f64]) -> Vec<f64> {
+    let mut sorted: Vec<f64> = strokes.iter().map(|angle| angle.rem_euclid(TAU)).collect();
+    sorted.sort_by(f64::total_cmp);
+    sorted.dedup_by(|a, b| *a - *b < SAME_WAY);
+    let next = sorted.iter().cycle().skip(1);
+    sorted
+        .iter()
+        .zip(next)
+        .map(|(&a, &b)| a + (b - a).rem_euclid(TAU) / 2.0)
+        .take(MOST_BETWEEN)
+        .collect()
+}
+
+/// Strokes that differ by less leave in one direction.
+const SAME_WAY: f64 = 0.01;
+/// Most directions between strokes that are tried.
+const MOST_BETWEEN: usize = 24;
+const TAU: f64 = std::f64::consts::TAU;
+
 /// The angle between two directions, at most pi.
 fn apart(a: f64, b: f64) -> f64 {
-    let turn = (a - b).rem_euclid(std::f64::consts::TAU);
-    turn.min(std::f64::consts::TAU - turn)
+    let turn = (a - b).rem_euclid(TAU);
+    turn.min(TAU - turn)
 }
 
 fn cubic_at([a, b, c, d]: [Point; 4], w: f64) -> Point {

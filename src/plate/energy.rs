@@ -2,7 +2,7 @@
 
 use std::sync::Arc;
 
-use kurbo::{Point, Rect, Vec2};
+use kurbo::{BezPath, Line, PathEl, Point, Rect, Vec2};
 
 use super::arrow::{Form, arrow};
 use super::axes::{Axes, Axis, wish};
@@ -13,10 +13,11 @@ use super::curve::{Branch, Hyperbola};
 use super::fit::Wanted;
 use super::job::{Job, letter};
 use super::names::number;
-use super::place::Candidate;
+use super::place::{Candidate, between};
 use super::spacetime::{primed, primes_of};
 use super::style::{CLARET, CURVE_TOLERANCE, GUIDE, INK, OCHRE, TEAL};
 use super::vectors::{Sum, Vector, of_collision, of_particles};
+use super::window::Window;
 use super::words::kind;
 use crate::fault::{Fault, Kind};
 use crate::label::Label;
@@ -293,6 +294,7 @@ impl Energy {
                 .math(&format!(r"{symbol}\,{{=}}\,{value}\,{unit}"));
             let places = along_shell(canvas, sum.mass, sum.tip.x);
             let candidates = beside(canvas, &label, &places, Side::Below, pen.1 / 2.0);
+            let candidates = nearest_to_own(canvas, sum.mass, &self.masses(), candidates);
             wish(
                 canvas,
                 Rank::Curve,
@@ -318,20 +320,37 @@ impl Energy {
         })
     }
 
-    /// Shells of the particles whose arrows start at the origin, each mass once.
-    fn shells(&self, job: &mut Job<'_>, canvas: &mut Canvas<'_>) {
-        let mut seen: Vec<f64> = Vec::new();
-        for vector in self.vectors.iter().filter(|v| v.tail == Point::ORIGIN) {
-            let mass = vector.transverse_mass;
-            let is_known = seen.iter().any(|m| (m - mass).abs() <= SAME_MASS * mass)
-                || self
+    /// The particles whose shells are drawn: those whose arrows start at the origin, each mass once.
+    fn shelled(&self) -> Vec<&Vector> {
+        let mut found: Vec<&Vector> = self
+            .vectors
+            .iter()
+            .filter(|v| v.tail == Point::ORIGIN && v.transverse_mass > 0.0)
+            .filter(|v| {
+                !self
                     .sum
                     .as_ref()
-                    .is_some_and(|sum| (sum.mass - mass).abs() <= SAME_MASS * mass);
-            if mass <= 0.0 || is_known {
-                continue;
-            }
-            seen.push(mass);
+                    .is_some_and(|s| is_same(s.mass, v.transverse_mass))
+            })
+            .collect();
+        found.sort_by(|a, b| a.transverse_mass.total_cmp(&b.transverse_mass));
+        found.dedup_by(|b, a| is_same(a.transverse_mass, b.transverse_mass));
+        found
+    }
+
+    /// The masses of all shells.
+    fn masses(&self) -> Vec<f64> {
+        let own = self.shelled().into_iter().map(|v| v.transverse_mass);
+        let mut found: Vec<f64> = own.chain(self.sum.iter().map(|s| s.mass)).collect();
+        found.sort_by(f64::total_cmp);
+        found
+    }
+
+    /// Shells of the particles.
+    fn shells(&self, job: &mut Job<'_>, canvas: &mut Canvas<'_>) {
+        let masses = self.masses();
+        for vector in self.shelled() {
+            let mass = vector.transverse_mass;
             let group = canvas.group(&format!("shell of {}", vector.object));
             shell(canvas, group, mass, (GUIDE, canvas.style.stroke.fine));
             if mass * canvas.window.scale() < canvas.style.name[0] {
@@ -341,6 +360,7 @@ impl Energy {
             let label = job.names.math(&shell_label(job.solved, vector));
             let places = along_shell(canvas, mass, 0.0);
             let candidates = beside(canvas, &label, &places, Side::Above, 0.0);
+            let candidates = nearest_to_own(canvas, mass, &masses, candidates);
             let blame = (!canvas.style.is_large()).then(|| vector.object.clone());
             wish(
                 canvas,
@@ -432,15 +452,74 @@ fn light(job: &mut Job<'_>, canvas: &mut Canvas<'_>) {
 /// Draws a mass shell.
 fn shell(canvas: &mut Canvas<'_>, group: usize, mass: f64, pen: (Ink, f64)) {
     let window = canvas.window;
+    for path in shell_paths(window, mass) {
+        canvas.stroke(Layer::Curve, group, path, pen, Vec::new());
+    }
+}
+
+/// A mass shell's parts inside the field, mm.
+fn shell_paths(window: Window, mass: f64) -> Vec<BezPath> {
     let curve = Hyperbola {
         centre: Point::ORIGIN,
         size: mass,
         branch: Branch::Up,
     };
-    for part in curve.inside(window.plane) {
-        let path = window.path(&curve.path(part, CURVE_TOLERANCE / window.scale()));
-        canvas.stroke(Layer::Curve, group, path, pen, Vec::new());
+    curve
+        .inside(window.plane)
+        .into_iter()
+        .map(|part| window.path(&curve.path(part, CURVE_TOLERANCE / window.scale())))
+        .collect()
+}
+
+/// Those places of a shell's label that are nearer to it than to the shells next to it.
+fn nearest_to_own(
+    canvas: &Canvas<'_>,
+    mass: f64,
+    masses: &[f64],
+    candidates: Vec<Candidate>,
+) -> Vec<Candidate> {
+    let lines = |mass: f64| -> Vec<Line> {
+        let mut found = Vec::new();
+        for path in shell_paths(canvas.window, mass) {
+            let mut last = Point::ORIGIN;
+            kurbo::flatten(path, SHELL_FLATNESS, |element| match element {
+                PathEl::LineTo(p) => found.push(Line::new(std::mem::replace(&mut last, p), p)),
+                PathEl::MoveTo(p) | PathEl::QuadTo(_, p) | PathEl::CurveTo(_, _, p) => last = p,
+                PathEl::ClosePath => {}
+            });
+        }
+        found
+    };
+    let below = masses
+        .iter()
+        .rev()
+        .find(|m| **m < mass && !is_same(**m, mass));
+    let above = masses.iter().find(|m| **m > mass && !is_same(**m, mass));
+    let others: Vec<Line> = below
+        .into_iter()
+        .chain(above)
+        .flat_map(|m| lines(*m))
+        .collect();
+    if others.is_empty() {
+        return candidates;
     }
+    let own = lines(mass);
+    let far = |lines: &[Line], c: &Candidate| {
+        let off = lines.iter().map(|line| between(line.p0, line.p1, c.rect));
+        off.fold(f64::INFINITY, f64::min)
+    };
+    candidates
+        .into_iter()
+        .filter(|c| far(&own, c) < far(&others, c))
+        .collect()
+}
+
+/// How closely shells are taken as chords to compare distances, mm.
+const SHELL_FLATNESS: f64 = 0.01;
+
+/// Whether two masses have one shell.
+fn is_same(a: f64, b: f64) -> bool {
+    (a - b).abs() <= SAME_MASS * a
 }
 
 /// Spots along a shell inside the field, those nearest to some momentum first.

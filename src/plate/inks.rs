@@ -13,11 +13,23 @@ use crate::solve::{Solved, SolvedLine};
 #[derive(Clone, Debug, Default)]
 pub(super) struct Inks {
     lines: BTreeMap<Arc<str>, (Ink, usize)>,
-    /// Rapidities met, with their inks, in order.
-    rapidities: Vec<(f64, Ink)>,
+    /// Inks of the rapidities met.
+    rapidities: BTreeMap<Order, Ink>,
     owners: usize,
     /// Frames that are not the base, in order of appearance.
-    primed: Vec<(f64, String)>,
+    primed: BTreeMap<(Order, String), usize>,
+}
+
+/// Bits that stand in the order of the numbers they are of.
+type Order = u64;
+
+fn order(value: f64) -> Order {
+    let bits = value.to_bits();
+    if value.is_sign_negative() {
+        !bits
+    } else {
+        bits | 1 << 63
+    }
 }
 
 /// Rapidities closer than this are one.
@@ -44,7 +56,7 @@ impl Inks {
                 } = leg
                     && inks.known(rapidity.value()).is_none()
                 {
-                    inks.rapidities.push((rapidity.value(), ink));
+                    inks.rapidities.insert(order(rapidity.value()), ink);
                 }
             }
             let count = used.entry(ink).or_insert(0);
@@ -61,9 +73,9 @@ impl Inks {
 
     fn known(&self, rapidity: f64) -> Option<Ink> {
         self.rapidities
-            .iter()
-            .find(|r| (r.0 - rapidity).abs() <= SAME)
-            .map(|r| r.1)
+            .range(order(rapidity - SAME)..=order(rapidity + SAME))
+            .next()
+            .map(|(_, ink)| *ink)
     }
 
     /// A line's ink and dash.
@@ -86,7 +98,7 @@ impl Inks {
         }
         self.known(rapidity).unwrap_or_else(|| {
             let ink = self.next_owner();
-            self.rapidities.push((rapidity, ink));
+            self.rapidities.insert(order(rapidity), ink);
             ink
         })
     }
@@ -96,12 +108,9 @@ impl Inks {
         if is_base {
             return 0;
         }
-        let key = (rapidity.value(), name.to_owned());
-        let found = self.primed.iter().position(|known| *known == key);
-        1 + found.unwrap_or_else(|| {
-            self.primed.push(key);
-            self.primed.len() - 1
-        })
+        let next = self.primed.len() + 1;
+        let key = (order(rapidity.value()), name.to_owned());
+        *self.primed.entry(key).or_insert(next)
     }
 }
 

@@ -1,7 +1,9 @@
 //! What the panels of one plate share: the solved scene, the style, labels, inks, groups, faults.
 
+use std::collections::BTreeSet;
 use std::sync::Arc;
 
+use indexmap::IndexMap;
 use kurbo::Point;
 
 use super::canvas::{Canvas, Rank};
@@ -12,12 +14,14 @@ use super::window::Groups;
 use crate::fault::{Fault, Kind, ObjectId, nearest};
 use crate::geometry::{Boost, Displacement, Leg, Rapidity};
 use crate::quantity::{Dimension, Typed, Unit, read};
-use crate::solve::{Solved, Viewing};
+use crate::solve::{Solved, SolvedLine, Viewing};
 
 /// One plate being laid out.
 #[derive(Debug)]
 pub(super) struct Job<'a> {
     pub(super) solved: &'a Solved,
+    /// What is left out for a fault of its own or of what it hangs on.
+    pub(super) left_out: BTreeSet<(Kind, &'a str)>,
     pub(super) plate: ObjectId,
     pub(super) style: Style,
     pub(super) names: Names,
@@ -65,28 +69,31 @@ impl Job<'_> {
 
     /// True where an object is left out for a fault of its own or of what it hangs on.
     pub(super) fn is_left_out(&self, kind: Kind, name: &str) -> bool {
-        self.solved
-            .left_out
-            .iter()
-            .any(|id| id.kind == kind && *id.name == *name)
+        self.left_out.contains(&(kind, name))
     }
 
-    /// The names of a panel's list that are sound, or all of them. A name that nothing has is a fault.
-    pub(super) fn chosen(
+    /// The names of a panel's list that are sound, each once, or all of them. A name that nothing has is a fault.
+    pub(super) fn chosen<T>(
         &mut self,
         list: Option<&[String]>,
         kind: Kind,
         field: &str,
-        known: Vec<Arc<str>>,
+        known: &IndexMap<Arc<str>, T>,
     ) -> Vec<Arc<str>> {
-        let Some(list) = list else { return known };
+        let Some(list) = list else {
+            return known.keys().cloned().collect();
+        };
         let mut found = Vec::new();
+        let mut taken = BTreeSet::new();
         for (i, name) in list.iter().enumerate() {
-            match known.iter().find(|k| ***k == **name) {
-                Some(name) if !found.contains(name) => found.push(name.clone()),
+            match known.get_key_value(name.as_str()) {
+                Some((name, _)) if taken.insert(name) => found.push(name.clone()),
                 Some(_) => {}
                 None if self.is_left_out(kind, name) => {}
-                None => self.unknown(kind.word(), name, &format!("{field}.{i}"), &known),
+                None => {
+                    let known: Vec<Arc<str>> = known.keys().cloned().collect();
+                    self.unknown(kind.word(), name, &format!("{field}.{i}"), &known);
+                }
             }
         }
         found
@@ -173,35 +180,17 @@ impl Job<'_> {
             });
         }
         if let Some(line) = solved.lines.get(name) {
-            let object = ObjectId::new(Kind::Line, name);
-            let zero = line.world.at_clock(0.0).ok();
-            let leg = zero.map(|origin| (origin, line.world.leg_at(origin)));
-            let Some((
-                origin,
-                Leg::Free {
-                    rapidity,
-                    across: _,
-                },
-            )) = leg
-            else {
-                self.fault(
-                    field,
-                    format!("line {name} is light, which has no axes"),
-                    "name a frame or a clock's line",
-                );
-                return None;
+            return match rest_frame(name, line) {
+                Ok(view) => Some(Observer {
+                    object: ObjectId::new(Kind::Line, name),
+                    view,
+                    is_base: false,
+                }),
+                Err((what, mend)) => {
+                    self.fault(field, what, mend);
+                    None
+                }
             };
-            let view = Viewing {
-                origin,
-                origin_exact: None,
-                name: None,
-                boost: Boost::along_x(rapidity),
-            };
-            return Some(Observer {
-                object,
-                view,
-                is_base: false,
-            });
         }
         if !self.is_left_out(Kind::Frame, name) && !self.is_left_out(Kind::Line, name) {
             let known: Vec<Arc<str>> = solved
@@ -222,22 +211,32 @@ impl Job<'_> {
         let plate = self.plate.clone();
         let panel = format!("panels.{index}");
         for (rank, blame) in missing {
-            let fault = match (rank, blame) {
-                (Rank::Title, _) => Fault::new(
+            let is_title = match rank {
+                Rank::Title => true,
+                Rank::Number
+                | Rank::Symbol
+                | Rank::Event
+                | Rank::Name
+                | Rank::Curve
+                | Rank::Word => false,
+            };
+            let wider = "make the panel wider, or show less";
+            let fault = match blame {
+                _ if is_title => Fault::new(
                     plate.clone(),
                     &panel,
                     format!("an axis' title has no free place on panel {letter}"),
-                    "make the panel wider, or show less",
+                    wider,
                 ),
-                (_, Some(object)) if object.kind == Kind::Plate => Fault::new(
+                Some(object) if object.kind == Kind::Plate => Fault::new(
                     plate.clone(),
                     &panel,
                     format!(
                         "the words of an axis, a curve or a line of simultaneity have no free place on panel {letter}"
                     ),
-                    "make the panel wider, or show less",
+                    wider,
                 ),
-                (_, Some(object)) => Fault::new(
+                Some(object) => Fault::new(
                     object,
                     "label",
                     format!(
@@ -246,7 +245,7 @@ impl Job<'_> {
                     ),
                     "make the panel wider, show less, or choose a shorter label",
                 ),
-                (_, None) => continue,
+                None => continue,
             };
             self.names.fault(fault.remark());
         }
@@ -258,6 +257,49 @@ impl Job<'_> {
         let label = self.names.word(text);
         canvas.remark(group, label);
     }
+}
+
+/// The frame in which a line is at rest, its origin where the line's clock reads 0; else why there is none that a
+/// spacetime panel can show, and what would mend it.
+fn rest_frame(name: &str, line: &SolvedLine) -> Result<Viewing, (String, String)> {
+    let rapidity = match line.world.legs() {
+        [
+            Leg::Free {
+                rapidity,
+                across: 0.0,
+            },
+        ] => *rapidity,
+        [Leg::Free { .. }] => {
+            return Err((
+                format!("line {name} also moves across x; a spacetime panel shows boosts along x"),
+                "name a frame or a line that moves along x alone".to_owned(),
+            ));
+        }
+        [Leg::Light(_)] => {
+            return Err((
+                format!("line {name} is light, which has no axes"),
+                "name a frame or a clock's line".to_owned(),
+            ));
+        }
+        _ => {
+            return Err((
+                format!("line {name} bends, so it is at rest in no one frame"),
+                format!("name a frame RestOf(line: \"{name}\", at: ..) that says where"),
+            ));
+        }
+    };
+    let origin = line.world.at_clock(0.0).map_err(|_range| {
+        (
+            format!("the event where the clock of line {name} reads 0 is too far off"),
+            format!("name a frame RestOf(line: \"{name}\", origin: ..)"),
+        )
+    })?;
+    Ok(Viewing {
+        origin,
+        origin_exact: None,
+        name: None,
+        boost: Boost::along_x(rapidity),
+    })
 }
 
 /// The least width of a range relative to its bounds.

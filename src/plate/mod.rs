@@ -24,6 +24,8 @@ mod whole;
 mod window;
 mod words;
 
+use std::collections::BTreeSet;
+
 use kurbo::{Affine, Point, Rect, Size};
 
 use self::canvas::{Canvas, Rank, Seek, Wish};
@@ -34,7 +36,9 @@ use self::job::{Job, letter, paper};
 use self::names::Names;
 use self::place::Candidate;
 use self::spacetime::Spacetime;
-use self::style::{COLUMN, INK, LARGEST, SMALLEST_FIELD, Style, TEXT_RANGE, USUAL_TEXT};
+use self::style::{
+    COLUMN, INK, LARGEST, MOST_PANELS, SMALLEST_FIELD, Style, TEXT_RANGE, USUAL_TEXT,
+};
 use self::window::{Groups, Window};
 use crate::fault::{Fault, Kind, ObjectId};
 use crate::marks::{Mark, Sheet};
@@ -117,6 +121,11 @@ impl Contents {
 pub fn lay_out(solved: &Solved, name: &str, plate: &Plate, change: &Override) -> Laid {
     let mut job = Job {
         solved,
+        left_out: solved
+            .left_out
+            .iter()
+            .map(|id| (id.kind, &*id.name))
+            .collect(),
         plate: ObjectId::new(Kind::Plate, name),
         style: Style::new(USUAL_TEXT),
         names: Names::default(),
@@ -124,10 +133,10 @@ pub fn lay_out(solved: &Solved, name: &str, plate: &Plate, change: &Override) ->
         groups: Groups::default(),
     };
     job.style = Style::new(text_size(&mut job, plate));
-    let count = plate.panels.len().max(1);
+    let own_panels = panels_of(&mut job, plate);
+    let count = own_panels.len().max(1);
     let slot = slot_width(&mut job, plate, count);
-    let prepared: Vec<Prepared> = plate
-        .panels
+    let prepared: Vec<Prepared> = own_panels
         .iter()
         .enumerate()
         .filter(|(index, _)| change.only.is_none_or(|only| only == *index))
@@ -193,16 +202,40 @@ pub fn everything(solved: &Solved) -> Plate {
     }
 }
 
+/// A plate's panels, as many as there are letters for.
+fn panels_of<'p>(job: &mut Job<'_>, plate: &'p Plate) -> &'p [Panel] {
+    let panels = &plate.panels;
+    if panels.is_empty() {
+        job.fault(
+            "panels",
+            "the plate has no panels",
+            "give it one, such as (view: Spacetime)",
+        );
+    }
+    if panels.len() > MOST_PANELS {
+        job.fault(
+            "panels",
+            format!(
+                "the plate has {} panels, and panels have one letter each",
+                panels.len()
+            ),
+            format!("give it at most {MOST_PANELS} panels"),
+        );
+    }
+    &panels[..panels.len().min(MOST_PANELS)]
+}
+
 fn inks(solved: &Solved, plate: &Plate) -> Inks {
-    Inks::of(solved, |name| {
-        plate.panels.iter().any(|panel| match panel.view {
-            View::Spacetime => panel
-                .lines
-                .as_ref()
-                .is_none_or(|list| list.iter().any(|n| n == name)),
-            View::EnergyMomentum => false,
-        })
-    })
+    let mut named = BTreeSet::new();
+    let mut has_all = false;
+    for panel in &plate.panels {
+        match (panel.view, &panel.lines) {
+            (View::Spacetime, Some(list)) => named.extend(list.iter().map(String::as_str)),
+            (View::Spacetime, None) => has_all = true,
+            (View::EnergyMomentum, _) => {}
+        }
+    }
+    Inks::of(solved, |name| has_all || named.contains(name))
 }
 
 fn text_size(job: &mut Job<'_>, plate: &Plate) -> f64 {

@@ -14,6 +14,8 @@ pub(super) struct Names {
     words: BTreeMap<String, Arc<Label>>,
     /// Faults of labels, in the order of finding, each once.
     pub(super) faults: Vec<Fault>,
+    /// Where in that list the faults of an object's field stand.
+    by_field: BTreeMap<(ObjectId, String), Vec<usize>>,
 }
 
 impl Names {
@@ -56,7 +58,10 @@ impl Names {
 
     /// Keeps a fault, once.
     pub(super) fn fault(&mut self, fault: Fault) {
-        if !self.faults.contains(&fault) {
+        let key = (fault.object.clone(), fault.field.clone());
+        let known = self.by_field.entry(key).or_default();
+        if !known.iter().any(|&i| self.faults[i] == fault) {
+            known.push(self.faults.len());
             self.faults.push(fault);
         }
     }

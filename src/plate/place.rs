@@ -36,6 +36,7 @@ pub(super) struct Places {
     rows: usize,
     ink: Vec<Vec<usize>>,
     text: Vec<Vec<usize>>,
+    dots: Dots,
     pieces: Vec<Piece>,
     labels: Vec<Rect>,
     clear_ink: f64,
@@ -44,6 +45,71 @@ pub(super) struct Places {
     reach: f64,
     /// What thin ink between a label and what it names costs, mm.
     thin_between: f64,
+}
+
+/// Small cells that hold a point of ink: where ink is dense they tell at once that a box meets some.
+#[derive(Clone, Debug)]
+struct Dots {
+    bounds: Rect,
+    columns: usize,
+    rows: usize,
+    is_inked: Vec<bool>,
+}
+
+/// Side of a small cell, mm.
+const DOT: f64 = 0.5;
+/// Most small cells along one side.
+const MOST_DOTS: usize = 1024;
+
+impl Dots {
+    fn new(bounds: Rect) -> Self {
+        let count = |side: f64| whole::count((side / DOT).ceil()).clamp(1, MOST_DOTS);
+        let (columns, rows) = (count(bounds.width()), count(bounds.height()));
+        Self {
+            bounds,
+            columns,
+            rows,
+            is_inked: vec![false; columns * rows],
+        }
+    }
+
+    /// A point in cells from the upper left corner.
+    fn cells(&self, p: Point) -> Point {
+        Point::new(
+            (p.x - self.bounds.x0) / self.bounds.width() * self.columns as f64,
+            (p.y - self.bounds.y0) / self.bounds.height() * self.rows as f64,
+        )
+    }
+
+    /// Takes up points of a straight piece, one in each cell or so.
+    fn take(&mut self, a: Point, b: Point) {
+        let Some((a, b)) = super::clip::segment(a, b, self.bounds) else {
+            return;
+        };
+        let (a, b) = (self.cells(a), self.cells(b));
+        let steps = whole::count((b - a).hypot()) + 1;
+        for i in 0..=steps {
+            let p = a.lerp(b, i as f64 / steps as f64);
+            let (column, row) = (whole::count(p.x), whole::count(p.y));
+            if column < self.columns && row < self.rows {
+                self.is_inked[row * self.columns + column] = true;
+            }
+        }
+    }
+
+    /// Whether some cell that lies wholly in a box holds ink.
+    fn any(&self, rect: Rect) -> bool {
+        let (low, high) = (
+            self.cells(rect.origin()),
+            self.cells(Point::new(rect.x1, rect.y1)),
+        );
+        let columns = whole::count(low.x.ceil())..whole::count(high.x).min(self.columns);
+        (whole::count(low.y.ceil())..whole::count(high.y).min(self.rows)).any(|row| {
+            columns
+                .clone()
+                .any(|column| self.is_inked[row * self.columns + column])
+        })
+    }
 }
 
 /// Side of a cell, mm.
@@ -66,6 +132,7 @@ impl Places {
             rows,
             ink: vec![Vec::new(); columns * rows],
             text: vec![Vec::new(); columns * rows],
+            dots: Dots::new(panel),
             pieces: Vec::new(),
             labels: Vec::new(),
             clear_ink: style.clear_ink,
@@ -90,6 +157,7 @@ impl Places {
         if !(a.is_finite() && b.is_finite()) {
             return;
         }
+        self.dots.take(a, b);
         let index = self.pieces.len();
         self.pieces.push(Piece {
             a,
@@ -130,7 +198,7 @@ impl Places {
                     if beyond(piece, rect, least) {
                         continue;
                     }
-                    least = least.min(distance(piece, rect) - piece.half);
+                    least = least.min(between(piece.a, piece.b, rect) - piece.half);
                     if least <= 0.0 {
                         return 0.0;
                     }
@@ -225,7 +293,7 @@ impl Places {
             if best.is_some_and(|(score, _)| cost - worth >= score) {
                 break;
             }
-            if !self.inside(rect) || self.meets_label(rect) {
+            if !self.inside(rect) || self.dots.any(rect) || self.meets_label(rect) {
                 continue;
             }
             let clear = self.clearance(rect) - self.clear_ink;
@@ -274,9 +342,8 @@ fn cross(a: Point, b: Point, p: Point, q: Point) -> bool {
     side(a, b, p) * side(a, b, q) < 0.0 && side(p, q, a) * side(p, q, b) < 0.0
 }
 
-/// From a segment's middle line to a box; 0 where they meet.
-fn distance(piece: &Piece, r: Rect) -> f64 {
-    let (a, b) = (piece.a, piece.b);
+/// From a segment to a box; 0 where they meet.
+pub(super) fn between(a: Point, b: Point, r: Rect) -> f64 {
     if super::clip::span(a, b - a, (0.0, 1.0), r).is_some() {
         return 0.0;
     }

@@ -18,7 +18,7 @@ use super::words::kind;
 use crate::fault::{Fault, Kind, ObjectId};
 use crate::quantity::significant;
 use crate::scene::{Panel, TimeAxis};
-use crate::solve::Viewing;
+use crate::solve::{SolvedUnits, Viewing};
 
 /// A spacetime panel's contents, in its plane (time units both ways).
 #[derive(Clone, Debug)]
@@ -236,7 +236,7 @@ fn events(
     panel: &Panel,
     from: &Viewing,
 ) -> Vec<(ObjectId, Point)> {
-    let known = job.solved.events.keys().cloned().collect();
+    let known = &job.solved.events;
     let field = format!("panels.{index}.events");
     let names = job.chosen(panel.events.as_deref(), Kind::Event, &field, known);
     points(job, names, from)
@@ -274,13 +274,13 @@ fn named_points(
     field: &str,
     from: &Viewing,
 ) -> Vec<(ObjectId, Point)> {
-    let known = job.solved.events.keys().cloned().collect();
+    let known = &job.solved.events;
     let names = job.chosen(Some(names), Kind::Event, field, known);
     points(job, names, from)
 }
 
 fn tracks(job: &mut Job<'_>, index: usize, panel: &Panel, from: &Viewing) -> Vec<Track> {
-    let known = job.solved.lines.keys().cloned().collect();
+    let known = &job.solved.lines;
     let names = job.chosen(
         panel.lines.as_deref(),
         Kind::Line,
@@ -302,23 +302,13 @@ fn tracks(job: &mut Job<'_>, index: usize, panel: &Panel, from: &Viewing) -> Vec
 /// The units of the viewing frame's axes: light's way of time in the length unit, or time in its own.
 fn axes(job: &mut Job<'_>, panel: &Panel, from: &Viewing) -> Axes {
     let units = &job.solved.units;
-    let is_light_way = units
-        .time
-        .light_way()
-        .is_some_and(|way| way.symbol == units.length.symbol);
-    let usual = if is_light_way {
-        TimeAxis::Time
-    } else {
-        TimeAxis::LightWay
-    };
-    let time_axis = panel.time_axis.unwrap_or(usual);
     let length = units.length.latex();
     let x = Axis {
         symbol: "x".into(),
         unit: length.clone(),
         factor: units.light_way,
     };
-    let y = match time_axis {
+    let y = match time_axis(panel, units) {
         TimeAxis::LightWay => Axis {
             symbol: "ct".into(),
             unit: length,
@@ -372,7 +362,10 @@ fn frames(job: &mut Job<'_>, index: usize, panel: &Panel, from: &Viewing) -> Vec
         if rapidity == 0.0 && origin == Point::ORIGIN {
             continue;
         }
-        let time = if is_light_way(job, panel) { "ct" } else { "t" };
+        let time = match time_axis(panel, &job.solved.units) {
+            TimeAxis::LightWay => "ct",
+            TimeAxis::Time => "t",
+        };
         let symbols = [primed(time, primes), primed("x", primes)];
         found.push(Tilted {
             object: observer.object,
@@ -385,9 +378,18 @@ fn frames(job: &mut Job<'_>, index: usize, panel: &Panel, from: &Viewing) -> Vec
     found
 }
 
-fn is_light_way(job: &mut Job<'_>, panel: &Panel) -> bool {
-    let base = job.solved.base_view();
-    axes(job, panel, &base).y.symbol == "ct"
+/// What a panel's upright axis counts: as it says, else time where lengths are light's way of the time unit.
+fn time_axis(panel: &Panel, units: &SolvedUnits) -> TimeAxis {
+    let is_way = units
+        .time
+        .light_way()
+        .is_some_and(|way| way.symbol == units.length.symbol);
+    let usual = if is_way {
+        TimeAxis::Time
+    } else {
+        TimeAxis::LightWay
+    };
+    panel.time_axis.unwrap_or(usual)
 }
 
 /// An observer's rapidity relative to a viewing frame, its ink and primes; a fault where it moves across.
@@ -449,10 +451,9 @@ fn cuts(
             .get(&event.name)
             .and_then(|e| solved.seen(e, &observer.view));
         let Some(seen) = seen else { continue };
-        let (symbol, unit) = if is_light_way(job, panel) {
-            ("ct", solved.units.length.latex())
-        } else {
-            ("t", solved.units.time.latex())
+        let (symbol, unit) = match time_axis(panel, &solved.units) {
+            TimeAxis::LightWay => ("ct", solved.units.length.latex()),
+            TimeAxis::Time => ("t", solved.units.time.latex()),
         };
         let time = super::names::number(&significant(seen.t() * factor, TIME_DIGITS));
         let label = format!(r"{}\,{{=}}\,{time}\,{unit}", primed(symbol, primes));

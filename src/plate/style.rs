@@ -15,11 +15,13 @@ pub(super) const TEXT_RANGE: (f64, f64) = (4.0, 48.0);
 pub(super) const COLUMN: f64 = 86.0;
 /// Widest and highest sheet, mm.
 pub(super) const LARGEST: f64 = 5000.0;
+/// Most panels of a plate, `a` to `z`; at any size of lettering so many of the usual width stay below the largest sheet.
+pub(super) const MOST_PANELS: usize = 26;
 /// Smallest field, mm.
 pub(super) const SMALLEST_FIELD: f64 = 8.0;
 /// Largest deviation of a drawn curve from the true one that the pieces are chosen for, mm.
 pub(super) const CURVE_TOLERANCE: f64 = 0.0004;
-/// Least relative part by which a label may be said to move, for comparisons of lengths, mm.
+/// Lengths that differ by less are equal, mm.
 pub(super) const HAIR: f64 = 1e-9;
 
 /// Text, base axes, lines at rest in the base frame, events, totals.
@@ -220,7 +222,7 @@ impl Style {
             clear_ink: 0.45 * k,
             clear_label: 0.9 * k,
             clear_edge: 0.1 * k,
-            letter: [1.45 * k, 0.2 * k, 4.0 * k],
+            letter: [1.45 * k, 0.2 * k, 6.0 * k],
             name: [1.2 * k, 1.7 * k, 4.2 * k],
             name_below_end: 2.8 * k,
             name_step: 1.6 * k,

@@ -86,7 +86,7 @@ pub(super) fn of_particles(
     } else {
         panel.particles.as_deref()
     };
-    let known = job.solved.particles.keys().cloned().collect();
+    let known = &job.solved.particles;
     let names = job.chosen(list, Kind::Particle, &format!("{field}.particles"), known);
     let parts = boosted(job, &names, from);
     let total = Total::of(&parts.iter().map(|p| p.1).collect::<Vec<_>>());

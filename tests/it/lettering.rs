@@ -187,6 +187,32 @@ fn no_label_meets_ink_in_any_example() {
     }
 }
 
+#[test]
+fn the_event_at_the_origin_keeps_its_label_amid_axes_and_a_cone() {
+    let path = examples()
+        .into_iter()
+        .find(|path| path.ends_with("tug-and-beacon.ron"))
+        .unwrap();
+    let text = std::fs::read_to_string(path)
+        .unwrap()
+        .replace("At(t: 0, x: 0)", "At(t: 0, x: 0, label: \"O\")")
+        .replace("events: [\"hail\", \"reply\", \"heard\"], ", "");
+    let opened = task::open_text(&text).unwrap();
+    for (plate, panels) in [("timing", 1), ("both frames", 2)] {
+        let laid = task::lay_out(&opened, Some(plate), &Override::default()).unwrap();
+        let named = laid
+            .sheet
+            .marks
+            .iter()
+            .filter(|mark| laid.sheet.groups[mark.group].title == "event passing")
+            .filter(|mark| matches!(mark.shape, Shape::Label { .. }))
+            .count();
+        assert_eq!(named, panels, "{plate}: {:?}", laid.faults);
+        let (found, _) = met(&laid.sheet);
+        assert!(found.is_empty(), "{plate}: {found:#?}");
+    }
+}
+
 const LABELS: [&str; 8] = [
     "A",
     "B'",
@@ -314,6 +340,66 @@ fn all_stand_free(count: usize, seed: u64, invented: fn(&mut Draws) -> String) {
         missing * 20 < placed,
         "{missing} of {placed} labels found no place"
     );
+}
+
+#[test]
+fn a_shells_label_is_nearest_to_its_own_shell() {
+    let mut draws = Draws::new(0x5eed_0023);
+    let mut seen = 0;
+    for _ in 0..80 {
+        let text = energy_momentum(&mut draws);
+        let opened = task::open_text(&text).unwrap();
+        let sheet = task::lay_out(&opened, None, &Override::default())
+            .unwrap()
+            .sheet;
+        // A shell is the one stroked curve of its group; its label is the one that names a mass.
+        let (mut shells, mut named) = (Vec::new(), Vec::new());
+        for mark in &sheet.marks {
+            let title = &sheet.groups[mark.group].title;
+            if !(title.starts_with("shell of") || title.starts_with("total of")) {
+                continue;
+            }
+            match &mark.shape {
+                Shape::Path {
+                    path,
+                    paint: Paint::Stroke(_),
+                } => shells.push((mark.group, chords(path, false))),
+                Shape::Path { .. } => {}
+                Shape::Label { label, .. } if label.letters != "total" => {
+                    named.push((mark.group, mark.shape.outline().bounding_box()));
+                }
+                Shape::Label { .. } => {}
+            }
+        }
+        let far = |area: Rect, chords: &[Line]| {
+            chords
+                .iter()
+                .flat_map(|line| (0..=16).map(|i| line.p0.lerp(line.p1, f64::from(i) / 16.0)))
+                .map(|p| {
+                    let x = (area.x0 - p.x).max(p.x - area.x1).max(0.0);
+                    let y = (area.y0 - p.y).max(p.y - area.y1).max(0.0);
+                    conewright::num::hypot(x, y)
+                })
+                .fold(f64::INFINITY, f64::min)
+        };
+        for (group, area) in named {
+            let of = |is_own: bool| {
+                shells
+                    .iter()
+                    .filter(|shell| (shell.0 == group) == is_own)
+                    .map(|shell| far(area, &shell.1))
+                    .fold(f64::INFINITY, f64::min)
+            };
+            assert!(
+                of(true) < of(false) + 0.05,
+                "{} {}\n{text}",
+                of(true),
+                of(false)
+            );
+            seen += 1;
+        }
+    }
+    assert!(seen > 80, "{seen} labels of shells");
 }
 
 #[test]
