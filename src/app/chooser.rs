@@ -106,6 +106,8 @@ fn field(ui: &mut Ui, state: &mut Chooser, wishes: &mut Wishes) {
         state.fresh = false;
     }
     if response.lost_focus() && ui.input(|i| i.key_pressed(Key::Enter)) {
+        // Where the path does not open it is there to be mended.
+        response.request_focus();
         wishes.push(chosen(&state.path));
     }
 }

@@ -2,6 +2,8 @@
 
 mod columns;
 
+use std::collections::BTreeMap;
+
 use egui::{
     Align, Pos2, Rect, Response, Role, ScrollArea, Sense, Stroke, Ui, UiBuilder, WidgetInfo, pos2,
     vec2,
@@ -15,7 +17,7 @@ use super::theme::{MARGIN_SMALL, Type};
 use super::view::TableKind;
 use super::widgets::{self, colours};
 use crate::fault::{Kind, ObjectId, Weight};
-use crate::ledger::{Row, Table};
+use crate::ledger::{CollisionRow, Row, Table};
 use crate::quantity::grouped;
 use columns::{Columns, head};
 
@@ -107,7 +109,7 @@ fn none(ui: &Ui, rect: Rect, kind: TableKind, context: &Context<'_>) {
     );
     let second = match kind {
         TableKind::Events => {
-            "Each event you place gets a row of numbers here, ready to quote or to copy as text, CSV or LaTeX."
+            "Each event of the scene has a row of numbers here, as the viewing frame has it."
         }
         TableKind::Intervals => "Two events give an interval, the same for every observer.",
         TableKind::Collisions => {
@@ -154,22 +156,37 @@ fn numbers(
     );
     let mut child = ui.new_child(UiBuilder::new().max_rect(below).id_salt("rows"));
     child.shrink_clip_rect(below);
+    child.spacing_mut().item_spacing.y = 0.0;
+    let collisions = collisions(table, context);
+    let all = table.rows.len() + lost.len();
     ScrollArea::both()
         .auto_shrink(false)
-        .show(&mut child, |ui| {
-            ui.spacing_mut().item_spacing.y = 0.0;
-            for (i, row) in table.rows.iter().enumerate() {
+        .show_rows(&mut child, height, all, |ui, visible| {
+            for i in visible {
+                let Some(row) = table.rows.get(i) else {
+                    if let Some(object) = lost.get(i - table.rows.len()) {
+                        faulty(ui, height, object, context, wishes);
+                    }
+                    continue;
+                };
                 let response = line(ui, height, row, &columns, context, wishes);
                 let place = response.rect;
                 if row.is_sum {
                     explain(&response, row, table);
                 }
-                signs(ui, table, i, place, &columns, context);
-            }
-            for object in &lost {
-                faulty(ui, height, object, context, wishes);
+                signs(ui, table, i, place, &columns, &collisions);
             }
         });
+}
+
+/// The collisions of the ledger by name, for the table of their sums.
+fn collisions<'a>(table: &Table, context: &Context<'a>) -> BTreeMap<&'a str, &'a CollisionRow> {
+    let ledger = context.shown.ledger.as_ref();
+    let rows = ledger.filter(|_| table.name == "collisions");
+    rows.into_iter()
+        .flat_map(|ledger| &ledger.collisions)
+        .map(|collision| (collision.name.as_str(), collision))
+        .collect()
 }
 
 /// Objects of a table's kind that have no numbers.
@@ -292,14 +309,7 @@ fn line(
             crate::ledger::Align::Left => {
                 let cut = text::cut_end(ui.painter(), &cell.text, set, place.right - place.left);
                 let at = pos2(left + place.left, rect.center().y);
-                text::put(
-                    ui.painter(),
-                    at,
-                    Align::LEFT,
-                    &cell.text.replacen(&cell.text, &cut, 1),
-                    set,
-                    ink,
-                );
+                text::put(ui.painter(), at, Align::LEFT, &cut, set, ink);
             }
             crate::ledger::Align::Right => {
                 let at = pos2(left + place.right, rect.center().y);
@@ -339,54 +349,38 @@ fn explain(response: &Response, row: &Row, table: &Table) {
     }
 }
 
-/// Between the two sums: what is the same before and after.
+/// Between the two sums: what is the same before and after, as the ledger judges it.
 fn signs(
     ui: &Ui,
     table: &Table,
     row: usize,
     place: Rect,
     columns: &Columns,
-    context: &Context<'_>,
+    collisions: &BTreeMap<&str, &CollisionRow>,
 ) {
-    if table.name != "collisions" || row == 0 {
+    if collisions.is_empty() || row == 0 {
         return;
     }
     let (before, after) = (&table.rows[row - 1], &table.rows[row]);
     if !(before.is_sum && after.is_sum && before.rule_above) || before.object != after.object {
         return;
     }
-    let ledger = context.shown.ledger.as_ref();
-    let Some(collision) = ledger.and_then(|l| {
-        let name = before.object.as_ref().map(|o| &*o.name);
-        l.collisions.iter().find(|c| Some(c.name.as_str()) == name)
-    }) else {
+    let name = before.object.as_ref().map(|o| &*o.name);
+    let Some(collision) = name.and_then(|name| collisions.get(name)) else {
         return;
     };
-    for (i, (column, at)) in table.columns.iter().zip(&columns.places).enumerate() {
-        let off = match column.head.as_str() {
-            "E" => collision.difference.energy,
-            "px" => collision.difference.momentum[0],
-            "py" => collision.difference.momentum[1],
+    let kept = |off: f64| collision.balanced || off.abs() <= collision.tolerance;
+    for (column, at) in table.columns.iter().zip(&columns.places) {
+        let equal = match column.head.as_str() {
+            "E" => kept(collision.difference.energy),
+            "px" => kept(collision.difference.momentum[0]),
+            "py" => kept(collision.difference.momentum[1]),
             // The mass of the sum is kept when E, px and py are; the sum of the masses need not be.
-            "mass of sum" => {
-                let equal = collision.balanced;
-                conserved(
-                    ui,
-                    pos2(place.left() + 8.0 + at.right + 9.0, place.top()),
-                    equal,
-                );
-                continue;
-            }
+            "mass of sum" => collision.balanced,
             _ => continue,
         };
-        if before.cells.get(i).is_some() {
-            let equal = off.abs() <= collision.tolerance;
-            conserved(
-                ui,
-                pos2(place.left() + 8.0 + at.right + 9.0, place.top()),
-                equal,
-            );
-        }
+        let x = place.left() + 8.0 + at.right + 9.0;
+        conserved(ui, pos2(x, place.top()), equal);
     }
 }
 

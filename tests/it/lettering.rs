@@ -364,11 +364,10 @@ fn a_shells_label_is_nearest_to_its_own_shell() {
                     path,
                     paint: Paint::Stroke(_),
                 } => shells.push((mark.group, chords(path, false))),
-                Shape::Path { .. } => {}
                 Shape::Label { label, .. } if label.letters != "total" => {
                     named.push((mark.group, mark.shape.outline().bounding_box()));
                 }
-                Shape::Label { .. } => {}
+                Shape::Path { .. } | Shape::Label { .. } => {}
             }
         }
         let far = |area: Rect, chords: &[Line]| {

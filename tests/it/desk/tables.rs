@@ -66,3 +66,27 @@ fn a_fault_is_found_named_and_gone_to() {
         .query_by(|n| n.role() == Role::Row && n.label().is_some_and(|l| l.starts_with("recall ")));
     assert!(row.is_some(), "a faulty row keeps its place");
 }
+
+#[test]
+fn only_the_rows_in_sight_are_painted() {
+    use std::fmt::Write as _;
+    let mut text = String::from("Scene(format: 1, base: \"b\", events: { ");
+    for i in 0..600 {
+        let _ = write!(text, "\"e{i}\": At(t: {i}, x: 0), ");
+    }
+    text.push_str("}, plates: { \"p\": (panels: [(view: Spacetime, events: [\"e0\"])]) })");
+    let folder = tempfile::tempdir().unwrap();
+    let path = folder.path().join("many.ron");
+    std::fs::write(&path, text).unwrap();
+    let mut window = open(Some(&path), Setup::default());
+    click(&mut window, "Events");
+    let rows = window.query_all_by_role(Role::Row);
+    let rows = rows
+        .filter(|r| {
+            r.accesskit_node()
+                .label()
+                .is_some_and(|l| l.starts_with('e'))
+        })
+        .count();
+    assert!(rows > 3 && rows < 60, "{rows} rows");
+}

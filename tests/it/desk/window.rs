@@ -5,7 +5,7 @@ use std::sync::Arc;
 
 use egui::accesskit::Role;
 use egui::{Key, Modifiers};
-use egui_kittest::kittest::Queryable as _;
+use egui_kittest::kittest::{NodeT as _, Queryable as _};
 
 use super::harness::{Setup, Window, click, open, relay};
 
@@ -68,6 +68,11 @@ fn a_path_that_does_not_open_is_said_and_keeps_the_chooser() {
             .is_some()
     );
     assert!(window.query_all_by_label_contains("none.ron").count() >= 1);
+    let field = window.get_by_role_and_label(Role::TextInput, "Path");
+    assert!(
+        field.accesskit_node().is_focused(),
+        "the path can be mended at once"
+    );
 }
 
 #[test]
