@@ -15,6 +15,12 @@ fn main() -> ExitCode {
 #[cfg(feature = "window")]
 fn desk(parsed: cli::Parsed) -> ExitCode {
     use conewright::app::{self, Paint};
+    use conewright::task;
+    if let Some(path) = &parsed.scene
+        && let Err(fault) = task::open(path)
+    {
+        return refuse(&fault.line(&path.display().to_string()));
+    }
     let paint = match parsed.paint {
         None => Paint::Auto,
         Some(cli::Paint::Gl) => Paint::Gl,

@@ -29,7 +29,7 @@ pub enum Paint {
 pub enum RunFault {
     /// There is no display to open a window on.
     #[error(
-        "there is no display to open a window on; run this in a desktop session, or use `conewright draw`, `ledger` \
+        "there is no display to open a window on; run this on a desktop, or use `conewright draw`, `ledger` \
          or `audit`, which need none"
     )]
     NoDisplay,

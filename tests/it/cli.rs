@@ -287,6 +287,15 @@ fn without_a_display_the_desk_says_so_and_ends_with_2() {
 }
 
 #[test]
+fn a_scene_that_does_not_read_opens_no_window() {
+    let (_folder, broken) = written("Scene(format: 1, base: \"b\", events: {");
+    let ran = run(&[&broken]);
+    assert_eq!(ran.code, 2);
+    assert!(ran.err.starts_with(&format!("{broken}:1:")), "{}", ran.err);
+    assert_eq!(run(&["nowhere.ron"]).code, 2);
+}
+
+#[test]
 fn help_carries_the_caution() {
     let ran = run(&["--help"]);
     assert_eq!(ran.code, 0);
