@@ -515,7 +515,7 @@ fn nearest_to_own(
 }
 
 /// How closely shells are taken as chords to compare distances, mm.
-const SHELL_FLATNESS: f64 = 0.01;
+const SHELL_FLATNESS: f64 = 0.2;
 
 /// Whether two masses have one shell.
 fn is_same(a: f64, b: f64) -> bool {
